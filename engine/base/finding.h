@@ -43,12 +43,12 @@ struct FilePlace {
 /// What a user can mend: where, what, with which numbers. Never finished text.
 struct Finding {
     const Message* message = nullptr; ///< never null in a finding that is handed on
-    std::string subject;              ///< path in the project, "plant/chambers/Surge shaft"
-    std::vector<std::pair<std::string, Argument>> arguments;
-    std::optional<FilePlace> place;
-    std::optional<FilePlace> otherPlace; ///< for a clash: the second place
-    std::optional<double> time_s;        ///< simulated time, when it has one
-    std::vector<std::string> related;    ///< further paths the finding is about
+    std::string subject = {};         ///< path in the project, "plant/chambers/Surge shaft"
+    std::vector<std::pair<std::string, Argument>> arguments = {};
+    std::optional<FilePlace> place = {};
+    std::optional<FilePlace> otherPlace = {}; ///< for a clash: the second place
+    std::optional<double> time_s = {};   ///< simulated time, when it has one
+    std::vector<std::string> related = {}; ///< further paths the finding is about
 
     Severity severity() const { return message->severity; }
 };
