@@ -68,11 +68,16 @@ public:
 
 private:
     friend class ElasticRows;
+    double expectedFlow(std::size_t node) const { return 2.0 * flow_[node] - lastFlow_[node]; }
+
     std::vector<double> right_, left_, nextRight_, nextLeft_;
     std::vector<double> head_, flow_, lastFlow_; // lastFlow_: one step ago, then the next
     std::vector<double> curvature_;              // r/b² at nodes swept in the vector loop
     std::vector<EndLaw> ends_;                   // start and end of each conduit
-    std::vector<double> endQuadratic_;           // cell's quadratic loss at each end
+    struct Solved {                              // a node between cells that differ
+        double head, flow, right, left;
+    };
+    std::vector<Solved> solved_;
 };
 
 /// The rows of one plant: constant, shared between runs. A step is
@@ -152,8 +157,10 @@ private:
     void addRow(const ElasticConduit& conduit);
     void addRun(std::size_t node, std::size_t cell);
     void refreshFriction(ElasticState& state) const;
+    void findEndLaws(ElasticState& state) const;
     void solveInterfaces(ElasticState& state) const;
-    EndLaw lawAt(double arriving_m, const Cell& cell, double quadratic) const;
+    void storeInterfaces(ElasticState& state) const;
+    static EndLaw lawAt(double arriving_m, const Cell& cell, double expected_m3s);
     const Cell& firstCell(std::size_t conduit) const;
     const Cell& lastCell(std::size_t conduit) const;
 
@@ -163,9 +170,9 @@ private:
     std::vector<Row> rows_;
     std::vector<Interface> interfaces_;
     std::vector<VariableRun> runs_;
-    std::vector<double> share_;     // linear part of the loss: k/(2B + k) at each node
+    std::vector<double> share_;       // linear part of the loss: k/(2B + k) at each node
     std::vector<double> conductance_; // 1/(2B)
-    std::vector<double> curvature_; // r/(2B + k)², constant friction
+    std::vector<double> curvature_;   // r/(2B + k)², constant friction
 };
 
 } // namespace headroom::hydraulics

@@ -1,0 +1,16 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "elastic_sweep_loops.h"
+
+namespace headroom::hydraulics::baseline {
+namespace {
+
+#include "elastic_sweep_body.h"
+
+} // namespace
+
+const SweepLoops& loops() {
+    static constexpr SweepLoops all{sweep, widen};
+    return all;
+}
+
+} // namespace headroom::hydraulics::baseline
