@@ -2,11 +2,10 @@
 #pragma once
 
 #include "base/finding.h"
+#include "control/order_memory.h"
 
-#include <cstddef>
 #include <optional>
 #include <string>
-#include <utility>
 #include <vector>
 
 /// The gate servomotor: stroke y follows the order within rates that depend on position.
@@ -38,30 +37,6 @@ struct ServoSpec {
 
 /// All faults of a servo's data; empty when it can run.
 Findings check(const ServoSpec& spec, const std::string& subject = {});
-
-/// Orders already given but not yet felt: knots joined by straight lines, two at one instant for
-/// a jump. Sized once; pushing never allocates.
-class OrderMemory {
-public:
-    OrderMemory() = default;
-    OrderMemory(double order, double span_s, double step_s);
-
-    void push(double time_s, double order);
-    /// Drops what lies wholly before `time_s`.
-    void forget(double time_s);
-    /// The order just after and just before `time_s`.
-    double after(double time_s) const;
-    double before(double time_s) const;
-    /// The first knot strictly after `time_s`, if it lies before `limit_s`; else `limit_s`.
-    double nextKnot(double time_s, double limit_s) const;
-
-private:
-    struct Knot { double time_s = 0.0, order = 0.0; };
-    const Knot& knot(std::size_t index) const { return ring_[(first_ + index) % ring_.size()]; }
-
-    std::vector<Knot> ring_;
-    std::size_t first_ = 0, count_ = 0;
-};
 
 struct ServoState {
     double opening_pu = 0.0;
