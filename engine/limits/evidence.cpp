@@ -1,0 +1,217 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "limits/evidence.h"
+
+#include "limits/static_head.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace headroom::limits {
+
+namespace {
+
+using results::Channel;
+using results::Envelope;
+using results::Place;
+using results::Run;
+using results::Thing;
+using results::Trace;
+
+bool worseValue(Side side, double a, double b) {
+    return side == Side::upper ? a > b : a < b;
+}
+
+// --- from a channel -----------------------------------------------------------------------------
+
+/// A channel and what to add to it to have the measure asked for.
+struct Source {
+    const Channel* channel = nullptr;
+    double offset = 0.0;
+};
+
+/// The channel of a conduit nearest to a chainage; a head there belongs to the envelope unless
+/// the channel lies exactly there.
+const Channel* nearestAlong(const Run& run, Measure measure, const Place& place) {
+    const Channel* nearest = nullptr;
+    const auto distance = [&](const Channel& channel) {
+        return std::abs(channel.place.chainage_m - place.chainage_m);
+    };
+    for (const auto& channel : run.channels) {
+        if (channel.measure == measure && channel.place.thing == Thing::conduit &&
+            channel.place.index == place.index &&
+            (nearest == nullptr || distance(channel) < distance(*nearest))) {
+            nearest = &channel;
+        }
+    }
+    return nearest;
+}
+
+Source sourceOf(Measure measure, const Place& place, const Run& run, const plant::Plant* plant) {
+    if (const auto* channel = run.find(measure, place)) {
+        return {channel, 0.0};
+    }
+    const bool along = place.thing == Thing::conduit;
+    if (along && (measure == Measure::discharge || measure == Measure::velocity)) {
+        return {nearestAlong(run, measure, place), 0.0};
+    }
+    if (measure == Measure::pressureHead && place.thing == Thing::point) {
+        if (const auto* head = run.find(Measure::head, place)) {
+            const double axis_m = plant == nullptr ? 0.0 : plant->points[place.index].elevation_m;
+            return {head, -axis_m};
+        }
+    }
+    return {};
+}
+
+/// Extreme and step of a trace up to an instant.
+std::optional<Evidence> untilFromTrace(const Channel& channel, Side side, double interval_s,
+                                       double until_s) {
+    const Trace& trace = channel.trace;
+    const auto& values = side == Side::upper ? trace.high : trace.low;
+    if (values.empty() || !(interval_s > 0.0)) {
+        return std::nullopt;
+    }
+    const auto last = std::min(values.size() - 1,
+                               static_cast<std::size_t>(std::max(0.0, until_s / interval_s)));
+    std::size_t at = 0;
+    for (std::size_t i = 1; i <= last; ++i) {
+        if (worseValue(side, static_cast<double>(values[i]), static_cast<double>(values[at]))) {
+            at = i;
+        }
+    }
+    Evidence found;
+    found.extreme = static_cast<double>(values[at]);
+    found.time_s = static_cast<double>(at) * interval_s;
+    // One recording interval holds at least one step of the run, so its span is never below S.
+    const std::size_t from = at >= 2 ? at - 2 : 0;
+    const std::size_t to = std::min(last, at + 2);
+    for (std::size_t i = from; i <= to; ++i) {
+        found.largestStep = std::max(
+            found.largestStep, static_cast<double>(trace.high[i]) - static_cast<double>(trace.low[i]));
+        if (i > from) {
+            found.largestStep = std::max(found.largestStep,
+                                         std::abs(static_cast<double>(trace.last[i]) -
+                                                  static_cast<double>(trace.last[i - 1])));
+        }
+    }
+    return found;
+}
+
+std::optional<Evidence> fromChannel(const Source& source, Side side, const Run& run,
+                                    double until_s) {
+    const Channel& channel = *source.channel;
+    const auto& extreme = side == Side::upper ? channel.greatest : channel.least;
+    Evidence found;
+    if (extreme.time_s <= until_s) {
+        found.extreme = extreme.value;
+        found.time_s = extreme.time_s;
+        found.largestStep = extreme.largestStep;
+    } else if (const auto before = untilFromTrace(channel, side, run.recordInterval_s, until_s)) {
+        found = *before;
+    } else {
+        return std::nullopt;
+    }
+    found.place = channel.place;
+    found.rest = channel.atRest + source.offset;
+    found.extreme += source.offset;
+    found.trace = channel.trace.last.empty() ? nullptr : &channel.trace;
+    found.offset = source.offset;
+    found.interval_s = run.recordInterval_s;
+    return found;
+}
+
+// --- along a conduit ----------------------------------------------------------------------------
+
+bool headAlong(const plant::Limit& limit, const Place& place) {
+    return place.thing == Thing::conduit &&
+           (limit.measure == Measure::head || limit.measure == Measure::pressureHead);
+}
+
+const Envelope* envelopeOf(const Run& run, int conduit) {
+    for (const auto& envelope : run.envelopes) {
+        if (envelope.conduit == conduit && !envelope.chainage_m.empty()) {
+            return &envelope;
+        }
+    }
+    return nullptr;
+}
+
+/// The envelope at a chainage, straight between its stations: exact where the column is rigid,
+/// and never inside the truth there, because extremes at both ends need not come together.
+Evidence atChainage(const Envelope& envelope, Side side, double chainage_m) {
+    const auto& stations = envelope.chainage_m;
+    const auto after = std::lower_bound(stations.begin(), stations.end(), chainage_m);
+    const auto j = std::min(static_cast<std::size_t>(after - stations.begin()), stations.size() - 1);
+    const std::size_t i = j == 0 || stations[j] <= chainage_m ? j : j - 1;
+    const double span_m = stations[j] - stations[i];
+    const double share = span_m > 0.0 ? (chainage_m - stations[i]) / span_m : 0.0;
+    const auto between = [&](const std::vector<double>& values) {
+        return values[i] + share * (values[j] - values[i]);
+    };
+    const bool upper = side == Side::upper;
+    const auto& times_s = upper ? envelope.greatestTime_s : envelope.leastTime_s;
+    Evidence found;
+    found.place = {Thing::conduit, envelope.conduit, chainage_m};
+    found.rest = between(envelope.rest_m);
+    found.extreme = between(upper ? envelope.greatest_m : envelope.least_m);
+    found.time_s = times_s[share > 0.5 ? j : i];
+    found.largestStep = std::max(envelope.largestStep_m[i], envelope.largestStep_m[j]);
+    return found;
+}
+
+std::vector<double> candidates(const plant::Limit& limit, const Place& place,
+                               const Envelope& envelope, const plant::Plant& plant) {
+    if (!limit.wholeConduit) {
+        return {place.chainage_m};
+    }
+    auto chainages_m = envelope.chainage_m;
+    for (const auto& corner : plant.conduits[place.index].axis) {
+        chainages_m.push_back(corner.first);
+    }
+    return chainages_m;
+}
+
+std::optional<Evidence> fromEnvelope(const plant::Limit& limit, const Place& place, Side side,
+                                     const Run& run, const plant::Plant& plant, double until_s) {
+    const auto* envelope = envelopeOf(run, place.index);
+    if (envelope == nullptr) {
+        return std::nullopt;
+    }
+    std::optional<Evidence> worst;
+    for (const double chainage_m : candidates(limit, place, *envelope, plant)) {
+        auto here = atChainage(*envelope, side, chainage_m);
+        if (limit.measure == Measure::pressureHead) {
+            const double axis_m = axisElevation_m(plant, place.index, chainage_m);
+            here.rest -= axis_m;
+            here.extreme -= axis_m;
+        }
+        if (here.time_s > until_s) {
+            return std::nullopt; // the envelope does not tell what was before
+        }
+        if (!worst || worseValue(side, here.extreme, worst->extreme)) {
+            worst = here;
+        }
+    }
+    return worst;
+}
+
+} // namespace
+
+bool recorded(const plant::Limit& limit, const Place& place, const Run& run) {
+    return sourceOf(limit.measure, place, run, nullptr).channel != nullptr ||
+           (headAlong(limit, place) && envelopeOf(run, place.index) != nullptr);
+}
+
+std::optional<Evidence> evidence(const plant::Limit& limit, const Place& place, Side side,
+                                 const Run& run, const plant::Plant& plant, double until_s) {
+    if (!limit.wholeConduit) {
+        const auto source = sourceOf(limit.measure, place, run, &plant);
+        if (source.channel != nullptr) {
+            return fromChannel(source, side, run, until_s);
+        }
+    }
+    return headAlong(limit, place) ? fromEnvelope(limit, place, side, run, plant, until_s)
+                                   : std::nullopt;
+}
+
+} // namespace headroom::limits
