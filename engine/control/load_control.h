@@ -16,7 +16,7 @@ struct LoadOrder {
 };
 
 struct LoadControlSpec {
-    std::optional<double> reloadNotBefore_s; ///< after a trip; absent: no interlock
+    std::optional<double> reloadNotBefore_s = {}; ///< after a trip; absent: no interlock
     double synchroniseWithin_pu = 0.005;     ///< of rated speed; common practice, no source
     double synchroniseHold_s = 1.0;          ///< inside the band for this long; common practice, no source
 };

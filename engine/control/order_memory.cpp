@@ -3,6 +3,7 @@
 
 #include "base/ensure.h"
 
+#include <algorithm>
 #include <cmath>
 #include <limits>
 
@@ -25,7 +26,9 @@ OrderMemory::OrderMemory(double order, double span_s, double step_s)
 void OrderMemory::push(double time_s, double order) {
     ensure(count_ > 0, "an order memory is made at rest");
     const Knot newest = knot(count_ - 1);
-    ensure(!(time_s < newest.time_s), "orders are given in rising time");
+    constexpr double rounding_s = 1e-6; // counted instants reach here by different sums
+    ensure(time_s > newest.time_s - rounding_s, "orders are given in rising time");
+    time_s = std::max(time_s, newest.time_s);
     if (time_s == newest.time_s && order == newest.order) {
         return;
     }

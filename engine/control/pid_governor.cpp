@@ -14,8 +14,7 @@ namespace {
 
 Finding finding(const Message& message, const std::string& subject,
                 std::vector<std::pair<std::string, Argument>> arguments) {
-    return {.message = &message, .subject = subject, .arguments = std::move(arguments),
-            .place = {}, .otherPlace = {}, .time_s = {}, .related = {}};
+    return {.message = &message, .subject = subject, .arguments = std::move(arguments)};
 }
 
 Amount pure(double value) { return amount(Quantity::factor, value); }

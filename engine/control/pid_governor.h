@@ -13,8 +13,8 @@ namespace headroom::control {
 enum class DroopOn { opening, power };
 
 struct PidSpec {
-    PidGains gains;
-    std::optional<PidGains> noLoad;  ///< off the grid; absent: the same gains
+    PidGains gains = {};
+    std::optional<PidGains> noLoad = {};  ///< off the grid; absent: the same gains
     double droop = 0.04;             ///< b_p, share of frequency for full opening or power; on the grid
     double noLoadDroop = 0.0;        ///< off the grid: 0 holds the speed exactly
     DroopOn droopOn = DroopOn::opening;
@@ -23,7 +23,7 @@ struct PidSpec {
     double samplePeriod_s = 0.0;     ///< 0: continuous
     double openingLimit_pu = 1.0;    ///< opening limiter
     double feedForward = 1.0;        ///< share of the load reference sent straight to the order
-    std::optional<double> windUpTime_s; ///< tracking time of the anti-windup; default K_p/K_i
+    std::optional<double> windUpTime_s = {}; ///< tracking time of the anti-windup; default K_p/K_i
 };
 
 /// PID speed governor with permanent droop:

@@ -25,7 +25,7 @@ struct ServoSpec {
     double deadTime_s = 0.0;
     double lag_s = 0.1;                 ///< T_y of ẏ = (order − y)/T_y; 0: follows at once
     double lowest_pu = 0.0, highest_pu = 1.0;
-    std::optional<double> emergencyClosing_s; ///< full stroke on the emergency path; else as closing
+    std::optional<double> emergencyClosing_s = {}; ///< full stroke on the emergency path; else as closing
     double emergencyDeadTime_s = 0.0;
 
     /// Closing rate [1/s], ≥ 0, just below stroke `y`, and the stroke where it next changes.
@@ -42,7 +42,7 @@ struct ServoState {
     double opening_pu = 0.0;
     double rate_1s = 0.0;     ///< mean over the last step, opening positive
     double travel_pu = 0.0;   ///< accumulated |movement|
-    std::optional<double> emergency_s; ///< when the emergency path was tripped
+    std::optional<double> emergency_s = {}; ///< when the emergency path was tripped
     bool stuck = false;       ///< stays where it is whatever is ordered
     OrderMemory orders;
 };

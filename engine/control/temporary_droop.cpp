@@ -13,8 +13,7 @@ namespace {
 
 Finding finding(const Message& message, const std::string& subject,
                 std::vector<std::pair<std::string, Argument>> arguments) {
-    return {.message = &message, .subject = subject, .arguments = std::move(arguments),
-            .place = {}, .otherPlace = {}, .time_s = {}, .related = {}};
+    return {.message = &message, .subject = subject, .arguments = std::move(arguments)};
 }
 
 Finding badValue(const std::string& subject, const std::string& name, Amount value) {

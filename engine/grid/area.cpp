@@ -19,8 +19,7 @@ void require(Findings& found, const std::string& subject, const std::string& nam
              bool mayBeZero) {
     if (!(mayBeZero ? value.si >= 0.0 : value.si > 0.0) || !std::isfinite(value.si)) {
         found.push_back({.message = mayBeZero ? &areaNegative : &areaNotPositive,
-                         .subject = subject, .arguments = {{"name", name}, {"value", value}},
-                         .place = {}, .otherPlace = {}, .time_s = {}, .related = {}});
+                         .subject = subject, .arguments = {{"name", name}, {"value", value}}});
     }
 }
 
@@ -90,8 +89,7 @@ Findings check(const AreaSpec& spec, const std::string& subject) {
         if (!(r.least_W <= 0.0 && r.most_W >= 0.0)) {
             found.push_back({.message = &reserveLimits, .subject = subject,
                              .arguments = {{"least", amount(Quantity::power, r.least_W)},
-                                           {"most", amount(Quantity::power, r.most_W)}},
-                             .place = {}, .otherPlace = {}, .time_s = {}, .related = {}});
+                                           {"most", amount(Quantity::power, r.most_W)}}});
         }
     }
     return found;

@@ -26,7 +26,7 @@ struct AreaSpec {
     double storedEnergy_J = 0.0;   ///< E_k of everything but the plant's own units, > 0
     double load_W = 0.0;
     double loadDamping_1Hz = 0.0;  ///< share of the load per Hz
-    std::optional<ReserveSpec> reserve;
+    std::optional<ReserveSpec> reserve = {};
 };
 
 Findings check(const AreaSpec& spec, const std::string& subject = {});

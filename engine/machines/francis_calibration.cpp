@@ -26,8 +26,7 @@ constexpr double largestResidual = 3.0;   ///< in units of each target's toleran
 
 Finding finding(const Message& message, const std::string& subject,
                 std::vector<std::pair<std::string, Argument>> arguments) {
-    return {.message = &message, .subject = subject, .arguments = std::move(arguments),
-            .place = {}, .otherPlace = {}, .time_s = {}, .related = {}};
+    return {.message = &message, .subject = subject, .arguments = std::move(arguments)};
 }
 
 Amount share(double value) { return amount(Quantity::perUnit, value); }

@@ -21,14 +21,14 @@ struct FrancisRating {
     double ratedPower_W = 0.0;     ///< at the shaft; fixes the rated efficiency
     double gravity_mps2 = 9.81;
     double density_kgm3 = 1000.0;
-    std::optional<double> runnerDiameter_m;      ///< inlet; else from the specific speed
-    std::optional<double> runaway_pu;            ///< of rated speed, full opening, rated head
-    std::optional<double> noLoadFlow_pu;         ///< of rated flow at rated head and speed
-    std::optional<double> standstillFlow_pu;     ///< of rated flow, full opening, rated head
-    std::optional<double> bestPower_pu;          ///< of rated power, where efficiency is best
-    std::optional<double> bestEfficiency_pu;
-    std::optional<double> halfPowerEfficiency_pu;
-    std::vector<std::pair<double, double>> flowByStroke; ///< shares of one; empty: a straight line
+    std::optional<double> runnerDiameter_m = {};      ///< inlet; else from the specific speed
+    std::optional<double> runaway_pu = {};            ///< of rated speed, full opening, rated head
+    std::optional<double> noLoadFlow_pu = {};         ///< of rated flow at rated head and speed
+    std::optional<double> standstillFlow_pu = {};     ///< of rated flow, full opening, rated head
+    std::optional<double> bestPower_pu = {};          ///< of rated power, where efficiency is best
+    std::optional<double> bestEfficiency_pu = {};
+    std::optional<double> halfPowerEfficiency_pu = {};
+    std::vector<std::pair<double, double>> flowByStroke = {}; ///< shares of one; empty: a straight line
 };
 
 /// The rating with every default filled in, per unit of rated.

@@ -21,8 +21,7 @@ std::size_t segmentOf(const std::vector<double>& x, double at) {
 
 Finding rowFinding(const Message& message, const std::string& subject, std::size_t row) {
     return {.message = &message, .subject = subject,
-            .arguments = {{"row", static_cast<std::int64_t>(row + 1)}}, .place = {},
-            .otherPlace = {}, .time_s = {}, .related = {}};
+            .arguments = {{"row", static_cast<std::int64_t>(row + 1)}}};
 }
 
 Findings faults(const std::vector<double>& x, const std::vector<double>& y,
@@ -31,8 +30,7 @@ Findings faults(const std::vector<double>& x, const std::vector<double>& y,
     if (x.size() < 2 || x.size() != y.size()) {
         found.push_back({.message = &tableTooShort, .subject = subject,
                          .arguments = {{"rows", static_cast<std::int64_t>(std::min(
-                                                    x.size(), y.size()))}},
-                         .place = {}, .otherPlace = {}, .time_s = {}, .related = {}});
+                                                    x.size(), y.size()))}}});
         return found;
     }
     for (std::size_t i = 0; i < x.size(); ++i) {
