@@ -138,28 +138,39 @@ ElasticState ElasticRows::state() const {
 
 // --- rest ---------------------------------------------------------------------------------------
 
-double ElasticRows::setRest(ElasticState& state, std::size_t conduit, double startHead_m,
-                            double flow_m3s) const {
+void ElasticRows::setProfile(ElasticState& state, std::size_t conduit,
+                             std::span<const double> head_m,
+                             std::span<const double> flow_m3s) const {
     const Row& row = rows_[conduit];
-    double head = startHead_m;
+    ensure(head_m.size() == row.cells + 1 && flow_m3s.size() == row.cells + 1, "a value a node");
     for (std::size_t i = 0; i <= row.cells; ++i) {
         const std::size_t node = row.firstNode + i;
+        const double head = head_m[i];
+        const double flow = flow_m3s[i];
         state.head_[node] = head;
-        state.flow_[node] = flow_m3s;
-        state.lastFlow_[node] = flow_m3s;
+        state.flow_[node] = flow;
+        state.lastFlow_[node] = flow;
         state.right_[node] = state.left_[node] = head; // of a cell that is not there: never read
         if (i > 0) {
             const Cell& cell = cells_[row.cell[i - 1]];
-            state.left_[node] = head - cell.impedance * flow_m3s + 0.5 * cell.loss(flow_m3s);
+            state.left_[node] = head - cell.impedance * flow + 0.5 * cell.loss(flow);
         }
         if (i < row.cells) {
             const Cell& cell = cells_[row.cell[i]];
-            const double loss = cell.loss(flow_m3s);
-            state.right_[node] = head + cell.impedance * flow_m3s - 0.5 * loss;
-            head -= loss;
+            state.right_[node] = head + cell.impedance * flow - 0.5 * cell.loss(flow);
         }
     }
-    return head;
+}
+
+double ElasticRows::setRest(ElasticState& state, std::size_t conduit, double startHead_m,
+                            double flow_m3s) const {
+    const Row& row = rows_[conduit];
+    std::vector<double> head{startHead_m};
+    for (const std::size_t cell : row.cell) {
+        head.push_back(head.back() - cells_[cell].loss(flow_m3s));
+    }
+    setProfile(state, conduit, head, std::vector<double>(row.cells + 1, flow_m3s));
+    return head.back();
 }
 
 double ElasticRows::restLoss_m(std::size_t conduit, double flow_m3s) const {

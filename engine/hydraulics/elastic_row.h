@@ -103,6 +103,10 @@ public:
     /// end, which is the one at the start less `restLoss`.
     double setRest(ElasticState& state, std::size_t conduit, double startHead_m,
                    double flow_m3s) const;
+    /// Fills a conduit with any heads [m] and discharges at its cells + 1 nodes, as if the flows
+    /// had been the same one step ago.
+    void setProfile(ElasticState& state, std::size_t conduit, std::span<const double> head_m,
+                    std::span<const double> flow_m3s) const;
     /// Head loss from start to end at rest [m] and its derivative by the discharge [s/m²].
     double restLoss_m(std::size_t conduit, double flow_m3s) const;
     double restLossSlope_sm2(std::size_t conduit, double flow_m3s) const;

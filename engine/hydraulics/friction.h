@@ -21,7 +21,7 @@ struct Bore {
 
 /// The turbulent part of a Colebrook–White loss as cubic pieces over the binary digits of
 /// x = Re/2000: looked up with integer steps, no logarithm, the same bits everywhere. Zero in the
-/// laminar range, exact in the blend, relative error of f below 1e-8 beyond. From Re 3.4e10 on
+/// laminar range, exact in the blend, relative error of f below 2e-8 beyond. From Re 3.4e10 on
 /// (50 km/s in a pipe of 1 m) the last value stands.
 class ExcessFactor {
 public:
