@@ -2,12 +2,14 @@
 # headroom_test(<name> SOURCES a.cpp ... USES plant ... LINKS Qt6::Test ...)
 # makes test_<name>, registered with ctest under the same name.
 find_package(Catch2 REQUIRED)
+set(HEADROOM_TIMEOUT_FACTOR 1 CACHE STRING "Times longer than usual that a test may take")
 
 function(headroom_test name)
   cmake_parse_arguments(TEST "" "TIMEOUT" "SOURCES;USES;LINKS;LABELS" ${ARGN})
   if(NOT TEST_TIMEOUT)
     set(TEST_TIMEOUT 120)
   endif()
+  math(EXPR TEST_TIMEOUT "${TEST_TIMEOUT} * ${HEADROOM_TIMEOUT_FACTOR}")
   add_executable(test_${name} ${TEST_SOURCES})
   target_link_libraries(test_${name} PRIVATE headroom_options headroom_test_support ${TEST_LINKS})
   foreach(used IN LISTS TEST_USES)
