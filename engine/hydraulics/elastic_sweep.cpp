@@ -2,7 +2,7 @@
 #include "hydraulics/elastic_sweep.h"
 
 #include "base/ensure.h"
-#include "elastic_sweep_loops.h"
+#include "hydraulics/elastic_sweep_loops.h"
 
 namespace headroom::hydraulics {
 

@@ -33,6 +33,10 @@ struct SweepArrays {
 struct SweepLoops {
     void (*sweep)(const SweepArrays& arrays, std::size_t begin, std::size_t end);
     void (*widen)(const double* value, double* lowest, double* highest, std::size_t count);
+    /// Extremes with the count of the step at which they were met; true if one of them was met two
+    /// steps before `now` and not since, so that what surrounds it is complete.
+    bool (*track)(const double* value, double* highest, double* highestAt, double* lowest,
+                  double* lowestAt, double now, std::size_t count);
 };
 /// The loops of an available set.
 const SweepLoops& sweepLoops(InstructionSet set);

@@ -1,15 +1,15 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "elastic_sweep_loops.h"
+#include "hydraulics/elastic_sweep_loops.h"
 
 namespace headroom::hydraulics::baseline {
 namespace {
 
-#include "elastic_sweep_body.h"
+#include "hydraulics/elastic_sweep_body.h"
 
 } // namespace
 
 const SweepLoops& loops() {
-    static constexpr SweepLoops all{sweep, widen};
+    static constexpr SweepLoops all{sweep, widen, track};
     return all;
 }
 

@@ -39,22 +39,19 @@ void sweepByRoot(const SweepArrays& a, std::size_t begin, std::size_t end) {
     }
 }
 
-/// True if a node of begin … end − 1 needs `sweepByRoot`.
-bool sweepBlock(const SweepArrays& a, std::size_t begin, std::size_t end) {
-    // Copies of the members: read through the structure they would stop the vector loop.
-    const double* __restrict right = a.right;
-    const double* __restrict left = a.left;
-    const double* __restrict curvature = a.curvature;
-    const double* __restrict share = a.share;
-    const double* __restrict conductance = a.conductance;
-    double* __restrict nextRight = a.nextRight;
-    double* __restrict nextLeft = a.nextLeft;
-    double* __restrict head = a.head;
-    double* __restrict nextFlow = a.nextFlow;
-    long long beyond = 0;
-    for (std::size_t i = begin; i < end; ++i) {
-        const double fromLeft = right[i - 1];
-        const double fromRight = left[i + 1];
+/// `count` nodes; true if one of them needs `sweepByRoot`. `right` and `left` begin at the
+/// neighbours, the others at the first node. Pointers are parameters of a function that is not
+/// inlined, because only so does the compiler keep that they do not overlap.
+__attribute__((noinline)) bool
+sweepBlock(const double* __restrict right, const double* __restrict left,
+           const double* __restrict curvature, const double* __restrict share,
+           const double* __restrict conductance, double* __restrict nextRight,
+           double* __restrict nextLeft, double* __restrict head, double* __restrict nextFlow,
+           std::size_t count) {
+    double beyond = 0.0;
+    for (std::size_t i = 0; i < count; ++i) {
+        const double fromLeft = right[i];
+        const double fromRight = left[i];
         const double w = fromLeft - fromRight;
         const double xi = curvature[i] * sizeOf(w);
         const double loss = w * (share[i] + (1.0 - share[i]) * seriesShare(xi));
@@ -62,15 +59,18 @@ bool sweepBlock(const SweepArrays& a, std::size_t begin, std::size_t end) {
         nextLeft[i] = fromRight + loss;
         nextFlow[i] = (w - loss) * conductance[i];
         head[i] = 0.5 * (fromLeft + fromRight);
-        beyond |= xi > seriesLimit ? 1 : 0;
+        beyond = xi > seriesLimit ? 1.0 : beyond;
     }
-    return beyond != 0;
+    return beyond != 0.0;
 }
 
 void sweep(const SweepArrays& arrays, std::size_t begin, std::size_t end) {
     for (std::size_t from = begin; from < end; from += block) {
         const std::size_t to = end - from < block ? end : from + block;
-        if (sweepBlock(arrays, from, to)) {
+        if (sweepBlock(arrays.right + from - 1, arrays.left + from + 1, arrays.curvature + from,
+                       arrays.share + from, arrays.conductance + from, arrays.nextRight + from,
+                       arrays.nextLeft + from, arrays.head + from, arrays.nextFlow + from,
+                       to - from)) {
             sweepByRoot(arrays, from, to);
         }
     }
@@ -83,4 +83,26 @@ void widen(const double* __restrict value, double* __restrict lowest, double* __
         lowest[i] = v < lowest[i] ? v : lowest[i];
         highest[i] = v > highest[i] ? v : highest[i];
     }
+}
+
+/// See `SweepLoops::track`.
+bool track(const double* __restrict value, double* __restrict highest,
+           double* __restrict highestAt, double* __restrict lowest, double* __restrict lowestAt,
+           double now, std::size_t count) {
+    const double settled = now - 2.0;
+    long long due = 0;
+    for (std::size_t i = 0; i < count; ++i) {
+        const double v = value[i];
+        const double top = highest[i];
+        const double bottom = lowest[i];
+        const double topAt = v > top ? now : highestAt[i];
+        const double bottomAt = v < bottom ? now : lowestAt[i];
+        highest[i] = v > top ? v : top;
+        lowest[i] = v < bottom ? v : bottom;
+        highestAt[i] = topAt;
+        lowestAt[i] = bottomAt;
+        due |= topAt == settled ? 1 : 0;
+        due |= bottomAt == settled ? 1 : 0;
+    }
+    return due != 0;
 }
