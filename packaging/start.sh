@@ -33,7 +33,10 @@ build() {
     cmake --build "$top/build" --target headroom headroom-batch
 }
 
-verdicts() { "$top/build/bin/headroom-batch" run "${project:-$demo}"; }
+verdicts() {
+    "$top/build/bin/headroom-batch" run "${project:-$demo}" --out "$top/build/verdicts" || return
+    cat "$top/build/verdicts/summary.txt"
+}
 
 phase "install" install build || exit
 phase "build" build || exit

@@ -206,10 +206,20 @@ def tested_headers(tree):
             yield path, 1, "no test names this header"
 
 
+def units_explained(tree):
+    """DEVELOPERS.md names every unit suffix of the closed list of quantities."""
+    lines = tree.texts.get("engine/units/quantity.cpp", [])
+    told = set(re.findall(r"`(\w+)` \|", "\n".join(tree.texts.get("DEVELOPERS.md", []))))
+    for number, line in enumerate(lines, start=1):
+        match = re.match(r'\s*QuantityInfo\{Quantity::\w+, "[^"]*", "(\w+)"', line)
+        if match and match[1] not in told:
+            yield "engine/units/quantity.cpp", number, f"DEVELOPERS.md does not explain _{match[1]}"
+
+
 RULES = {rule.__name__: rule for rule in (
     top_level, folders, floors, engine_without_window, elementary, literal_colours, message_boxes,
     plot_header, unfinished, machine_paths, toothless_tests, long_files, licence_line,
-    tested_headers)}
+    tested_headers, units_explained)}
 
 
 def check(root, names=None):

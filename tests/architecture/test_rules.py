@@ -30,7 +30,7 @@ SOUND = {
     "packaging/start.sh": f"# {SPDX}\n",
 }
 
-# rule -> (file, text put at its end, line of the finding); None: the file is new
+# rule -> (file, text put at its end, line of the finding); the file may be new
 FAULTS = {
     "top_level": [("notes/plan.md", "a\n", 1)],
     "folders": [("engine/extras/tool.cpp", f"// {SPDX}\n", 1)],
@@ -75,6 +75,10 @@ FAULTS = {
         ("app/desk/gauge.h", f"// {SPDX}\n", 1),
     ],
     "tested_headers": [("engine/plant/valve.h", HEADER, 1)],
+    "units_explained": [
+        ("engine/units/quantity.cpp",
+         f'// {SPDX}\n    QuantityInfo{{Quantity::power, "power", "MW", "MW", 1e6, 0, 1}},\n', 2),
+    ],
 }
 
 
