@@ -46,7 +46,7 @@ public:
     virtual std::unique_ptr<Controller> clone() const = 0;
     /// Seconds between calls; 0: each step, continuous.
     virtual double samplePeriod_s() const { return 0.0; }
-    /// Fastest crossover it aims at [rad/s], 0 unknown; for the choice of step.
+    /// Shortest time constant inside [s], 0 none; the run's step is chosen below a tenth of it.
     virtual double shortestTime_s() const { return 0.0; }
 
 protected:

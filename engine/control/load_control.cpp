@@ -42,7 +42,8 @@ void LoadControl::begin(const LoadOrder& order, double from_s) {
 bool LoadControl::synchronised(double step_s, double speed_pu, double grid_pu) {
     const bool inside = std::fabs(speed_pu - grid_pu) <= spec_.synchroniseWithin_pu;
     inBand_s_ = inside ? inBand_s_ + step_s : 0.0;
-    return inside && inBand_s_ >= spec_.synchroniseHold_s;
+    constexpr double rounding_s = 1e-9; // of a sum of counted steps
+    return inside && inBand_s_ >= spec_.synchroniseHold_s - rounding_s;
 }
 
 LoadControl::Answer LoadControl::at(double time_s, double step_s, double speed_pu,

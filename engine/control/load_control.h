@@ -30,14 +30,16 @@ public:
     LoadControl(const LoadControlSpec& spec, std::vector<LoadOrder> orders, LoadReference atRest,
                 bool onGrid);
 
-    /// What holds until the gate opens to the grid again, at the stroke of no load.
+    /// What the unit's controller and breaker are told at one instant.
     struct Answer {
         LoadReference reference;
         bool closeBreaker = false;  ///< at this instant the unit may join the grid
         bool heldBack = false;      ///< a load order waits for the interlock or the speed
     };
     /// The reference at `time_s`, to be asked in rising time, once per step.
-    /// @param speed_pu of the unit, @param grid_pu frequency of the grid it would join
+    /// @param step_s   since the last question; counts towards the synchronising time
+    /// @param speed_pu of the unit
+    /// @param grid_pu  frequency of the grid it would join
     Answer at(double time_s, double step_s, double speed_pu, double grid_pu);
 
     /// Breaker opened at `time_s`: the reference drops to `noLoad`, orders under way are dropped.

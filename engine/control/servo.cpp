@@ -7,6 +7,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 namespace headroom::control {
 
@@ -195,12 +196,13 @@ void advance(const ServoSpec& spec, ServoState& state, const ServoOrder& order, 
         }
         const double from = emergency ? spec.lowest_pu : state.orders.after(felt_s);
         const double to = emergency ? spec.lowest_pu : state.orders.before(until - spec.deadTime_s);
-        y = advancePiece(spec, y, from, to, until - t, emergency);
+        const double next = advancePiece(spec, y, from, to, until - t, emergency);
+        state.travel_pu += std::fabs(next - y);
+        y = next;
         t = until;
     }
     state.opening_pu = y;
     state.rate_1s = (y - before) / step_s;
-    state.travel_pu += std::fabs(y - before);
     state.orders.forget(end_s - spec.deadTime_s);
 }
 

@@ -183,7 +183,7 @@ Findings checkTargets(const FrancisTargets& t, const std::string& subject) {
                                  {"least", share(leastEfficiency)},
                                  {"most", share(mostEfficiency)}}));
     }
-    constexpr double slowest = 0.45, fastest = 2.5; // n_q from about 20 to about 120
+    constexpr double slowest = 0.3, fastest = 3.0; // beyond, the form has not been tried
     if (!(t.u1 >= slowest && t.u1 <= fastest)) {
         found.push_back(finding(speedNotFrancis, subject,
                                 {{"value", share(t.u1)}, {"least", share(slowest)},
