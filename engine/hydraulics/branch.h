@@ -54,9 +54,9 @@ BranchFlow<Number> solveGaining(const Number& b, const Number& r, const Number& 
         const Number root = sqrt(discriminant);
         return {2.0 * w / (b + root), 1.0 / root};
     }
-    const Number kink = b / (-4.0 * r);          // flow where the tangent begins
+    const Number kink = b / (-4.0 * r);           // flow where the tangent begins
     const Number driving = kink * (b + r * kink); // head there
-    const Number slope = 2.0 / b;                // dQ/dw there
+    const Number slope = 2.0 / b;                 // dQ/dw there
     const Number flow = kink + slope * (size - driving);
     return {w < 0.0 ? Number(-flow) : flow, slope};
 }
@@ -92,8 +92,8 @@ inline BranchFlow<double> solveBranch(const BranchLaw& law, double driving_m) {
 /// `solveBranch` answered with the tangent: flow speeds of a quarter of the wave speed.
 inline bool lawHolds(const BranchLaw& law, double driving_m) {
     const double b = law.linear_sm2;
-    return law.quadratic_s2m5 >= 0.0 ||
-           b * b + 4.0 * law.quadratic_s2m5 * std::fabs(driving_m) > 0.25 * b * b;
+    return law.quadratic_s2m5 >= 0.0
+           || b * b + 4.0 * law.quadratic_s2m5 * std::fabs(driving_m) > 0.25 * b * b;
 }
 
 } // namespace headroom::hydraulics

@@ -41,8 +41,8 @@ void checkRow(Rows rows, std::size_t i, const std::string& subject, Findings& fi
                                           {"level", amount(Quantity::elevation, level)},
                                           {"row", rowNumber(i)}}});
     }
-    if (i > 1 && level == rows[i - 1].first && level == rows[i - 2].first &&
-        (i == 2 || level != rows[i - 3].first)) {
+    if (i > 1 && level == rows[i - 1].first && level == rows[i - 2].first
+        && (i == 2 || level != rows[i - 3].first)) {
         findings.push_back({.message = &chamberLevelRepeated,
                             .subject = subject,
                             .arguments = {{"level", amount(Quantity::elevation, level)}}});
@@ -79,8 +79,8 @@ Result<ChamberTable> ChamberTable::make(Rows rows, const std::string& subject) {
     double volume = 0.0;
     for (std::size_t i = 0; i < rows.size(); ++i) {
         if (i > 0) {
-            volume += 0.5 * (rows[i].second + rows[i - 1].second) *
-                      (rows[i].first - rows[i - 1].first);
+            volume +=
+                0.5 * (rows[i].second + rows[i - 1].second) * (rows[i].first - rows[i - 1].first);
         }
         table.level_.push_back(rows[i].first);
         table.area_.push_back(rows[i].second);
@@ -131,8 +131,7 @@ ChamberBranch chamberBranch(const ChamberTable& table, const Throttle& throttle,
                             const ChamberStep& step) {
     ensure(step.step_s > 0.0, "a step takes time");
     const double half = 0.5 * step.step_s;
-    const WaterSurface at =
-        table.surface(step.volume_m3 + half * (step.flow_m3s + step.about_m3s));
+    const WaterSurface at = table.surface(step.volume_m3 + half * (step.flow_m3s + step.about_m3s));
     const double linear = half / at.area_m2;
     return {at.level_m - linear * step.about_m3s, linear, throttle};
 }

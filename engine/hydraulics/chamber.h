@@ -35,7 +35,7 @@ public:
     double floor_m() const { return level_.front(); }
     double rim_m() const { return level_.back(); }
     double capacity_m3() const { return volume_.back(); } ///< floor to rim
-    double area_m2(double level_m) const;   ///< the upper one at a step
+    double area_m2(double level_m) const;                 ///< the upper one at a step
     double volume_m3(double level_m) const; ///< exact integral from the floor; negative below it
     double level_m(double volume_m3) const { return surface(volume_m3).level_m; }
     WaterSurface surface(double volume_m3) const; ///< exact inverse, with the area there
@@ -68,10 +68,10 @@ struct ChamberBranch {
 };
 
 struct ChamberStep {
-    double volume_m3 = 0.0;    ///< V
-    double flow_m3s = 0.0;     ///< Q, into the chamber
-    double about_m3s = 0.0;    ///< expected Q'; Q itself, or the last iterate
-    double step_s = 0.0;       ///< Δt > 0
+    double volume_m3 = 0.0; ///< V
+    double flow_m3s = 0.0;  ///< Q, into the chamber
+    double about_m3s = 0.0; ///< expected Q'; Q itself, or the last iterate
+    double step_s = 0.0;    ///< Δt > 0
 };
 ChamberBranch chamberBranch(const ChamberTable& table, const Throttle& throttle,
                             const ChamberStep& step);

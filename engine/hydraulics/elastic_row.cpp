@@ -42,14 +42,14 @@ double ElasticRows::Cell::lossSlope(double flow_m3s) const {
 
 bool ElasticRows::Cell::sameAs(const Cell& other) const {
     const auto equal = [](const VariableLoss& a, const VariableLoss& b) {
-        return a.law.excess() == b.law.excess() && a.length_m == b.length_m &&
-               a.law.scale_s2m6() == b.law.scale_s2m6() &&
-               a.law.perFlow_sm3() == b.law.perFlow_sm3();
+        return a.law.excess() == b.law.excess() && a.length_m == b.length_m
+               && a.law.scale_s2m6() == b.law.scale_s2m6()
+               && a.law.perFlow_sm3() == b.law.perFlow_sm3();
     };
-    return impedance == other.impedance && linear == other.linear &&
-           quadratic == other.quadratic && forward == other.forward && reverse == other.reverse &&
-           std::equal(variable.begin(), variable.end(), other.variable.begin(),
-                      other.variable.end(), equal);
+    return impedance == other.impedance && linear == other.linear && quadratic == other.quadratic
+           && forward == other.forward && reverse == other.reverse
+           && std::equal(variable.begin(), variable.end(), other.variable.begin(),
+                         other.variable.end(), equal);
 }
 
 // --- making -------------------------------------------------------------------------------------
@@ -99,8 +99,8 @@ void ElasticRows::addRow(const ElasticConduit& conduit) {
     for (std::size_t i = 1; i < row.cells; ++i) {
         const std::size_t node = row.firstNode + i;
         const Cell& cell = cells_[row.cell[i]];
-        if (row.cell[i] != row.cell[i - 1] || cell.forward > 0.0 || cell.reverse > 0.0 ||
-            cell.variable.size() > 1) {
+        if (row.cell[i] != row.cell[i - 1] || cell.forward > 0.0 || cell.reverse > 0.0
+            || cell.variable.size() > 1) {
             interfaces_.push_back({node, row.cell[i - 1], row.cell[i]});
             continue;
         }
@@ -229,8 +229,7 @@ void ElasticRows::findEndLaws(ElasticState& state) const {
     for (std::size_t j = 0; j < rows_.size(); ++j) {
         const std::size_t first = rows_[j].firstNode;
         const std::size_t last = first + rows_[j].cells;
-        state.ends_[2 * j] =
-            lawAt(state.left_[first + 1], firstCell(j), state.expectedFlow(first));
+        state.ends_[2 * j] = lawAt(state.left_[first + 1], firstCell(j), state.expectedFlow(first));
         state.ends_[2 * j + 1] =
             lawAt(state.right_[last - 1], lastCell(j), state.expectedFlow(last));
     }
@@ -244,11 +243,9 @@ void ElasticRows::sweep(ElasticState& state, InstructionSet set) const {
     refreshFriction(state);
     findEndLaws(state);
     solveInterfaces(state);
-    const SweepArrays arrays{state.right_.data(),     state.left_.data(),
-                             state.curvature_.data(), share_.data(),
-                             conductance_.data(),     state.nextRight_.data(),
-                             state.nextLeft_.data(),  state.head_.data(),
-                             state.lastFlow_.data()};
+    const SweepArrays arrays{state.right_.data(),    state.left_.data(),  state.curvature_.data(),
+                             share_.data(),          conductance_.data(), state.nextRight_.data(),
+                             state.nextLeft_.data(), state.head_.data(),  state.lastFlow_.data()};
     sweepLoops(set).sweep(arrays, 1, nodes_ - 1);
     storeInterfaces(state);
 }
@@ -266,8 +263,7 @@ void ElasticRows::solveInterfaces(ElasticState& state) const {
         const double localRight = w < 0.0 ? right.reverse : right.forward;
         const double halfLeft = 0.5 * (left.quadraticAt(expected) + localLeft);
         const double halfRight = 0.5 * (right.quadraticAt(expected) + localRight);
-        const double linear =
-            left.impedance + right.impedance + 0.5 * (left.linear + right.linear);
+        const double linear = left.impedance + right.impedance + 0.5 * (left.linear + right.linear);
         const double flow = solveBranch(linear, halfLeft + halfRight, w).flow_m3s;
         const double lossLeft = (0.5 * left.linear + halfLeft * std::fabs(flow)) * flow;
         const double lossRight = (0.5 * right.linear + halfRight * std::fabs(flow)) * flow;
@@ -301,8 +297,7 @@ void ElasticRows::setStart(ElasticState& state, std::size_t conduit, double head
     const std::size_t node = rows_[conduit].firstNode;
     const Cell& cell = firstCell(conduit);
     // F' = H' + BQ' − φ'/2 with H' = c₋ + BQ' + φ'/2: so the volume balance holds to rounding.
-    state.nextRight_[node] =
-        state.ends_[2 * conduit].arriving_m + 2.0 * cell.impedance * flow_m3s;
+    state.nextRight_[node] = state.ends_[2 * conduit].arriving_m + 2.0 * cell.impedance * flow_m3s;
     state.nextLeft_[node] = head_m;
     state.head_[node] = head_m;
     state.lastFlow_[node] = flow_m3s;
@@ -334,8 +329,7 @@ double ElasticRows::storedVolume_m3(const ElasticState& state, std::size_t condu
         const std::size_t node = row.firstNode + i;
         sum += (state.right_[node] + state.left_[node + 1]) / cells_[row.cell[i]].impedance;
     }
-    const double through =
-        state.flow_[row.firstNode] - state.flow_[row.firstNode + row.cells];
+    const double through = state.flow_[row.firstNode] - state.flow_[row.firstNode + row.cells];
     return 0.5 * step_ * (sum - through);
 }
 

@@ -14,8 +14,8 @@ bool available(InstructionSet set) {
     case InstructionSet::avx2:
         return __builtin_cpu_supports("avx2") != 0;
     case InstructionSet::avx512:
-        return __builtin_cpu_supports("avx512f") != 0 && __builtin_cpu_supports("avx512dq") != 0 &&
-               __builtin_cpu_supports("avx512vl") != 0;
+        return __builtin_cpu_supports("avx512f") != 0 && __builtin_cpu_supports("avx512dq") != 0
+               && __builtin_cpu_supports("avx512vl") != 0;
 #else
     case InstructionSet::avx2:
     case InstructionSet::avx512:

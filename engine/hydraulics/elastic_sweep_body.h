@@ -42,12 +42,11 @@ void sweepByRoot(const SweepArrays& a, std::size_t begin, std::size_t end) {
 /// `count` nodes; true if one of them needs `sweepByRoot`. `right` and `left` begin at the
 /// neighbours, the others at the first node. Pointers are parameters of a function that is not
 /// inlined, because only so does the compiler keep that they do not overlap.
-__attribute__((noinline)) bool
-sweepBlock(const double* __restrict right, const double* __restrict left,
-           const double* __restrict curvature, const double* __restrict share,
-           const double* __restrict conductance, double* __restrict nextRight,
-           double* __restrict nextLeft, double* __restrict head, double* __restrict nextFlow,
-           std::size_t count) {
+__attribute__((noinline)) bool sweepBlock(
+    const double* __restrict right, const double* __restrict left,
+    const double* __restrict curvature, const double* __restrict share,
+    const double* __restrict conductance, double* __restrict nextRight, double* __restrict nextLeft,
+    double* __restrict head, double* __restrict nextFlow, std::size_t count) {
     double beyond = 0.0;
     for (std::size_t i = 0; i < count; ++i) {
         const double fromLeft = right[i];
@@ -86,9 +85,8 @@ void widen(const double* __restrict value, double* __restrict lowest, double* __
 }
 
 /// See `SweepLoops::track`.
-bool track(const double* __restrict value, double* __restrict highest,
-           double* __restrict highestAt, double* __restrict lowest, double* __restrict lowestAt,
-           double now, std::size_t count) {
+bool track(const double* __restrict value, double* __restrict highest, double* __restrict highestAt,
+           double* __restrict lowest, double* __restrict lowestAt, double now, std::size_t count) {
     const double settled = now - 2.0;
     long long due = 0;
     for (std::size_t i = 0; i < count; ++i) {

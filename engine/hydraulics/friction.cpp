@@ -112,14 +112,14 @@ Result<FrictionLaw> FrictionLaw::make(const Bore& bore, const ColebrookWhite& la
                       .arguments = {{"roughness", amount(Quantity::roughness, law.roughness_m)},
                                     {"diameter", amount(Quantity::diameter, diameter)}}};
     const auto wrongBore = checkBore(bore, subject);
-    const bool inside = law.roughness_m >= 0.0 && std::isfinite(law.roughness_m) &&
-                        (wrongBore || law.roughness_m < diameter);
+    const bool inside = law.roughness_m >= 0.0 && std::isfinite(law.roughness_m)
+                        && (wrongBore || law.roughness_m < diameter);
     if (Findings findings = collect(wrongBore, inside, roughness); !findings.empty()) {
         return findings;
     }
     FrictionLaw made;
-    made.linear_ = 2.0 * law.viscosity_m2s /
-                   (law.gravity_mps2 * bore.area_m2 * numerics::square(bore.hydraulicRadius_m));
+    made.linear_ = 2.0 * law.viscosity_m2s
+                   / (law.gravity_mps2 * bore.area_m2 * numerics::square(bore.hydraulicRadius_m));
     made.quadratic_ = darcyScale(bore, law.gravity_mps2);
     made.relative_ = reynoldsNumber(bore, 1.0, law.viscosity_m2s) / laminarReynolds;
     made.excess_ = std::make_shared<const ExcessFactor>(law.roughness_m / diameter);
@@ -132,25 +132,25 @@ Result<FrictionLaw> FrictionLaw::make(const Bore& bore, const ColebrookWhite& la
 
 Result<FrictionLaw> FrictionLaw::make(const Bore& bore, const Strickler& law,
                                       const std::string& subject) {
-    Findings findings =
-        collect(checkBore(bore, subject), positive(law.number),
-                single(stricklerNotPositive, subject, "number",
-                       amount(Quantity::strickler, law.number)));
+    Findings findings = collect(
+        checkBore(bore, subject), positive(law.number),
+        single(stricklerNotPositive, subject, "number", amount(Quantity::strickler, law.number)));
     if (!findings.empty()) {
         return findings;
     }
     FrictionLaw made;
-    made.quadratic_ = 1.0 / (numerics::square(law.number * bore.area_m2) *
-                             numerics::pow(bore.hydraulicRadius_m, 4.0 / 3.0));
+    made.quadratic_ = 1.0
+                      / (numerics::square(law.number * bore.area_m2)
+                         * numerics::pow(bore.hydraulicRadius_m, 4.0 / 3.0));
     return made;
 }
 
 Result<FrictionLaw> FrictionLaw::make(const Bore& bore, const DarcyFactor& law,
                                       const std::string& subject) {
     ensure(law.gravity_mps2 > 0.0, "gravity is given");
-    Findings findings = collect(
-        checkBore(bore, subject), law.factor >= 0.0 && std::isfinite(law.factor),
-        single(factorBelowZero, subject, "factor", amount(Quantity::factor, law.factor)));
+    Findings findings =
+        collect(checkBore(bore, subject), law.factor >= 0.0 && std::isfinite(law.factor),
+                single(factorBelowZero, subject, "factor", amount(Quantity::factor, law.factor)));
     if (!findings.empty()) {
         return findings;
     }

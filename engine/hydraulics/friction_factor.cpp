@@ -22,7 +22,8 @@ double laminarFactor(double reynolds) {
 }
 
 double colebrookWhiteFactor(double reynolds, double relativeRoughness) {
-    ensure(reynolds > 0.0 && relativeRoughness >= 0.0, "Reynolds number above 0, roughness not below");
+    ensure(reynolds > 0.0 && relativeRoughness >= 0.0,
+           "Reynolds number above 0, roughness not below");
     const double rough = relativeRoughness / roughConstant;
     const double smooth = smoothConstant / reynolds;
     const double perLog = 2.0 / numerics::log(10.0);
@@ -31,7 +32,8 @@ double colebrookWhiteFactor(double reynolds, double relativeRoughness) {
     double x = 8.0;                   // 1/√f for f = 1/64
     for (int step = 0; step < mostSteps; ++step) {
         const double inside = rough + smooth * x;
-        const double change = (x + perLog * numerics::log(inside)) / (1.0 + perLog * smooth / inside);
+        const double change =
+            (x + perLog * numerics::log(inside)) / (1.0 + perLog * smooth / inside);
         x = x - change > 0.0 ? x - change : 0.5 * x;
         if (std::fabs(change) <= settled * x) {
             break;
@@ -53,20 +55,20 @@ double darcyFactor(double reynolds, double relativeRoughness) {
     if (reynolds >= turbulentReynolds) {
         return colebrookWhiteFactor(reynolds, relativeRoughness);
     }
-    const double excess = colebrookWhiteFactor(turbulentReynolds, relativeRoughness) -
-                          laminarFactor(turbulentReynolds);
+    const double excess = colebrookWhiteFactor(turbulentReynolds, relativeRoughness)
+                          - laminarFactor(turbulentReynolds);
     const double share = (reynolds - laminarReynolds) / (turbulentReynolds - laminarReynolds);
     return laminarFactor(reynolds) + share * excess;
 }
 
 double factorOfStrickler(double strickler, double hydraulicRadius_m, double gravity_mps2) {
-    return 8.0 * gravity_mps2 /
-           (numerics::square(strickler) * numerics::pow(hydraulicRadius_m, 1.0 / 3.0));
+    return 8.0 * gravity_mps2
+           / (numerics::square(strickler) * numerics::pow(hydraulicRadius_m, 1.0 / 3.0));
 }
 
 double stricklerOfFactor(double factor, double hydraulicRadius_m, double gravity_mps2) {
-    return numerics::sqrt(8.0 * gravity_mps2 /
-                          (factor * numerics::pow(hydraulicRadius_m, 1.0 / 3.0)));
+    return numerics::sqrt(8.0 * gravity_mps2
+                          / (factor * numerics::pow(hydraulicRadius_m, 1.0 / 3.0)));
 }
 
 } // namespace headroom::hydraulics

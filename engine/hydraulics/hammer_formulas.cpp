@@ -21,8 +21,7 @@ double waveImpedance_sm2(double waveSpeed_mps, double area_m2, double gravity_mp
     return waveSpeed_mps / (gravity_mps2 * area_m2);
 }
 
-double michaudRise_m(double length_m, double velocity_mps, double closing_s,
-                     double gravity_mps2) {
+double michaudRise_m(double length_m, double velocity_mps, double closing_s, double gravity_mps2) {
     return 2.0 * length_m * velocity_mps / (gravity_mps2 * closing_s);
 }
 
@@ -55,8 +54,7 @@ double columnInertia_1m(std::span<const ColumnPart> parts) {
     return sum;
 }
 
-double waterStartingTime_s(double inertia_1m, double flow_m3s, double head_m,
-                           double gravity_mps2) {
+double waterStartingTime_s(double inertia_1m, double flow_m3s, double head_m, double gravity_mps2) {
     return flow_m3s * inertia_1m / (gravity_mps2 * head_m);
 }
 

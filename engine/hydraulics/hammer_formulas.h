@@ -37,12 +37,10 @@ struct ColumnPart {
 /// ΣL/A [1/m].
 double columnInertia_1m(std::span<const ColumnPart> parts);
 /// Water starting time T_w = Q₀ ΣL/A/(g H₀) [s]; IEC 61362, IEEE 1207, from memory.
-double waterStartingTime_s(double inertia_1m, double flow_m3s, double head_m,
-                           double gravity_mps2);
+double waterStartingTime_s(double inertia_1m, double flow_m3s, double head_m, double gravity_mps2);
 /// Machine starting time T_a = J ω₀²/P [s]; twice the inertia constant.
 double machineStartingTime_s(double inertia_kgm2, double speed_rads, double power_W);
 /// Allievi's ρ = a V₀/(2 g H₀).
-double allieviNumber(double waveSpeed_mps, double velocity_mps, double head_m,
-                     double gravity_mps2);
+double allieviNumber(double waveSpeed_mps, double velocity_mps, double head_m, double gravity_mps2);
 
 } // namespace headroom::hydraulics

@@ -30,8 +30,8 @@ double narrowingCoefficient(double areaBefore_m2, double areaAfter_m2) {
 }
 
 double trashRackCoefficient(const TrashRack& rack) {
-    return rack.shape * numerics::pow(rack.barThickness_m / rack.clearance_m, 4.0 / 3.0) *
-           numerics::sin(rack.slope_rad);
+    return rack.shape * numerics::pow(rack.barThickness_m / rack.clearance_m, 4.0 / 3.0)
+           * numerics::sin(rack.slope_rad);
 }
 
 double orificeLoss_s2m5(const Orifice& orifice, double gravity_mps2) {

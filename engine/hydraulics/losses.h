@@ -18,10 +18,10 @@ double wideningCoefficient(double areaBefore_m2, double areaAfter_m2);
 double narrowingCoefficient(double areaBefore_m2, double areaAfter_m2);
 
 struct TrashRack {
-    double shape = 2.42;        ///< 2.42 rectangular bars, 1.79 round ones
+    double shape = 2.42; ///< 2.42 rectangular bars, 1.79 round ones
     double barThickness_m = 0.0;
-    double clearance_m = 0.0;   ///< between bars
-    double slope_rad = 0.0;     ///< of the rack against the horizontal
+    double clearance_m = 0.0; ///< between bars
+    double slope_rad = 0.0;   ///< of the rack against the horizontal
 };
 /// β (s/b)^(4/3) sin α on the approach velocity (Kirschmer 1926).
 double trashRackCoefficient(const TrashRack& rack);

@@ -7,13 +7,11 @@ namespace headroom::hydraulics {
 
 std::span<const Message* const> messages() {
     static constexpr std::array all{
-        &boreNotPositive,       &roughnessOutOfRange,   &roughnessBeyondTests,
-        &stricklerNotPositive,  &factorBelowZero,       &rateBelowZero,
-        &temperatureOutOfRange, &latitudeOutOfRange,    &altitudeOutOfRange,
-        &wallDimension,         &modulusNotPositive,    &poissonOutOfRange,
-        &gasOutOfRange,         &chamberTooFewRows,     &chamberNotFinite,
-        &chamberAreaNotPositive, &chamberLevelsFall,    &chamberLevelRepeated,
-        &chamberFloorAboveRim,
+        &boreNotPositive,    &roughnessOutOfRange,  &roughnessBeyondTests,  &stricklerNotPositive,
+        &factorBelowZero,    &rateBelowZero,        &temperatureOutOfRange, &latitudeOutOfRange,
+        &altitudeOutOfRange, &wallDimension,        &modulusNotPositive,    &poissonOutOfRange,
+        &gasOutOfRange,      &chamberTooFewRows,    &chamberNotFinite,      &chamberAreaNotPositive,
+        &chamberLevelsFall,  &chamberLevelRepeated, &chamberFloorAboveRim,
     };
     return all;
 }

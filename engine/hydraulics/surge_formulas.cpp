@@ -25,8 +25,7 @@ double effectiveHead_m(const ThomaHeads& heads) {
 } // namespace
 
 double surgePeriod_s(const SurgeTunnel& tunnel, double chamberArea_m2) {
-    return 2.0 * constants::pi *
-           sqrt(tunnel.inertia_1m * chamberArea_m2 / tunnel.gravity_mps2);
+    return 2.0 * constants::pi * sqrt(tunnel.inertia_1m * chamberArea_m2 / tunnel.gravity_mps2);
 }
 
 double surgeAmplitude_m(const SurgeTunnel& tunnel, double chamberArea_m2, double flow_m3s) {
@@ -34,8 +33,7 @@ double surgeAmplitude_m(const SurgeTunnel& tunnel, double chamberArea_m2, double
 }
 
 double relativeLoss(const SurgeTunnel& tunnel, double chamberArea_m2, double flow_m3s) {
-    return tunnel.loss_s2m5 * square(flow_m3s) /
-           surgeAmplitude_m(tunnel, chamberArea_m2, flow_m3s);
+    return tunnel.loss_s2m5 * square(flow_m3s) / surgeAmplitude_m(tunnel, chamberArea_m2, flow_m3s);
 }
 
 double upsurgeEstimate(double relativeLoss) {
@@ -49,8 +47,9 @@ double followingDownsurgeEstimate(double relativeLoss) {
 double acceptanceDownsurgeEstimate(double relativeLoss, double initialShare) {
     // Vogt's fit with his constants.
     const double epsilon = 1.0 / square(relativeLoss);
-    return 1.0 + (sqrt(epsilon - 0.275 * sqrt(initialShare)) + 0.05 / epsilon - 0.9) *
-                     (1.0 - initialShare) * (1.0 - initialShare / pow(epsilon, 0.62));
+    return 1.0
+           + (sqrt(epsilon - 0.275 * sqrt(initialShare)) + 0.05 / epsilon - 0.9)
+                 * (1.0 - initialShare) * (1.0 - initialShare / pow(epsilon, 0.62));
 }
 
 double fullAcceptanceEstimate(double relativeLoss) {

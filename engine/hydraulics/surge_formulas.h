@@ -8,8 +8,8 @@ namespace headroom::hydraulics {
 
 /// Tunnel between reservoir and chamber.
 struct SurgeTunnel {
-    double inertia_1m = 0.0;   ///< ΣL/A
-    double loss_s2m5 = 0.0;    ///< head loss by Q², all of it
+    double inertia_1m = 0.0; ///< ΣL/A
+    double loss_s2m5 = 0.0;  ///< head loss by Q², all of it
     double gravity_mps2 = 0.0;
 };
 
@@ -52,7 +52,7 @@ bool thomaAmplitudeHolds(const ThomaHeads& heads);
 
 /// Small swings of the chamber with an ideal governor (constant hydraulic power).
 struct SurgeMode {
-    double growth_1s = 0.0;     ///< σ, negative when damped
+    double growth_1s = 0.0;      ///< σ, negative when damped
     double frequency_rads = 0.0; ///< 0 when it creeps
     double period_s() const;
     double ratioPerCycle() const; ///< e^(σT)

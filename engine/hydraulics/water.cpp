@@ -41,8 +41,8 @@ Column column(Pick pick) {
 double throughRows(Column y, double temperature_degC) {
     for (std::size_t order = 1; order < y.size(); ++order) {
         for (std::size_t i = y.size() - 1; i >= order; --i) {
-            y[i] = (y[i] - y[i - 1]) /
-                   (rows[i].temperature_degC - rows[i - order].temperature_degC);
+            y[i] =
+                (y[i] - y[i - 1]) / (rows[i].temperature_degC - rows[i - order].temperature_degC);
         }
     }
     double value = y.back();
@@ -102,11 +102,11 @@ Result<double> gravityAt(double latitude_rad, double altitude_m, const std::stri
     if (!findings.empty()) {
         return findings;
     }
-    constexpr double equator = 9.7803;   // at sea level [m/s²]
+    constexpr double equator = 9.7803; // at sea level [m/s²]
     constexpr double flattening = 0.0053;
-    constexpr double perMetre = 3e-6;    // [1/s²]
-    return equator * (1.0 + flattening * numerics::square(numerics::sin(latitude_rad))) -
-           perMetre * altitude_m;
+    constexpr double perMetre = 3e-6; // [1/s²]
+    return equator * (1.0 + flattening * numerics::square(numerics::sin(latitude_rad)))
+           - perMetre * altitude_m;
 }
 
 Result<double> airPressureAt(double altitude_m, const std::string& subject) {

@@ -16,8 +16,8 @@ inline constexpr double highestAltitude_m = 6000.0;
 /// Pure water at 101 325 Pa. Pressure raises the wave speed by 0.55 % at 5 MPa; left out.
 struct Water {
     double density_kgm3 = 0.0;
-    double bulkModulus_Pa = 0.0;  ///< isentropic, the one that waves feel
-    double viscosity_m2s = 0.0;   ///< kinematic
+    double bulkModulus_Pa = 0.0;    ///< isentropic, the one that waves feel
+    double viscosity_m2s = 0.0;     ///< kinematic
     double vapourPressure_Pa = 0.0; ///< absolute
 
     double soundSpeed_mps() const { return numerics::sqrt(bulkModulus_Pa / density_kgm3); }

@@ -97,8 +97,7 @@ double restraintFactor(const SteelWall& wall) {
 
 void addWall(WaveSpeed& made, const SteelWall& wall) {
     made.restraintFactor = restraintFactor(wall);
-    made.wall_1Pa =
-        wall.diameter_m / (wall.modulus_Pa * wall.thickness_m) * made.restraintFactor;
+    made.wall_1Pa = wall.diameter_m / (wall.modulus_Pa * wall.thickness_m) * made.restraintFactor;
 }
 
 void addWall(WaveSpeed& made, const RockWall& wall) {
@@ -108,8 +107,8 @@ void addWall(WaveSpeed& made, const RockWall& wall) {
 
 // Steel ring in plane strain and rock carry the pressure side by side: stiffnesses add.
 void addWall(WaveSpeed& made, const LinedRockWall& wall) {
-    const double steel = 2.0 * wall.modulus_Pa * wall.thickness_m /
-                         (wall.diameter_m * (1.0 - square(wall.poisson)));
+    const double steel =
+        2.0 * wall.modulus_Pa * wall.thickness_m / (wall.diameter_m * (1.0 - square(wall.poisson)));
     const double rock = wall.rockModulus_Pa / (1.0 + wall.rockPoisson);
     made.wall_1Pa = 2.0 / (steel + rock);
     made.rockShare = rock / (steel + rock);
@@ -127,15 +126,14 @@ Result<WaveSpeed> waveSpeed(const Wall& wall, const WaveMedium& medium,
         return findings;
     }
     WaveSpeed made;
-    const double gasDensity =
-        medium.pressure_Pa / (constants::airGas_JkgK * medium.temperature_K);
+    const double gasDensity = medium.pressure_Pa / (constants::airGas_JkgK * medium.temperature_K);
     made.density_kgm3 =
         (1.0 - medium.gasShare) * medium.density_kgm3 + medium.gasShare * gasDensity;
     made.water_1Pa = 1.0 / medium.bulkModulus_Pa;
     made.gas_1Pa = medium.gasShare * (1.0 / medium.pressure_Pa - made.water_1Pa);
     std::visit([&made](const auto& kind) { addWall(made, kind); }, wall);
-    made.speed_mps = 1.0 / numerics::sqrt(made.density_kgm3 *
-                                          (made.water_1Pa + made.wall_1Pa + made.gas_1Pa));
+    made.speed_mps =
+        1.0 / numerics::sqrt(made.density_kgm3 * (made.water_1Pa + made.wall_1Pa + made.gas_1Pa));
     return made;
 }
 

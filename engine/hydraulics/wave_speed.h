@@ -54,12 +54,12 @@ struct WaveMedium {
 /// A wave speed with what it is made of: a = 1/√(ρ(water + wall + gas)).
 struct WaveSpeed {
     double speed_mps = 0.0;
-    double density_kgm3 = 0.0;      ///< of water and gas together
-    double water_1Pa = 0.0;         ///< compliance of the water, 1/K
-    double wall_1Pa = 0.0;          ///< area strain of the wall per pressure
-    double gas_1Pa = 0.0;           ///< what the gas adds
-    double restraintFactor = 0.0;   ///< c₁ of a steel wall, else 0
-    double rockShare = 0.0;         ///< of the pressure carried by the rock, 0 … 1
+    double density_kgm3 = 0.0;    ///< of water and gas together
+    double water_1Pa = 0.0;       ///< compliance of the water, 1/K
+    double wall_1Pa = 0.0;        ///< area strain of the wall per pressure
+    double gas_1Pa = 0.0;         ///< what the gas adds
+    double restraintFactor = 0.0; ///< c₁ of a steel wall, else 0
+    double rockShare = 0.0;       ///< of the pressure carried by the rock, 0 … 1
 };
 
 /// Refuses, all at once, dimensions and moduli that are not positive, Poisson's ratios outside

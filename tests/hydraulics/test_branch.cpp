@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "hydraulics/branch.h"
-
 #include "support/catch.h"
 
 #include <array>
@@ -15,7 +14,8 @@ namespace {
 long double bisected(double b, double r, double w) {
     long double low = 0.0L, high = 1.0L;
     const auto above = [&](long double q) {
-        return static_cast<long double>(b) * q + static_cast<long double>(r) * q * q > static_cast<long double>(w);
+        return static_cast<long double>(b) * q + static_cast<long double>(r) * q * q
+               > static_cast<long double>(w);
     };
     while (!above(high)) {
         high *= 2.0L;
@@ -82,8 +82,9 @@ TEST_CASE("Branch: a gained velocity head keeps the law increasing", "[hydraulic
             REQUIRE(std::fabs(q) / 12.0 >= 0.2499 * 1200.0);
         }
         const double small = 1e-3 * b;
-        const double slope = (solveBranch(b, r, w + small).flow_m3s -
-                              solveBranch(b, r, w - small).flow_m3s) / (2 * small);
+        const double slope =
+            (solveBranch(b, r, w + small).flow_m3s - solveBranch(b, r, w - small).flow_m3s)
+            / (2 * small);
         REQUIRE_THAT(flow.slope_m2s, WithinRel(slope, 1e-5));
     }
     CHECK(lawHolds({b, r}, 5.0 * b * 12.0)); // 5 m/s

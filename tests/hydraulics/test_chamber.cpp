@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "hydraulics/chamber.h"
-
 #include "hydraulics/messages.h"
 #include "support/catch.h"
 #include "units/text.h"
@@ -107,7 +106,8 @@ TEST_CASE("Chamber: volume below the peak of an expanded chamber", "[hydraulics]
     const double top = std::sqrt(100.0 + 2.0 * (25484.199796 - 2500.0) / 400.0);
     CHECK_THAT(top, WithinAbs(14.660184139, 1e-8));
     CHECK_THAT(chamber.volume_m3(10.0) - chamber.volume_m3(0.0), WithinRel(500.0, 1e-13));
-    CHECK_THAT(chamber.volume_m3(top) - chamber.volume_m3(10.0), WithinRel(400.0 * (top - 10.0), 1e-13));
+    CHECK_THAT(chamber.volume_m3(top) - chamber.volume_m3(10.0),
+               WithinRel(400.0 * (top - 10.0), 1e-13));
     CHECK_THAT(chamber.level_m(chamber.volume_m3(top)), WithinRel(top, 1e-14));
 }
 
@@ -158,12 +158,15 @@ TEST_CASE("Chamber: a bad table is refused with all its faults", "[hydraulics][m
         codes.push_back(finding.message);
         CHECK(finding.subject == "plant/chambers/S");
     }
-    CHECK(codes == std::vector<const Message*>{&chamberAreaNotPositive, &chamberLevelsFall,
-                                               &chamberNotFinite, &chamberLevelsFall,
-                                               &chamberFloorAboveRim});
-    CHECK_THAT(text(bad.findings().back()), ContainsSubstring("floor at 10") && ContainsSubstring("rim at 5"));
+    CHECK(codes
+          == std::vector<const Message*>{&chamberAreaNotPositive, &chamberLevelsFall,
+                                         &chamberNotFinite, &chamberLevelsFall,
+                                         &chamberFloorAboveRim});
+    CHECK_THAT(text(bad.findings().back()),
+               ContainsSubstring("floor at 10") && ContainsSubstring("rim at 5"));
     CHECK(ChamberTable::make(Rows{}).findings()[0].message == &chamberTooFewRows);
     CHECK(ChamberTable::make(Rows{{1, 1}, {1, 2}}).findings()[0].message == &chamberFloorAboveRim);
-    CHECK(ChamberTable::make(Rows{{1, 1}, {2, 2}, {2, 3}, {2, 4}, {2, 5}, {3, 3}}).findings().size() == 1);
+    CHECK(ChamberTable::make(Rows{{1, 1}, {2, 2}, {2, 3}, {2, 4}, {2, 5}, {3, 3}}).findings().size()
+          == 1);
     CHECK(ChamberTable::make(Rows{{1, 1}, {2, 2}, {2, 3}, {3, 3}}));
 }

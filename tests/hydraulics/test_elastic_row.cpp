@@ -1,14 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/elastic_row.h"
-
 #include "base/ensure.h"
-#include "row_support.h"
+#include "hydraulics/elastic_row.h"
 #include "support/catch.h"
 
 #include <algorithm>
 #include <cmath>
 #include <cstring>
 #include <random>
+
+#include "row_support.h"
 
 using namespace headroom::hydraulics;
 using namespace headroom::hydraulics::rows;
@@ -44,8 +44,9 @@ ElasticConduit mixedConduit(int refinement) {
 
 double steelLoss(double flow) { // of mixedConduit, from the laws alone
     const double bend = flow < 0 ? 3e-4 : 2e-4;
-    return colebrook(4.2, 3e-3).lossPerMetre(flow) * (250.0 + 20.0) +
-           colebrook(3.4, 1e-4).lossPerMetre(flow) * (30.0 + 300.0) + bend * flow * std::fabs(flow);
+    return colebrook(4.2, 3e-3).lossPerMetre(flow) * (250.0 + 20.0)
+           + colebrook(3.4, 1e-4).lossPerMetre(flow) * (30.0 + 300.0)
+           + bend * flow * std::fabs(flow);
 }
 
 } // namespace
@@ -60,15 +61,16 @@ TEST_CASE("Row: rest has the loss of its laws, whatever the cells", "[waves][inv
             CHECK_THAT(500.0 - end, WithinAbs(steelLoss(flow), 1e-12 * 500.0));
             CHECK_THAT(rows.restLoss_m(0, flow), WithinRel(steelLoss(flow), 1e-13));
             const double small = 1e-5 + 1e-5 * std::fabs(flow);
-            CHECK_THAT(rows.restLossSlope_sm2(0, flow),
-                       WithinAbs((steelLoss(flow + small) - steelLoss(flow - small)) / (2 * small), 1e-7));
+            CHECK_THAT(
+                rows.restLossSlope_sm2(0, flow),
+                WithinAbs((steelLoss(flow + small) - steelLoss(flow - small)) / (2 * small), 1e-7));
         }
     }
 }
 
 TEST_CASE("Row: rest with Colebrook–White friction stands still", "[waves][invariant]") {
-    const ElasticRows rows({mixedConduit(1), uniformConduit(40, {48.0, {{colebrook(2.0, 1e-4), 12.0}}})},
-                           0.05);
+    const ElasticRows rows(
+        {mixedConduit(1), uniformConduit(40, {48.0, {{colebrook(2.0, 1e-4), 12.0}}})}, 0.05);
     ElasticState state = rows.state();
     const double first = rows.setRest(state, 0, 500.0, 60.0);
     const double second = rows.setRest(state, 1, 200.0, -9.0);
@@ -109,8 +111,9 @@ TEST_CASE("Row: water in less water out is water stored", "[waves][invariant]") 
         startAtHead(rows, state, 0, head(random));
         endAtFlow(rows, state, 0, flow(random));
         rows.advance(state);
-        const double more = 0.5 * rows.step_s() *
-                            (in + state.flow_m3s()[rows.firstNode(0)] - out - state.flow_m3s()[last]);
+        const double more =
+            0.5 * rows.step_s()
+            * (in + state.flow_m3s()[rows.firstNode(0)] - out - state.flow_m3s()[last]);
         through += more;
         moved += std::fabs(more);
     }
@@ -171,8 +174,9 @@ TEST_CASE("Row: friction is of second order", "[waves][order]") {
     // Smooth stop and restart of the flow; long rough pipe, so that friction is half of the head.
     const auto headAfter = [](int cells) {
         const double area = circle(1.0).area_m2, step = 2000.0 / 1000.0 / cells;
-        const ElasticRows rows(
-            {uniformConduit(cells, {1000.0 / (g * area), {{colebrook(1.0, 2e-3), 2000.0 / cells}}})}, step);
+        const ElasticRows rows({uniformConduit(cells, {1000.0 / (g * area),
+                                                       {{colebrook(1.0, 2e-3), 2000.0 / cells}}})},
+                               step);
         ElasticState state = rows.state();
         rows.setRest(state, 0, 150.0, 3.0);
         const int steps = static_cast<int>(std::lround(14.0 / step));

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/elastic_sweep.h"
-
 #include "hydraulics/elastic_row.h"
+#include "hydraulics/elastic_sweep.h"
 #include "support/catch.h"
 
 #include <array>
@@ -24,16 +23,16 @@ struct Arrays {
         : right(count), left(count), curvature(count), share(count), conductance(count),
           nextRight(count), nextLeft(count), head(count), flow(count) {}
     SweepArrays view() {
-        return {right.data(),       left.data(),      curvature.data(),
-                share.data(),       conductance.data(), nextRight.data(),
-                nextLeft.data(),    head.data(),      flow.data()};
+        return {right.data(),    left.data(),        curvature.data(),
+                share.data(),    conductance.data(), nextRight.data(),
+                nextLeft.data(), head.data(),        flow.data()};
     }
     bool sameBits(const Arrays& other) const {
         const auto equal = [](const std::vector<double>& a, const std::vector<double>& b) {
             return std::memcmp(a.data(), b.data(), a.size() * sizeof(double)) == 0;
         };
-        return equal(nextRight, other.nextRight) && equal(nextLeft, other.nextLeft) &&
-               equal(head, other.head) && equal(flow, other.flow);
+        return equal(nextRight, other.nextRight) && equal(nextLeft, other.nextLeft)
+               && equal(head, other.head) && equal(flow, other.flow);
     }
 };
 

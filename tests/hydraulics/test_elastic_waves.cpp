@@ -1,15 +1,15 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Rows against closed solutions of water hammer.
+#include "base/constants.h"
 #include "hydraulics/elastic_row.h"
 #include "hydraulics/hammer_formulas.h"
-
-#include "base/constants.h"
-#include "row_support.h"
 #include "support/catch.h"
 
 #include <array>
 #include <cmath>
 #include <vector>
+
+#include "row_support.h"
 
 using namespace headroom::hydraulics;
 using namespace headroom::hydraulics::rows;
@@ -45,11 +45,11 @@ TEST_CASE("Waves: instantaneous closure without friction is exact", "[waves][ana
             const int phase = (n - 1) % (4 * cells);
             const double valve = phase < 2 * cells ? 600.0 + rise : 600.0 - rise;
             REQUIRE_THAT(headAt(rows, state, 0, last), WithinAbs(valve, 1e-9));
-            const double middle = phase < cells / 2                          ? 0.0
-                                  : phase < cells + cells / 2              ? rise
-                                  : phase < 2 * cells + cells / 2          ? 0.0
-                                  : phase < 3 * cells + cells / 2          ? -rise
-                                                                             : 0.0;
+            const double middle = phase < cells / 2               ? 0.0
+                                  : phase < cells + cells / 2     ? rise
+                                  : phase < 2 * cells + cells / 2 ? 0.0
+                                  : phase < 3 * cells + cells / 2 ? -rise
+                                                                  : 0.0;
             REQUIRE_THAT(headAt(rows, state, 0, last / 2), WithinAbs(600.0 + middle, 1e-9));
             const double speed = phase < cells || phase >= 3 * cells ? 1.0 : -1.0;
             REQUIRE_THAT(flowAt(rows, state, 0, 0), WithinAbs(area * speed, 1e-11));
@@ -79,7 +79,7 @@ TEST_CASE("Waves: a step passes and returns at a change of bore", "[waves][refer
     CHECK_THAT(headAt(rows, state, 0, 5), WithinRel(1.228483547, 1e-9));
     CHECK_THAT(headAt(rows, state, 0, 3), WithinRel(1.0 + 0.228483547, 1e-9)); // returned
     CHECK_THAT(headAt(rows, state, 0, 1), WithinRel(1.0, 1e-12));              // not there yet
-    CHECK_THAT(headAt(rows, state, 0, 8), WithinRel(1.228483547, 1e-9)); // the front itself
+    CHECK_THAT(headAt(rows, state, 0, 8), WithinRel(1.228483547, 1e-9));       // the front itself
     CHECK(headAt(rows, state, 0, 9) == 0.0);
 }
 
@@ -90,8 +90,8 @@ namespace {
 std::vector<double> telegraph(int cells, double share, const std::vector<double>& instants) {
     const double area = 2.0;
     const auto law = FrictionLaw::make({area, 0.4}, FrictionLaw::Linear{0.2, g}).value();
-    const ElasticRows rows(
-        {uniformConduit(cells, {1200.0 / (g * area), {{law, 600.0 / cells}}})}, 0.5 / cells);
+    const ElasticRows rows({uniformConduit(cells, {1200.0 / (g * area), {{law, 600.0 / cells}}})},
+                           0.5 / cells);
     const auto last = static_cast<std::size_t>(cells);
     ElasticState state = rows.state();
     CHECK_THAT(rows.setRest(state, 0, 250.0, area), WithinAbs(237.767584, 1e-6));
@@ -129,7 +129,8 @@ TEST_CASE("Waves: linear friction packs the line as in the telegraph equation",
           "[waves][reference]") {
     // Derived here (modal series), checked by a second method to 1e-6 m. L 600 m, a 1200 m/s,
     // V₀ 1 m/s, R 0.2 1/s, H_R 250 m; just after closure 360.091743. Asked tolerance 0.05 m.
-    const std::vector<double> instants{0.25, 0.5, 0.75, 1.25, 1.5, 1.75, 2.5, 3.5, 4.5, 5.5, 8.5, 9.5};
+    const std::vector<double> instants{0.25, 0.5, 0.75, 1.25, 1.5, 1.75,
+                                       2.5,  3.5, 4.5,  5.5,  8.5, 9.5};
     const std::vector<double> expected{363.13089, 366.13275, 369.09824, 147.77998,
                                        144.93223, 142.11723, 345.05674, 164.00069,
                                        327.80467, 179.60935, 302.12364, 202.84382};
@@ -207,7 +208,8 @@ TEST_CASE("Waves: single pipe with friction and a closing valve", "[waves][refer
 TEST_CASE("Waves: modes of one and two pipes with a closed end", "[waves][reference]") {
     // Source: from memory and derived here. Pipe 1 (reservoir side) L 400 m, a 1000 m/s, A 8 m²;
     // pipe 2 L 300, a 1200, A 4: Z₁ tan(ωL₁/a₁) tan(ωL₂/a₂) = Z₂.
-    const double first = waveImpedance_sm2(1000.0, 8.0, g), second = waveImpedance_sm2(1200.0, 4.0, g);
+    const double first = waveImpedance_sm2(1000.0, 8.0, g),
+                 second = waveImpedance_sm2(1200.0, 4.0, g);
     CHECK_THAT(first, WithinRel(12.742099898, 1e-9));
     CHECK_THAT(second, WithinRel(30.581039755, 1e-9));
     ElasticConduit conduit = uniformConduit(65, {first, {}}); // 0.4 s and 0.25 s in 10 ms
@@ -215,11 +217,13 @@ TEST_CASE("Waves: modes of one and two pipes with a closed end", "[waves][refere
         conduit.cells[i].impedance_sm2 = second;
     }
     const ElasticRows rows({conduit}, 0.01);
-    for (const double omega : {3.000937974, 6.926178537, 11.944108048, 17.478507515, 21.096762964}) {
+    for (const double omega :
+         {3.000937974, 6.926178537, 11.944108048, 17.478507515, 21.096762964}) {
         CHECK_THAT(first * std::tan(omega * 0.4) * std::tan(omega * 0.25), WithinRel(second, 1e-7));
         std::vector<double> head, flow(66, 0.0);
         for (int i = 0; i <= 65; ++i) {
-            head.push_back(i <= 40 ? std::cos(omega * 0.25) / std::sin(omega * 0.4) * std::sin(omega * 0.01 * i)
+            head.push_back(i <= 40 ? std::cos(omega * 0.25) / std::sin(omega * 0.4)
+                                         * std::sin(omega * 0.01 * i)
                                    : std::cos(omega * 0.01 * (65 - i)));
         }
         ElasticState state = rows.state();
@@ -304,9 +308,9 @@ TEST_CASE("Waves: elastic mass oscillation of tunnel, chamber and penstock", "[w
         endAtFlow(rows, state, 1, 0.0);
         const EndLaw up = rows.endLaw(state, 0), down = rows.startLaw(state, 1);
         const double storage = 2.0 * chamber / step;
-        const double head = (up.arriving_m / up.linear_sm2 + down.arriving_m / down.linear_sm2 +
-                             storage * level + inflow) /
-                            (1 / up.linear_sm2 + 1 / down.linear_sm2 + storage);
+        const double head = (up.arriving_m / up.linear_sm2 + down.arriving_m / down.linear_sm2
+                             + storage * level + inflow)
+                            / (1 / up.linear_sm2 + 1 / down.linear_sm2 + storage);
         rows.setEnd(state, 0, head, (up.arriving_m - head) / up.linear_sm2);
         rows.setStart(state, 1, head, (head - down.arriving_m) / down.linear_sm2);
         inflow = storage * (head - level) - inflow;

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "hydraulics/friction.h"
-
 #include "hydraulics/friction_factor.h"
 #include "hydraulics/messages.h"
 #include "hydraulics/sections.h"
@@ -66,7 +65,8 @@ TEST_CASE("Friction law: the loss is odd, increasing, with its own derivative",
             (law.lossPerMetre(flow + small) - law.lossPerMetre(flow - small)) / (2.0 * small);
         CAPTURE(flow);
         // The slope jumps at both ends of the blend; a difference across them lies between.
-        if (const double x = flow * law.perFlow_sm3(); std::fabs(x - 1) > 1e-3 && std::fabs(x - 2) > 3e-3) {
+        if (const double x = flow * law.perFlow_sm3();
+            std::fabs(x - 1) > 1e-3 && std::fabs(x - 2) > 3e-3) {
             REQUIRE_THAT(law.slope_sm3(flow), WithinRel(slope, 1e-7));
         }
     }

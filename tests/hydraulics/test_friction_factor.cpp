@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/friction_factor.h"
-
 #include "base/ensure.h"
+#include "hydraulics/friction_factor.h"
 #include "support/catch.h"
 
 #include <array>
@@ -26,7 +25,8 @@ double haaland(double reynolds, double roughness) {
 
 TEST_CASE("Friction factor: laminar flow has 64/Re", "[hydraulics][analytic]") {
     // Source: Hagen–Poiseuille, from memory.
-    for (const auto& [reynolds, factor] : {std::pair{100.0, 0.64}, {1000.0, 0.064}, {2000.0, 0.032}}) {
+    for (const auto& [reynolds, factor] :
+         {std::pair{100.0, 0.64}, {1000.0, 0.064}, {2000.0, 0.032}}) {
         CHECK_THAT(laminarFactor(reynolds), WithinRel(factor, 1e-12));
         CHECK_THAT(darcyFactor(reynolds, 1e-3), WithinRel(factor, 1e-12));
     }
@@ -77,7 +77,8 @@ TEST_CASE("Friction factor: fully rough limit", "[hydraulics][limit]") {
     }
 }
 
-TEST_CASE("Friction factor: explicit approximations differ as published", "[hydraulics][reference]") {
+TEST_CASE("Friction factor: explicit approximations differ as published",
+          "[hydraulics][reference]") {
     // Sources: Swamee & Jain 1976, ASCE J. Hydr. Div. 102 HY5; Haaland 1983, J. Fluids Eng. 105;
     // both from memory, numbers recomputed. Columns: value, deviation from Colebrook–White in %.
     struct Row {

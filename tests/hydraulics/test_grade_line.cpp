@@ -78,9 +78,10 @@ TEST_CASE("Grade line: two parallel pipes share the flow", "[hydraulics][referen
     // Constructed case, recomputed: same end heads, 10 m³/s in total.
     const auto coefficient = [](double length, double diameter, double factor) {
         const Section section = circle(diameter);
-        return length * FrictionLaw::make({section.area_m2, section.hydraulicRadius_m()},
-                                          FrictionLaw::DarcyFactor{factor, g})
-                            ->quadratic_s2m6(1.0);
+        return length
+               * FrictionLaw::make({section.area_m2, section.hydraulicRadius_m()},
+                                   FrictionLaw::DarcyFactor{factor, g})
+                     ->quadratic_s2m6(1.0);
     };
     const double first = coefficient(800, 1.2, 0.015);
     const double second = coefficient(900, 1.6, 0.014);

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/hammer_formulas.h"
-
 #include "base/ensure.h"
+#include "hydraulics/hammer_formulas.h"
 #include "hydraulics/sections.h"
 #include "support/catch.h"
 

@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/losses.h"
-
 #include "base/constants.h"
 #include "base/ensure.h"
+#include "hydraulics/losses.h"
 #include "hydraulics/sections.h"
 #include "support/catch.h"
 

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "hydraulics/messages.h"
-
 #include "support/catch.h"
 
 #include <set>

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/surge_formulas.h"
-
 #include "base/ensure.h"
+#include "hydraulics/surge_formulas.h"
 #include "support/catch.h"
 
 #include <array>
@@ -43,7 +42,8 @@ TEST_CASE("Surge: exact extremes after a sudden stop", "[surge][reference]") {
     CHECK(upsurge(0.0) == 1.0);
     CHECK(followingDownsurge(0.0) == -1.0);
     CHECK_THAT(upsurge(4.9e-5), WithinAbs(upsurge(5.1e-5) + 2.0 / 3.0 * 2e-6, 1e-8));
-    CHECK_THAT(followingDownsurge(4.9e-5), WithinAbs(followingDownsurge(5.1e-5) - 2.0 * 2e-6, 1e-7));
+    CHECK_THAT(followingDownsurge(4.9e-5),
+               WithinAbs(followingDownsurge(5.1e-5) - 2.0 * 2e-6, 1e-7));
     CHECK_THROWS_AS(upsurge(-0.1), headroom::Bug);
 }
 

@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/water.h"
-
 #include "base/constants.h"
 #include "hydraulics/messages.h"
+#include "hydraulics/water.h"
 #include "support/catch.h"
 #include "units/text.h"
 
@@ -18,19 +17,27 @@ namespace {
 
 // Del Grosso & Mader 1972 / Marczak 1997, J. Acoust. Soc. Am. 102, 2776: sound speed.
 double marczak(double t) {
-    return 1402.385 + t * (5.038813 + t * (-5.799136e-2 + t * (3.287156e-4 + t * (-1.398845e-6 + t * 2.78786e-9))));
+    return 1402.385
+           + t
+                 * (5.038813
+                    + t * (-5.799136e-2 + t * (3.287156e-4 + t * (-1.398845e-6 + t * 2.78786e-9))));
 }
 // Kell 1975, density of air-free water; from memory.
 double kell(double t) {
-    return (999.83952 + t * (16.945176 + t * (-7.9870401e-3 + t * (-46.170461e-6 + t * (105.56302e-9 - t * 280.54253e-12))))) /
-           (1.0 + 16.879850e-3 * t);
+    return (999.83952
+            + t
+                  * (16.945176
+                     + t
+                           * (-7.9870401e-3
+                              + t * (-46.170461e-6 + t * (105.56302e-9 - t * 280.54253e-12)))))
+           / (1.0 + 16.879850e-3 * t);
 }
 // Wagner & Pruss 2002, saturation pressure; from memory.
 double wagnerPruss(double t) {
     const double kelvin = t + 273.15, tau = 1.0 - kelvin / 647.096;
-    const double sum = -7.85951783 * tau + 1.84408259 * std::pow(tau, 1.5) -
-                       11.7866497 * std::pow(tau, 3) + 22.6807411 * std::pow(tau, 3.5) -
-                       15.9618719 * std::pow(tau, 4) + 1.80122502 * std::pow(tau, 7.5);
+    const double sum = -7.85951783 * tau + 1.84408259 * std::pow(tau, 1.5)
+                       - 11.7866497 * std::pow(tau, 3) + 22.6807411 * std::pow(tau, 3.5)
+                       - 15.9618719 * std::pow(tau, 4) + 1.80122502 * std::pow(tau, 7.5);
     return 22.064e6 * std::exp(647.096 / kelvin * sum);
 }
 // Kestin, Sokolov & Wakeham 1978, dynamic viscosity against 1.002 mPa s at 20 °C; from memory.

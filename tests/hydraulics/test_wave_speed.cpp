@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "hydraulics/wave_speed.h"
-
 #include "hydraulics/messages.h"
+#include "hydraulics/wave_speed.h"
 #include "support/catch.h"
 #include "units/text.h"
 
@@ -49,10 +48,12 @@ TEST_CASE("Wave speed: thick steel wall", "[hydraulics][reference]") {
         const auto speed = waveSpeed(pipe(3.0, 0.03, restraints[i], WallTheory::thick), cleanWater);
         CHECK_THAT(speed->restraintFactor, WithinRel(factors[i], 1e-8));
         CHECK_THAT(speed->speed_mps, WithinRel(wide[i], 1e-9));
-        CHECK_THAT(waveSpeed(pipe(1.0, 0.1, restraints[i], WallTheory::thick), cleanWater)->speed_mps,
-                   WithinRel(narrow[i], 1e-9));
-        CHECK_THAT(waveSpeed(pipe(1.0, 0.1, restraints[i], WallTheory::thin), cleanWater)->speed_mps,
-                   WithinRel(narrowThin[i], 1e-9));
+        CHECK_THAT(
+            waveSpeed(pipe(1.0, 0.1, restraints[i], WallTheory::thick), cleanWater)->speed_mps,
+            WithinRel(narrow[i], 1e-9));
+        CHECK_THAT(
+            waveSpeed(pipe(1.0, 0.1, restraints[i], WallTheory::thin), cleanWater)->speed_mps,
+            WithinRel(narrowThin[i], 1e-9));
     }
 }
 
@@ -61,7 +62,8 @@ TEST_CASE("Wave speed: unlined rock", "[hydraulics][reference]") {
     const std::array<std::pair<double, double>, 4> rows{
         {{10e9, 1198.123861}, {20e9, 1316.905983}, {30e9, 1365.105342}, {50e9, 1407.723427}}};
     for (const auto& [modulus, speed] : rows) {
-        CHECK_THAT(waveSpeed(RockWall{modulus, 0.2}, cleanWater)->speed_mps, WithinRel(speed, 1e-9));
+        CHECK_THAT(waveSpeed(RockWall{modulus, 0.2}, cleanWater)->speed_mps,
+                   WithinRel(speed, 1e-9));
     }
 }
 
@@ -75,8 +77,8 @@ TEST_CASE("Wave speed: steel lining in rock without a gap", "[hydraulics][refere
                                    {20e9, 0.020, 1338.433497, 0.846669148},
                                    {20e9, 0.030, 1347.191817, 0.786380919}}};
     for (const Row& row : rows) {
-        const auto speed = waveSpeed(
-            LinedRockWall{3.0, row.thickness, 206e9, 0.3, row.rock, 0.2}, cleanWater);
+        const auto speed =
+            waveSpeed(LinedRockWall{3.0, row.thickness, 206e9, 0.3, row.rock, 0.2}, cleanWater);
         CHECK_THAT(speed->speed_mps, WithinRel(row.speed, 1e-9));
         CHECK_THAT(speed->rockShare, WithinRel(row.share, 1e-8));
     }
