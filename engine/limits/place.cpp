@@ -25,9 +25,7 @@ bool isHead(Measure measure) {
 std::optional<Place> placeOf(const plant::Limit& limit, const plant::Plant& plant) {
     const auto& thing = limit.at.thing;
     if (!thing.given()) {
-        // Power given to the grid by the plant as a whole is a measure of the grid as well.
-        const bool whole = ofTheGrid(limit.measure) || limit.measure == Measure::gridPower;
-        return whole ? std::optional(Place{}) : std::nullopt;
+        return ofTheGrid(limit.measure) ? std::optional(Place{}) : std::nullopt;
     }
     if (!thing.resolved()) {
         return std::nullopt;

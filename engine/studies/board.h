@@ -18,6 +18,10 @@ struct StoredRun {
     plant::Fingerprint fingerprint;
     std::shared_ptr<const results::Run> run;    ///< first resolution, with traces
     std::shared_ptr<const results::Run> repeat; ///< cells divided by two; nullptr: not yet run
+    std::optional<Finding> refused;             ///< why there is no model to run; then no run
+
+    /// Whether nothing more can be learned by running these inputs again.
+    bool complete() const { return refused.has_value() || (run != nullptr && repeat != nullptr); }
 };
 
 /// Where finished runs are kept. The engine knows no database; floors above implement this.
@@ -26,7 +30,8 @@ public:
     virtual ~RunStore() = default;
     virtual std::shared_ptr<const StoredRun> find(const plant::Fingerprint& fingerprint) const = 0;
     virtual void keep(std::shared_ptr<const StoredRun> stored) = 0;
-    virtual std::size_t count() const = 0;      ///< runs ever kept, for tests and the status line
+    virtual std::size_t count() const = 0;      ///< runs ever kept, for tests and the status line;
+                                                ///< a repeat added to a kept run is no new one
 };
 
 /// Keeps runs in memory, safe to use from several threads.
@@ -54,11 +59,27 @@ struct Cell {
     std::optional<Finding> reason;
 };
 
+/// Fingerprints that a cell had before its present one, the latest first.
+struct Earlier {
+    plant::Fingerprint fingerprint;
+    std::shared_ptr<const Earlier> before;
+    int depth = 0; ///< older ones behind this
+};
+
+/// What one cell would run: the study with its references resolved in the option's plant.
+struct CellInputs {
+    std::shared_ptr<const plant::Study> study;
+    plant::Fingerprint fingerprint;          ///< zero if blocked
+    std::optional<Finding> blocked;          ///< why this option cannot run this study
+    std::shared_ptr<const Earlier> earlier;
+};
+
 /// An immutable snapshot of a project with all its variants bound once; cheap to make after an
-/// edit, because unchanged variants are shared.
+/// edit, because unchanged variants and cells are shared.
 struct Snapshot {
     std::shared_ptr<const plant::Bound> bound;
     std::vector<std::shared_ptr<const plant::Variant>> variants; ///< [0] base, [1 + i] option i
+    std::vector<std::shared_ptr<const CellInputs>> cells;        ///< see `inputs`
 
     const plant::Project& project() const { return bound->project; }
     const plant::Variant& variant(int option) const {
@@ -66,6 +87,11 @@ struct Snapshot {
     }
     int options() const { return static_cast<int>(variants.size()) - 1; }
     int studies() const { return project().studies.size(); }
+    const CellInputs& inputs(int option, int study) const {
+        return *cells[static_cast<std::size_t>((option + 1) * studies() + study)];
+    }
+    const std::string& optionName(int option) const { return variant(option).name; }
+    const std::string& studyName(int study) const { return project().studies.name(study); }
 };
 std::shared_ptr<const Snapshot> makeSnapshot(plant::Bound bound,
                                              const Snapshot* previous = nullptr);
