@@ -40,6 +40,10 @@ struct Variant {
 };
 Variant variant(const Project& project, int option);
 
+/// A study with its references resolved in a variant's plant, whose positions may differ from the
+/// base's; findings name what the variant lacks (the study is not applicable there).
+Result<Study> studyIn(const Variant& variant, const Study& study);
+
 /// Puts keys in the order of the field tables (users' names keep theirs).
 Tree ordered(const Tree& project);
 

@@ -6,6 +6,7 @@
 #include <string>
 #include <string_view>
 #include <utility>
+#include <variant>
 #include <vector>
 
 namespace headroom::plant {
@@ -13,8 +14,16 @@ namespace headroom::plant {
 /// A path in a project: keys from the top, "plant", "chambers", "Surge shaft".
 using Path = std::vector<std::string>;
 
-std::string join(const Path& path);            ///< "plant/chambers/Surge shaft"
+/// "plant/chambers/Surge shaft"; a slash or backslash inside a name is written after a backslash.
+std::string join(const Path& path);
 Path split(std::string_view joined);
+
+/// A table that stands in a file of its own, row by row in the units of the project file.
+struct OuterTable {
+    int columns = 0;
+    std::vector<double> values; ///< rows × columns
+    int rows() const { return columns > 0 ? static_cast<int>(values.size()) / columns : 0; }
+};
 
 /// An immutable value tree: what a project file says, and what an option's patch says.
 ///
@@ -48,6 +57,11 @@ public:
     const Tree* find(std::string_view key) const;   ///< member of an object or nullptr
     const Tree* at(const Path& path) const;         ///< walks objects; nullptr if absent
 
+    /// An object that names an outer table, `{"csv": "shaft.csv"}`, carries what was read from it
+    /// along through every copy; it is never written and takes no part in comparisons.
+    Tree withOuterTable(std::shared_ptr<const OuterTable> table) const;
+    const OuterTable* outerTable() const;           ///< nullptr: none read
+
     /// This tree with `value` at `path`; missing objects on the way are made, a new key goes last.
     Tree with(const Path& path, Tree value) const;
     /// This tree without the member at `path`; itself if absent. `pruneEmpty` drops objects that
@@ -62,13 +76,23 @@ public:
 
 private:
     struct Node;
-    std::shared_ptr<const Node> node_;
-    explicit Tree(std::shared_ptr<const Node> node) : node_(std::move(node)) {}
+    using NodePtr = std::shared_ptr<const Node>;
+    explicit Tree(NodePtr node) : value_(std::move(node)) {}
+    static Tree objectWith(std::vector<Member> members, std::shared_ptr<const OuterTable> table);
+    const Node* node() const;
+    Tree withFrom(const Path& path, std::size_t depth, Tree value) const;
+    Tree withoutFrom(const Path& path, std::size_t depth, bool pruneEmpty) const;
+
+    std::variant<std::monostate, bool, double, NodePtr> value_; // numbers stand in line
 };
+
+/// Deep equality that lets members of objects stand in any order.
+bool sameContent(const Tree& a, const Tree& b);
 
 /// JSON Merge Patch (RFC 7396): `null` deletes, objects merge, all else replaces.
 Tree mergePatch(const Tree& target, const Tree& patch);
-/// The patch that leads from `before` to `after`: merge(before, patch) equals `after`.
+/// The patch that leads from `before` to `after`: merge(before, patch) has the content of `after`.
+/// `after` holds no null (a patch cannot say one).
 Tree makePatch(const Tree& before, const Tree& after);
 
 /// One value that differs between two trees.
