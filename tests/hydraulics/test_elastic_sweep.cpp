@@ -110,3 +110,41 @@ TEST_CASE("Sweep: envelopes widen alike in every build", "[waves][invariant]") {
         }
     }
 }
+
+TEST_CASE("Sweep: tracked extremes keep their first instant in every build", "[waves][invariant]") {
+    std::mt19937_64 random(9);
+    std::uniform_int_distribution<int> heads(0, 40); // whole numbers, so that ties occur
+    const std::size_t count = 101;
+    std::vector<std::vector<double>> history(60, std::vector<double>(count));
+    for (auto& instant : history) {
+        for (double& v : instant) {
+            v = heads(random);
+        }
+    }
+    for (const InstructionSet set : allSets) {
+        if (!available(set)) {
+            continue;
+        }
+        std::vector<double> high(count, -1e300), highAt(count, -9.0), low(count, 1e300),
+            lowAt(count, -9.0);
+        for (std::size_t n = 0; n < history.size(); ++n) {
+            const bool settled =
+                sweepLoops(set).track(history[n].data(), high.data(), highAt.data(), low.data(),
+                                      lowAt.data(), static_cast<double>(n), count);
+            bool expected = false;
+            for (std::size_t i = 0; i < count; ++i) {
+                std::size_t top = 0, bottom = 0;
+                for (std::size_t m = 1; m <= n; ++m) {
+                    top = history[m][i] > history[top][i] ? m : top;
+                    bottom = history[m][i] < history[bottom][i] ? m : bottom;
+                }
+                REQUIRE(high[i] == history[top][i]);
+                REQUIRE(highAt[i] == static_cast<double>(top));
+                REQUIRE(low[i] == history[bottom][i]);
+                REQUIRE(lowAt[i] == static_cast<double>(bottom));
+                expected = expected || top + 2 == n || bottom + 2 == n;
+            }
+            REQUIRE(settled == expected);
+        }
+    }
+}
