@@ -89,7 +89,7 @@ inline BranchFlow<double> solveBranch(const BranchLaw& law, double driving_m) {
 }
 
 /// False where a gaining branch (quadratic < 0) is beyond the half of its rising range, so that
-/// `solveBranch` answered with the tangent: flow speeds of a quarter of the wave speed.
+/// `solveBranch` answered with the tangent: flow speeds of half the wave speed.
 inline bool lawHolds(const BranchLaw& law, double driving_m) {
     const double b = law.linear_sm2;
     return law.quadratic_s2m5 >= 0.0
