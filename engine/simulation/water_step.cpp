@@ -1,0 +1,479 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "simulation/water_step.h"
+
+#include "hydraulics/branch.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace headroom::simulation {
+namespace {
+
+std::size_t at(int index) { return static_cast<std::size_t>(index); }
+
+constexpr int mostIterations = 12;
+constexpr int mostRobust = 200;
+constexpr double headTolerance = 1e-12;   // of the plant's head
+constexpr double smoothTolerance = 3e-8;  // where the next error is its square
+constexpr double unitTolerance = 1e-6;    // per unit, the same
+
+/// Solves the symmetric positive definite system in place (lower triangle of `matrix`, row by
+/// row); false if a pivot is not positive.
+bool choleskySolve(std::vector<double>& matrix, std::vector<double>& right, std::size_t n) {
+    for (std::size_t j = 0; j < n; ++j) {
+        double pivot = matrix[j * n + j];
+        for (std::size_t k = 0; k < j; ++k) {
+            pivot -= matrix[j * n + k] * matrix[j * n + k];
+        }
+        if (!(pivot > 0.0)) {
+            return false;
+        }
+        const double root = std::sqrt(pivot);
+        matrix[j * n + j] = root;
+        for (std::size_t i = j + 1; i < n; ++i) {
+            double sum = matrix[i * n + j];
+            for (std::size_t k = 0; k < j; ++k) {
+                sum -= matrix[i * n + k] * matrix[j * n + k];
+            }
+            matrix[i * n + j] = sum / root;
+        }
+    }
+    for (std::size_t i = 0; i < n; ++i) {
+        for (std::size_t k = 0; k < i; ++k) {
+            right[i] -= matrix[i * n + k] * right[k];
+        }
+        right[i] /= matrix[i * n + i];
+    }
+    for (std::size_t i = n; i-- > 0;) {
+        for (std::size_t k = i + 1; k < n; ++k) {
+            right[i] -= matrix[k * n + i] * right[k];
+        }
+        right[i] /= matrix[i * n + i];
+    }
+    return true;
+}
+
+} // namespace
+
+WaterStep::WaterStep(const Model& model) : model_(model) {
+    std::size_t most = 1;
+    for (const Cluster& cluster : model.clusters) {
+        most = std::max(most, cluster.nodes.size());
+    }
+    residual_.resize(most);
+    change_.resize(most);
+    trial_.resize(most);
+    sizes_.resize(most);
+    matrix_.resize(most * most);
+}
+
+double WaterStep::drop(const State& state, const UnitRow& unit) const {
+    return state.head_m[at(unit.inlet)] - state.head_m[at(unit.outlet)];
+}
+
+void WaterStep::prepareBranches(State& state, double step_s, bool backwardEuler) {
+    for (std::size_t i = 0; i < model_.branches.size(); ++i) {
+        const BranchRow& row = model_.branches[i];
+        const ConduitRow& conduit = model_.conduits[at(row.conduit)];
+        const EndLoss& from = conduit.geometry.from;
+        const EndLoss& to = conduit.geometry.to;
+        BranchState& branch = state.branches[i];
+        if (row.kind == BranchKind::rigid) {
+            const double inertia = conduit.inertia_s2m2 / step_s;
+            const double expected =
+                backwardEuler ? branch.now_m3s : 2.0 * branch.now_m3s - branch.before_m3s;
+            const double friction = conduit.quadratic_s2m5(expected);
+            branch.w0_m = backwardEuler
+                              ? inertia * branch.now_m3s
+                              : inertia * (2.0 * branch.now_m3s - 0.5 * branch.before_m3s);
+            branch.linear_sm2 = (backwardEuler ? 1.0 : 1.5) * inertia + conduit.linear_sm2;
+            branch.forward_s2m5 =
+                friction + conduit.forward_s2m5 + from.leaving_s2m5 + to.arriving_s2m5;
+            branch.reverse_s2m5 =
+                friction + conduit.reverse_s2m5 + from.arriving_s2m5 + to.leaving_s2m5;
+            continue;
+        }
+        const bool start = row.kind == BranchKind::elasticStart;
+        const auto& law = start ? model_.rows.startLaw(state.elastic, at(conduit.row))
+                                : model_.rows.endLaw(state.elastic, at(conduit.row));
+        branch.w0_m = start ? -law.arriving_m : law.arriving_m;
+        branch.linear_sm2 = law.linear_sm2;
+        branch.forward_s2m5 =
+            law.forward_s2m5 + (start ? from.leaving_s2m5 : to.arriving_s2m5);
+        branch.reverse_s2m5 =
+            law.reverse_s2m5 + (start ? from.arriving_s2m5 : to.leaving_s2m5);
+    }
+}
+
+void WaterStep::prepareUnits(State& state, const std::vector<UnitStep>& units) {
+    for (std::size_t i = 0; i < model_.units.size(); ++i) {
+        prepareUnit(model_.units[i], state.machines[i], units[i], state.work[i]);
+    }
+}
+
+void WaterStep::guessHeads(State& state, const Cluster& cluster) {
+    for (const int node : cluster.nodes) {
+        const double now = state.head_m[at(node)];
+        const double before = state.headBefore_m[at(node)];
+        state.head_m[at(node)] = euler_ ? now : 2.0 * now - before;
+        state.headBefore_m[at(node)] = now;
+    }
+}
+
+void WaterStep::addFlow(int from, int to, double flow, double slope) {
+    // Unknown nodes have slots; the others' rows do not exist.
+    const int a = from >= 0 ? model_.nodes[at(from)].slot : -1;
+    const int b = to >= 0 ? model_.nodes[at(to)].slot : -1;
+    if (a >= 0) {
+        residual_[at(a)] -= flow;
+        sizes_[at(a)] += std::fabs(flow);
+        matrix_[at(a) * size_ + at(a)] += slope;
+    }
+    if (b >= 0) {
+        residual_[at(b)] += flow;
+        sizes_[at(b)] += std::fabs(flow);
+        matrix_[at(b) * size_ + at(b)] += slope;
+    }
+    if (a >= 0 && b >= 0) {
+        matrix_[at(std::max(a, b)) * size_ + at(std::min(a, b))] -= slope;
+    }
+}
+
+double WaterStep::addBranch(State& state, int index) {
+    const BranchRow& row = model_.branches[at(index)];
+    BranchState& branch = state.branches[at(index)];
+    const double from = row.from >= 0 ? state.head_m[at(row.from)] : 0.0;
+    const double to = row.to >= 0 ? state.head_m[at(row.to)] : 0.0;
+    const double w = branch.w0_m + from - to;
+    const double quadratic = w < 0.0 ? branch.reverse_s2m5 : branch.forward_s2m5;
+    const auto solved = hydraulics::solveBranch(branch.linear_sm2, quadratic, w);
+    branch.flow_m3s = solved.flow_m3s;
+    branch.slope_m2s = solved.slope_m2s;
+    addFlow(row.from, row.to, solved.flow_m3s, solved.slope_m2s);
+    return solved.flow_m3s;
+}
+
+double WaterStep::addChamber(State& state, int index) {
+    const ChamberRow& row = model_.chambers[at(index)];
+    ChamberState& chamber = state.chambers[at(index)];
+    double head = state.head_m[at(row.node)];
+    if (row.tunnelEnd >= 0) {
+        const int conduit = row.tunnelEnd / 2;
+        const int branch = model_.startEnd(row.tunnelEnd) ? model_.startBranch[at(conduit)]
+                                                          : model_.endBranch[at(conduit)];
+        const double flow = state.branches[at(branch)].flow_m3s;
+        head -= row.velocityShare_s2m5 * flow * flow;
+    }
+    const auto law = hydraulics::chamberBranch(
+        row.table, row.throttle, {chamber.volume_m3, chamber.flow_m3s, chamber.next_m3s, step_});
+    const auto solved = law.flow(head);
+    chamber.next_m3s = solved.flow_m3s;
+    chamber.slope_m2s = solved.slope_m2s;
+    addFlow(row.node, -1, solved.flow_m3s, solved.slope_m2s);
+    return solved.flow_m3s;
+}
+
+/// Residuals and Jacobian of the cluster at the present heads.
+bool WaterStep::evaluate(State& state, const Cluster& cluster, bool alone) {
+    size_ = cluster.nodes.size();
+    std::fill_n(residual_.begin(), size_, 0.0);
+    std::fill_n(sizes_.begin(), size_, 0.0);
+    std::fill_n(matrix_.begin(), size_ * size_, 0.0);
+    for (const int branch : cluster.branches) {
+        addBranch(state, branch);
+    }
+    for (const int chamber : cluster.chambers) {
+        addChamber(state, chamber);
+    }
+    for (const int node : cluster.nodes) {
+        const double storage = model_.nodes[at(node)].storage_m2;
+        if (storage > 0.0) { // elastic storage of short elements, trapezoid
+            const double slope = 2.0 * storage / step_;
+            const double flow = slope * (state.head_m[at(node)] - state.headBefore_m[at(node)]) -
+                                state.storageFlow_m3s[at(node)];
+            addFlow(node, -1, flow, slope);
+        }
+    }
+    bool answered = true;
+    for (const int unit : cluster.units) {
+        const UnitRow& row = model_.units[at(unit)];
+        MachineWork& work = state.work[at(unit)];
+        const double head = drop(state, row);
+        answered = (alone ? solveAlone(model_, row, head, work)
+                          : linearise(model_, row, head, work)) && answered;
+        addFlow(row.inlet, row.outlet, work.flow_m3s, work.slope_m2s);
+    }
+    return answered;
+}
+
+/// One Newton correction of heads, branch flows and units; false if the system is not solvable.
+bool WaterStep::correctHeads(State& state, const Cluster& cluster, double share) {
+    std::copy_n(residual_.begin(), size_, change_.begin());
+    if (size_ == 1) {
+        if (!(matrix_[0] > 0.0)) {
+            return false;
+        }
+        change_[0] /= matrix_[0];
+    } else if (size_ > 1 && !choleskySolve(matrix_, change_, size_)) {
+        return false;
+    }
+    worstChange_ = worstMove_ = 0.0;
+    for (std::size_t i = 0; i < size_; ++i) {
+        change_[i] *= share;
+        if (!std::isfinite(change_[i])) {
+            return false;
+        }
+        worstChange_ = std::max(worstChange_, std::fabs(change_[i]));
+        state.head_m[at(cluster.nodes[i])] += change_[i];
+    }
+    const auto moved = [&](int node) {
+        const int slot = node >= 0 ? model_.nodes[at(node)].slot : -1;
+        return slot >= 0 ? change_[at(slot)] : 0.0;
+    };
+    for (const int index : cluster.branches) {
+        const BranchRow& row = model_.branches[at(index)];
+        BranchState& branch = state.branches[at(index)];
+        branch.flow_m3s += branch.slope_m2s * (moved(row.from) - moved(row.to));
+    }
+    for (const int index : cluster.chambers) {
+        ChamberState& chamber = state.chambers[at(index)];
+        chamber.next_m3s += chamber.slope_m2s * moved(model_.chambers[at(index)].node);
+    }
+    for (const int index : cluster.units) {
+        const UnitRow& row = model_.units[at(index)];
+        MachineWork& work = state.work[at(index)];
+        correct(row, moved(row.inlet) - moved(row.outlet), work);
+        worstMove_ = std::max(worstMove_, work.moved);
+    }
+    return true;
+}
+
+bool WaterStep::solveCluster(State& state, const Cluster& cluster) {
+    // A throttle is sharply bent at rest; elsewhere the next Newton error is the square of a move.
+    const double tolerance =
+        (cluster.chambers.empty() ? smoothTolerance : headTolerance) * model_.headScale_m;
+    for (int count = 0; count < mostIterations; ++count) {
+        if (!evaluate(state, cluster, false) || !correctHeads(state, cluster, 1.0)) {
+            return false;
+        }
+        if (worstChange_ <= tolerance && worstMove_ <= unitTolerance) {
+            return std::isfinite(worstMove_);
+        }
+    }
+    return false;
+}
+
+/// Newton with step halving on the sum of residuals, each unit solved alone for every trial.
+bool WaterStep::solveRobustly(State& state, const Cluster& cluster) {
+    const auto total = [&] {
+        double sum = 0.0;
+        for (std::size_t i = 0; i < size_; ++i) {
+            sum += std::fabs(residual_[i]);
+        }
+        return sum;
+    };
+    for (std::size_t i = 0; i < cluster.nodes.size(); ++i) {
+        state.head_m[at(cluster.nodes[i])] = state.headBefore_m[at(cluster.nodes[i])];
+    }
+    if (!evaluate(state, cluster, true)) {
+        return false;
+    }
+    for (int count = 0; count < mostRobust; ++count) {
+        const double before = total();
+        std::copy_n(residual_.begin(), size_, change_.begin());
+        if (size_ > 0 && !choleskySolve(matrix_, change_, size_)) {
+            return false;
+        }
+        std::copy_n(change_.begin(), size_, trial_.begin());
+        double share = 1.0, worst = 0.0;
+        for (int halving = 0; halving < 12; ++halving) {
+            worst = 0.0;
+            for (std::size_t i = 0; i < size_; ++i) {
+                state.head_m[at(cluster.nodes[i])] += share * trial_[i];
+                worst = std::max(worst, std::fabs(share * trial_[i]));
+            }
+            if (!evaluate(state, cluster, true)) {
+                return false;
+            }
+            if (total() <= before || worst <= headTolerance * model_.headScale_m) {
+                break;
+            }
+            for (std::size_t i = 0; i < size_; ++i) {
+                state.head_m[at(cluster.nodes[i])] -= share * trial_[i];
+            }
+            share *= 0.5;
+        }
+        if (!std::isfinite(total())) {
+            return false;
+        }
+        if (worst <= 10.0 * headTolerance * model_.headScale_m) {
+            return true;
+        }
+    }
+    return false;
+}
+
+void WaterStep::setFailure(State& state, std::size_t index) {
+    const Cluster& cluster = model_.clusters[index];
+    failure_.cluster = static_cast<int>(index);
+    failure_.residuals.clear();
+    evaluate(state, cluster, false);
+    for (std::size_t i = 0; i < cluster.nodes.size(); ++i) {
+        failure_.residuals.emplace_back(model_.nodePath[at(cluster.nodes[i])], residual_[i]);
+    }
+    std::sort(failure_.residuals.begin(), failure_.residuals.end(), [](const auto& a, const auto& b) {
+        return std::fabs(a.second) > std::fabs(b.second);
+    });
+    constexpr std::size_t named = 3;
+    failure_.residuals.resize(std::min(failure_.residuals.size(), named));
+    failure_.where = cluster.nodes.empty() ? std::string("plant/units")
+                                           : model_.nodePath[at(cluster.nodes.front())];
+}
+
+/// One discharge of each node is set to the sum of the others, so that Newton's remainder ends in
+/// a head and never in water.
+void WaterStep::closeBalance(State& state, const Cluster& cluster) {
+    for (const int node : cluster.nodes) {
+        double sum = 0.0;       // into the node
+        int closing = -1;       // an elastic end
+        for (const int index : cluster.branches) {
+            const BranchRow& row = model_.branches[at(index)];
+            const double flow = state.branches[at(index)].flow_m3s;
+            if (row.to == node || row.from == node) {
+                sum += row.to == node ? flow : 0.0;
+                sum -= row.from == node ? flow : 0.0;
+                closing = row.kind == BranchKind::rigid ? closing : index;
+            }
+        }
+        for (const int unit : cluster.units) {
+            sum += model_.units[at(unit)].outlet == node ? state.work[at(unit)].flow_m3s : 0.0;
+            sum -= model_.units[at(unit)].inlet == node ? state.work[at(unit)].flow_m3s : 0.0;
+        }
+        int chamber = -1;
+        for (const int index : cluster.chambers) {
+            if (model_.chambers[at(index)].node == node) {
+                sum -= state.chambers[at(index)].next_m3s;
+                chamber = index;
+            }
+        }
+        const double storage = model_.nodes[at(node)].storage_m2;
+        if (storage > 0.0) {
+            sum -= 2.0 * storage / step_ *
+                       (state.head_m[at(node)] - state.headBefore_m[at(node)]) -
+                   state.storageFlow_m3s[at(node)];
+        }
+        if (chamber >= 0) {
+            state.chambers[at(chamber)].next_m3s += sum;
+        } else if (closing >= 0) {
+            const bool into = model_.branches[at(closing)].to == node;
+            state.branches[at(closing)].flow_m3s -= into ? sum : -sum;
+        }
+    }
+}
+
+bool WaterStep::solve(State& state, const std::vector<UnitStep>& units, double step_s,
+                      bool backwardEuler) {
+    step_ = step_s;
+    euler_ = backwardEuler;
+    prepareBranches(state, step_s, backwardEuler);
+    prepareUnits(state, units);
+    for (std::size_t i = 0; i < model_.clusters.size(); ++i) {
+        const Cluster& cluster = model_.clusters[i];
+        guessHeads(state, cluster);
+        if (!solveCluster(state, cluster)) {
+            prepareUnits(state, units);
+            if (!solveRobustly(state, cluster)) {
+                setFailure(state, i);
+                return false;
+            }
+        }
+        closeBalance(state, cluster);
+    }
+    return true;
+}
+
+/// Heads at the ends follow from the discharges by the conduits' own laws.
+void WaterStep::handBack(State& state) {
+    for (std::size_t i = 0; i < model_.conduits.size(); ++i) {
+        const ConduitRow& conduit = model_.conduits[i];
+        const double start = state.branches[at(model_.startBranch[i])].flow_m3s;
+        const double end = state.branches[at(model_.endBranch[i])].flow_m3s;
+        state.startFlow_m3s[i] = start;
+        state.endFlow_m3s[i] = end;
+        if (conduit.kind != ConduitKind::elastic) {
+            const EndLoss& from = conduit.geometry.from;
+            const EndLoss& to = conduit.geometry.to;
+            const double square = start * std::fabs(start);
+            state.startHead_m[i] = state.head_m[at(conduit.from)] -
+                                   (start >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
+            state.endHead_m[i] = state.head_m[at(conduit.to)] +
+                                 (end >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
+            continue;
+        }
+        const auto row = at(conduit.row);
+        const auto& a = model_.rows.startLaw(state.elastic, row);
+        const auto& b = model_.rows.endLaw(state.elastic, row);
+        const double aQuadratic = start >= 0.0 ? a.forward_s2m5 : a.reverse_s2m5;
+        const double bQuadratic = end >= 0.0 ? b.forward_s2m5 : b.reverse_s2m5;
+        state.startHead_m[i] =
+            a.arriving_m + (a.linear_sm2 + aQuadratic * std::fabs(start)) * start;
+        state.endHead_m[i] = b.arriving_m - (b.linear_sm2 + bQuadratic * std::fabs(end)) * end;
+        model_.rows.setStart(state.elastic, row, state.startHead_m[i], start);
+        model_.rows.setEnd(state.elastic, row, state.endHead_m[i], end);
+    }
+}
+
+void WaterStep::accept(State& state, const std::vector<UnitStep>& units, double step_s) {
+    for (std::size_t i = 0; i < model_.nodes.size(); ++i) {
+        const double storage = model_.nodes[i].storage_m2;
+        if (storage > 0.0 && !model_.nodes[i].known()) {
+            state.storageFlow_m3s[i] = 2.0 * storage / step_s *
+                                           (state.head_m[i] - state.headBefore_m[i]) -
+                                       state.storageFlow_m3s[i];
+        }
+    }
+    for (BranchState& branch : state.branches) {
+        branch.before_m3s = branch.now_m3s;
+        branch.now_m3s = branch.flow_m3s;
+    }
+    for (std::size_t i = 0; i < model_.chambers.size(); ++i) {
+        ChamberState& chamber = state.chambers[i];
+        chamber.volume_m3 += 0.5 * step_s * (chamber.flow_m3s + chamber.next_m3s);
+        chamber.flow_m3s = chamber.next_m3s;
+        chamber.level_m = model_.chambers[i].table.level_m(chamber.volume_m3);
+    }
+    for (std::size_t i = 0; i < model_.units.size(); ++i) {
+        acceptUnit(model_, model_.units[i], units[i], drop(state, model_.units[i]), state.work[i],
+                   state.machines[i]);
+    }
+    handBack(state);
+}
+
+void WaterStep::acceptJump(State& state, const std::vector<UnitStep>& units) {
+    for (std::size_t i = 0; i < model_.nodes.size(); ++i) {
+        if (model_.nodes[i].storage_m2 > 0.0 && !model_.nodes[i].known()) {
+            state.storageFlow_m3s[i] = 2.0 * model_.nodes[i].storage_m2 / step_ *
+                                           (state.head_m[i] - state.headBefore_m[i]) -
+                                       state.storageFlow_m3s[i];
+        }
+        state.headBefore_m[i] = state.head_m[i];
+    }
+    for (BranchState& branch : state.branches) {
+        branch.before_m3s = branch.now_m3s = branch.flow_m3s;
+    }
+    for (ChamberState& chamber : state.chambers) {
+        chamber.flow_m3s = chamber.next_m3s;
+    }
+    for (std::size_t i = 0; i < model_.units.size(); ++i) {
+        MachineState& machine = state.machines[i];
+        const double speedBefore = machine.speedBefore;
+        acceptUnit(model_, model_.units[i], units[i], drop(state, model_.units[i]), state.work[i],
+                   machine);
+        machine.flowBefore_m3s = machine.flow_m3s;
+        machine.xBefore = machine.x;
+        machine.speedBefore = speedBefore;
+    }
+    handBack(state);
+}
+
+} // namespace headroom::simulation
