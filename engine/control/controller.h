@@ -16,16 +16,16 @@ struct LoadReference {
 /// called each step with values extrapolated to the new time; sampled ones at their instants.
 struct Measured {
     double time_s = 0.0;
-    double step_s = 0.0;          ///< since the last call; 0 at the first
-    double speed_pu = 1.0;        ///< of rated speed
-    double frequency_pu = 1.0;    ///< of the grid, of nominal
-    double opening_pu = 0.0;      ///< servo stroke, 0…1
-    double power_pu = 0.0;        ///< given to the grid, of rated shaft power
-    double inletHead_m = 0.0;     ///< piezometric level at the unit's inlet
-    double chamberLevel_m = 0.0;  ///< of the chamber that guards the unit, if any
+    double step_s = 0.0;         ///< since the last call; 0 at the first
+    double speed_pu = 1.0;       ///< of rated speed
+    double frequency_pu = 1.0;   ///< of the grid, of nominal
+    double opening_pu = 0.0;     ///< servo stroke, 0…1
+    double power_pu = 0.0;       ///< given to the grid, of rated shaft power
+    double inletHead_m = 0.0;    ///< piezometric level at the unit's inlet
+    double chamberLevel_m = 0.0; ///< of the chamber that guards the unit, if any
     LoadReference reference;
     double speedReference_pu = 1.0;
-    bool onGrid = true;           ///< breaker closed
+    bool onGrid = true; ///< breaker closed
 };
 
 /// What a controller asks for.
@@ -39,8 +39,9 @@ public:
 
     /// The order at `measured.time_s`. Advances the controller by `measured.step_s`.
     virtual Order decide(const Measured& measured) = 0;
-    /// Sets the state that gives order `opening_pu` for ever under `measured`, whose reference is
-    /// taken as a hint; returns the load reference that holds this rest.
+    /// Sets the state whose order is `measured.opening_pu` for as long as nothing else changes, and
+    /// returns the load reference that holds it. `measured.reference` is not read. The opening must
+    /// lie within the controller's own limits.
     virtual LoadReference rest(const Measured& measured) = 0;
     /// A copy with its state.
     virtual std::unique_ptr<Controller> clone() const = 0;

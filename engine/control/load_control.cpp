@@ -46,8 +46,7 @@ bool LoadControl::synchronised(double step_s, double speed_pu, double grid_pu) {
     return inside && inBand_s_ >= spec_.synchroniseHold_s - rounding_s;
 }
 
-LoadControl::Answer LoadControl::at(double time_s, double step_s, double speed_pu,
-                                    double grid_pu) {
+LoadControl::Answer LoadControl::at(double time_s, double step_s, double speed_pu, double grid_pu) {
     Answer answer;
     const bool ready = onGrid_ || synchronised(step_s, speed_pu, grid_pu);
     while (!waiting_.empty() && waiting_.front().time_s <= time_s) {

@@ -17,8 +17,8 @@ struct LoadOrder {
 
 struct LoadControlSpec {
     std::optional<double> reloadNotBefore_s = {}; ///< after a trip; absent: no interlock
-    double synchroniseWithin_pu = 0.005;     ///< of rated speed; common practice, no source
-    double synchroniseHold_s = 1.0;          ///< inside the band for this long; common practice, no source
+    double synchroniseWithin_pu = 0.005;          ///< of rated speed; common practice, no source
+    double synchroniseHold_s = 1.0; ///< inside the band for this long; common practice, no source
 };
 
 /// The load reference of one unit: ramps, reload interlock, synchronising. A load order that comes
@@ -33,8 +33,8 @@ public:
     /// What the unit's controller and breaker are told at one instant.
     struct Answer {
         LoadReference reference;
-        bool closeBreaker = false;  ///< at this instant the unit may join the grid
-        bool heldBack = false;      ///< a load order waits for the interlock or the speed
+        bool closeBreaker = false; ///< at this instant the unit may join the grid
+        bool heldBack = false;     ///< a load order waits for the interlock or the speed
     };
     /// The reference at `time_s`, to be asked in rising time, once per step.
     /// @param step_s   since the last question; counts towards the synchronising time

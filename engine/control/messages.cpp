@@ -7,8 +7,8 @@ namespace headroom::control {
 
 std::span<const Message* const> messages() {
     static constexpr std::array<const Message*, 13> all{
-        &servoTimeNotPositive, &servoNegative,    &servoStages,       &servoRange,
-        &servoCushion,         &governorNegative, &governorNoAction,  &governorNoFilter,
+        &servoTimeNotPositive, &servoNegative,     &servoStages,          &servoRange,
+        &servoCushion,         &governorNegative,  &governorNoAction,     &governorNoFilter,
         &governorLimit,        &governorNotNumber, &temporaryDroopValues, &noSeriesForm,
         &noIntegralForm};
     return all;

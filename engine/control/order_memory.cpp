@@ -56,7 +56,9 @@ void OrderMemory::forget(double time_s) {
     }
 }
 
-double OrderMemory::last() const { return knot(count_ - 1).order; }
+double OrderMemory::last() const {
+    return knot(count_ - 1).order;
+}
 
 double OrderMemory::after(double time_s) const {
     std::size_t left = 0;

@@ -17,7 +17,9 @@ Finding finding(const Message& message, const std::string& subject,
     return {.message = &message, .subject = subject, .arguments = std::move(arguments)};
 }
 
-Amount pure(double value) { return amount(Quantity::factor, value); }
+Amount pure(double value) {
+    return amount(Quantity::factor, value);
+}
 
 void requireNotNegative(Findings& found, const std::string& subject, const std::string& name,
                         Amount value) {
@@ -39,8 +41,8 @@ void checkGains(Findings& found, const PidGains& gains, double filter_s, const s
         found.push_back(finding(governorNoAction, subject, {{"mode", mode}}));
     }
     if (gains.kd_s > 0.0 && !(filter_s > 0.0)) {
-        found.push_back(finding(governorNoFilter, subject,
-                                {{"value", amount(Quantity::time, filter_s)}}));
+        found.push_back(
+            finding(governorNoFilter, subject, {{"value", amount(Quantity::time, filter_s)}}));
     }
 }
 
@@ -71,9 +73,9 @@ Result<PidGovernor> PidGovernor::make(const PidSpec& spec, const std::string& su
                                 {{"value", amount(Quantity::perUnit, spec.openingLimit_pu)}}));
     }
     if (spec.windUpTime_s && !(*spec.windUpTime_s > 0.0)) {
-        found.push_back(finding(governorNegative, subject,
-                                {{"name", "anti-windup time"},
-                                 {"value", amount(Quantity::time, *spec.windUpTime_s)}}));
+        found.push_back(finding(
+            governorNegative, subject,
+            {{"name", "anti-windup time"}, {"value", amount(Quantity::time, *spec.windUpTime_s)}}));
     }
     if (!found.empty()) {
         return found;
@@ -87,13 +89,17 @@ std::unique_ptr<Controller> PidGovernor::clone() const {
     return std::make_unique<PidGovernor>(*this);
 }
 
-double PidGovernor::shortestTime_s() const { return spec_.derivativeFilter_s; }
+double PidGovernor::shortestTime_s() const {
+    return spec_.derivativeFilter_s;
+}
 
 const PidGains& PidGovernor::gains(bool onGrid) const {
     return onGrid || !spec_.noLoad ? spec_.gains : *spec_.noLoad;
 }
 
-double PidGovernor::droop(bool onGrid) const { return onGrid ? spec_.droop : spec_.noLoadDroop; }
+double PidGovernor::droop(bool onGrid) const {
+    return onGrid ? spec_.droop : spec_.noLoadDroop;
+}
 
 double PidGovernor::deviation(const Measured& measured) const {
     const double plain = measured.speedReference_pu - measured.speed_pu;
@@ -102,8 +108,8 @@ double PidGovernor::deviation(const Measured& measured) const {
 
 LoadReference PidGovernor::rest(const Measured& measured) {
     // With e = 0 everything that integrates stands still: reference = feedback − Δn/b_p.
-    const double shift = droop(measured.onGrid) > 0.0
-                             ? deviation(measured) / droop(measured.onGrid) : 0.0;
+    const double shift =
+        droop(measured.onGrid) > 0.0 ? deviation(measured) / droop(measured.onGrid) : 0.0;
     LoadReference reference{measured.opening_pu, measured.power_pu};
     (spec_.droopOn == DroopOn::opening ? reference.opening_pu : reference.power_pu) -= shift;
     onGrid_ = measured.onGrid;

@@ -14,22 +14,23 @@ enum class DroopOn { opening, power };
 
 struct PidSpec {
     PidGains gains = {};
-    std::optional<PidGains> noLoad = {};  ///< off the grid; absent: the same gains
-    double droop = 0.04;             ///< b_p, share of frequency for full opening or power; on the grid
-    double noLoadDroop = 0.0;        ///< off the grid: 0 holds the speed exactly
+    std::optional<PidGains> noLoad = {}; ///< off the grid; absent: the same gains
+    double droop = 0.04;      ///< b_p, share of frequency for full opening or power; on the grid
+    double noLoadDroop = 0.0; ///< off the grid: 0 holds the speed exactly
     DroopOn droopOn = DroopOn::opening;
     double derivativeFilter_s = 0.05; ///< T_f, > 0 where K_d is not 0
-    double deadBand_pu = 0.0;        ///< half width of speed deviation without action, on the grid
-    double samplePeriod_s = 0.0;     ///< 0: continuous
-    double openingLimit_pu = 1.0;    ///< opening limiter
-    double feedForward = 1.0;        ///< share of the load reference sent straight to the order
+    double deadBand_pu = 0.0;         ///< half width of speed deviation without action, on the grid
+    double samplePeriod_s = 0.0;      ///< 0: continuous
+    double openingLimit_pu = 1.0;     ///< opening limiter
+    double feedForward = 1.0;         ///< share of the load reference sent straight to the order
     std::optional<double> windUpTime_s = {}; ///< tracking time of the anti-windup; default K_p/K_i
 };
 
 /// PID speed governor with permanent droop:
 ///
 ///     e = n_ref − n + b_p·(reference − feedback)
-///     order = feed-forward + K_p·e + ∫(K_i·e + (limited − order)/T_t) dt + K_d·s/(1+T_f s)·(n_ref − n)
+///     order = feed-forward + K_p·e + ∫(K_i·e + (limited − order)/T_t) dt
+///             + K_d·s/(1+T_f s)·(n_ref − n)
 ///
 /// The feedback of the droop is the order itself (droop on opening) or the measured power.
 /// Integrals by the trapezoid, implicit in its own output; the derivative filter is exact for a
@@ -66,7 +67,7 @@ private:
     double error_ = 0.0;     ///< e at the last call
     double integral_ = 0.0;  ///< share of opening
     double filtered_ = 0.0;  ///< state of the derivative filter
-    double windUp_1s_ = 0.0;  ///< (limited − order)/T_t at the last call
+    double windUp_1s_ = 0.0; ///< (limited − order)/T_t at the last call
 };
 
 } // namespace headroom::control

@@ -18,14 +18,18 @@ Finding finding(const Message& message, const std::string& subject,
     return {.message = &message, .subject = subject, .arguments = std::move(arguments)};
 }
 
-Amount share(double value) { return amount(Quantity::perUnit, value); }
-Amount seconds(double value) { return amount(Quantity::time, value); }
+Amount share(double value) {
+    return amount(Quantity::perUnit, value);
+}
+Amount seconds(double value) {
+    return amount(Quantity::time, value);
+}
 
 void requirePositive(Findings& found, const std::string& subject, const std::string& name,
                      double time_s) {
     if (!(time_s > 0.0) || !std::isfinite(time_s)) {
-        found.push_back(finding(servoTimeNotPositive, subject,
-                                {{"name", name}, {"value", seconds(time_s)}}));
+        found.push_back(
+            finding(servoTimeNotPositive, subject, {{"name", name}, {"value", seconds(time_s)}}));
     }
 }
 
@@ -48,9 +52,9 @@ void checkStages(Findings& found, const ServoSpec& spec, const std::string& subj
         const bool last = i + 1 == spec.closing.size();
         const bool falls = stage.downTo_pu < above && stage.downTo_pu >= 0.0;
         if (!falls || (last && stage.downTo_pu != 0.0)) {
-            found.push_back(finding(servoStages, subject,
-                                    {{"row", static_cast<std::int64_t>(i + 1)},
-                                     {"stroke", share(stage.downTo_pu)}}));
+            found.push_back(finding(
+                servoStages, subject,
+                {{"row", static_cast<std::int64_t>(i + 1)}, {"stroke", share(stage.downTo_pu)}}));
         }
         above = stage.downTo_pu;
     }
@@ -145,15 +149,18 @@ Findings check(const ServoSpec& spec, const std::string& subject) {
     Findings found;
     requirePositive(found, subject, "opening time", spec.opening_s);
     if (!(spec.lowest_pu >= 0.0 && spec.highest_pu > spec.lowest_pu && spec.highest_pu <= 1.0)) {
-        found.push_back(finding(servoRange, subject, {{"least", share(spec.lowest_pu)},
-                                                      {"most", share(spec.highest_pu)}}));
+        found.push_back(
+            finding(servoRange, subject,
+                    {{"least", share(spec.lowest_pu)}, {"most", share(spec.highest_pu)}}));
     }
     checkStages(found, spec, subject);
     const bool none = spec.cushionBelow_pu == 0.0;
-    if (!none && !(spec.cushionBelow_pu > 0.0 && spec.cushionBelow_pu < 1.0 &&
-                   spec.cushion_s > 0.0 && std::isfinite(spec.cushion_s))) {
-        found.push_back(finding(servoCushion, subject, {{"stroke", share(spec.cushionBelow_pu)},
-                                                        {"time", seconds(spec.cushion_s)}}));
+    if (!none
+        && !(spec.cushionBelow_pu > 0.0 && spec.cushionBelow_pu < 1.0 && spec.cushion_s > 0.0
+             && std::isfinite(spec.cushion_s))) {
+        found.push_back(
+            finding(servoCushion, subject,
+                    {{"stroke", share(spec.cushionBelow_pu)}, {"time", seconds(spec.cushion_s)}}));
     }
     requireNotNegative(found, subject, "dead time", spec.deadTime_s);
     requireNotNegative(found, subject, "lag", spec.lag_s);
@@ -178,9 +185,8 @@ void advance(const ServoSpec& spec, ServoState& state, const ServoOrder& order, 
     state.orders.push(end_s, order.atEnd_pu);
     const double before = state.opening_pu;
     double y = before;
-    const double tripped_s = state.emergency_s
-                                 ? *state.emergency_s + spec.emergencyDeadTime_s
-                                 : std::numeric_limits<double>::infinity();
+    const double tripped_s = state.emergency_s ? *state.emergency_s + spec.emergencyDeadTime_s
+                                               : std::numeric_limits<double>::infinity();
     // Pieces between knots of the felt order, and the instant the emergency path takes over.
     for (double t = time_s; t < end_s && !state.stuck;) {
         const bool emergency = t >= tripped_s;

@@ -18,18 +18,22 @@ struct ClosingStage {
 };
 
 struct ServoSpec {
-    double opening_s = 10.0;            ///< full stroke
-    std::vector<ClosingStage> closing;  ///< from the open end down; at least one
-    double cushionBelow_pu = 0.0;       ///< stroke below which the cushion acts; 0: none
-    double cushion_s = 0.0;             ///< time from `cushionBelow_pu` to the closed end
+    double opening_s = 10.0;           ///< full stroke
+    std::vector<ClosingStage> closing; ///< from the open end down; at least one
+    double cushionBelow_pu = 0.0;      ///< stroke below which the cushion acts; 0: none
+    double cushion_s = 0.0;            ///< time from `cushionBelow_pu` to the closed end
     double deadTime_s = 0.0;
-    double lag_s = 0.1;                 ///< T_y of ẏ = (order − y)/T_y; 0: follows at once
+    double lag_s = 0.1; ///< T_y of ẏ = (order − y)/T_y; 0: follows at once
     double lowest_pu = 0.0, highest_pu = 1.0;
-    std::optional<double> emergencyClosing_s = {}; ///< full stroke on the emergency path; else as closing
+    std::optional<double> emergencyClosing_s =
+        {}; ///< full stroke on the emergency path; else as closing
     double emergencyDeadTime_s = 0.0;
 
     /// Closing rate [1/s], ≥ 0, just below stroke `y`, and the stroke where it next changes.
-    struct Rate { double rate_1s = 0.0; double until_pu = 0.0; };
+    struct Rate {
+        double rate_1s = 0.0;
+        double until_pu = 0.0;
+    };
     Rate closingRate(double opening_pu, bool emergency) const;
     /// Time to close from one stroke to a lower one at the limiting rates, without dead time.
     double closingTime_s(double from_pu, double to_pu) const;
@@ -40,10 +44,10 @@ Findings check(const ServoSpec& spec, const std::string& subject = {});
 
 struct ServoState {
     double opening_pu = 0.0;
-    double rate_1s = 0.0;     ///< mean over the last step, opening positive
-    double travel_pu = 0.0;   ///< accumulated |movement|
+    double rate_1s = 0.0;                   ///< mean over the last step, opening positive
+    double travel_pu = 0.0;                 ///< accumulated |movement|
     std::optional<double> emergency_s = {}; ///< when the emergency path was tripped
-    bool stuck = false;       ///< stays where it is whatever is ordered
+    bool stuck = false;                     ///< stays where it is whatever is ordered
     OrderMemory orders;
 };
 

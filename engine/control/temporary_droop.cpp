@@ -51,9 +51,9 @@ Result<TemporaryDroop> temporaryDroop(const PidGains& k, bool series, const std:
     const double left = numerics::square(k.kp);
     const double right = 4.0 * k.ki_1s * k.kd_s;
     if (!(left >= right)) {
-        return finding(noSeriesForm, subject,
-                       {{"left", amount(Quantity::factor, left)},
-                        {"right", amount(Quantity::factor, right)}});
+        return finding(
+            noSeriesForm, subject,
+            {{"left", amount(Quantity::factor, left)}, {"right", amount(Quantity::factor, right)}});
     }
     const double root = numerics::sqrt(left - right);
     const double td = (k.kp + root) / (2.0 * k.ki_1s);
@@ -62,8 +62,8 @@ Result<TemporaryDroop> temporaryDroop(const PidGains& k, bool series, const std:
 
 TemporaryDroop isolatedSettings(double waterStartingTime_s, double accelerationTime_s) {
     constexpr double droopShare = 2.25, resetShare = 5.0;
-    return {droopShare * waterStartingTime_s / accelerationTime_s,
-            resetShare * waterStartingTime_s, 0.0, true};
+    return {droopShare * waterStartingTime_s / accelerationTime_s, resetShare * waterStartingTime_s,
+            0.0, true};
 }
 
 } // namespace headroom::control

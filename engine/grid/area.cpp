@@ -19,7 +19,8 @@ void require(Findings& found, const std::string& subject, const std::string& nam
              bool mayBeZero) {
     if (!(mayBeZero ? value.si >= 0.0 : value.si > 0.0) || !std::isfinite(value.si)) {
         found.push_back({.message = mayBeZero ? &areaNegative : &areaNotPositive,
-                         .subject = subject, .arguments = {{"name", name}, {"value", value}}});
+                         .subject = subject,
+                         .arguments = {{"name", name}, {"value", value}}});
     }
 }
 
@@ -77,8 +78,8 @@ Findings check(const AreaSpec& spec, const std::string& subject) {
             false);
     require(found, subject, "stored energy", amount(Quantity::energy, spec.storedEnergy_J), false);
     require(found, subject, "load", amount(Quantity::load, spec.load_W), true);
-    require(found, subject, "load damping",
-            amount(Quantity::loadDamping, spec.loadDamping_1Hz), true);
+    require(found, subject, "load damping", amount(Quantity::loadDamping, spec.loadDamping_1Hz),
+            true);
     if (spec.reserve) {
         const ReserveSpec& r = *spec.reserve;
         require(found, subject, "other reserve", amount(Quantity::power, r.power_W), true);
@@ -87,7 +88,8 @@ Findings check(const AreaSpec& spec, const std::string& subject) {
         require(found, subject, "other reserve's dead band",
                 amount(Quantity::frequency, r.deadBand_Hz), true);
         if (!(r.least_W <= 0.0 && r.most_W >= 0.0)) {
-            found.push_back({.message = &reserveLimits, .subject = subject,
+            found.push_back({.message = &reserveLimits,
+                             .subject = subject,
                              .arguments = {{"least", amount(Quantity::power, r.least_W)},
                                            {"most", amount(Quantity::power, r.most_W)}}});
         }
@@ -97,8 +99,8 @@ Findings check(const AreaSpec& spec, const std::string& subject) {
 
 AreaState advance(const AreaSpec& spec, const AreaState& state, const AreaStep& step) {
     const double share = 0.5 * step.step_s / inertia(spec, step.extraEnergy_J);
-    const double before = surplus(spec, step.ownStart_W, step.lostStart_W, state.reserve_W,
-                                  state.deviation_Hz);
+    const double before =
+        surplus(spec, step.ownStart_W, step.lostStart_W, state.reserve_W, state.deviation_Hz);
     const double target = steadyReserve(spec, state.deviation_Hz).value;
     const LagStep lag = spec.reserve
                             ? lagStep(state.reserve_W, target, spec.reserve->lag_s, step.step_s)
@@ -149,7 +151,9 @@ double steadyDeviation_Hz(const AreaSpec& spec, double lost_W) {
     return root.value_or(std::copysign(widest, -lost_W));
 }
 
-double initialRate_Hzs(const AreaSpec& spec, double lost_W) { return -lost_W / inertia(spec, 0.0); }
+double initialRate_Hzs(const AreaSpec& spec, double lost_W) {
+    return -lost_W / inertia(spec, 0.0);
+}
 
 double lost_W(std::span<const Loss> losses, double time_s) {
     double sum = 0.0;

@@ -13,34 +13,34 @@ namespace headroom::grid {
 
 /// Every other governed unit of the area as one.
 struct ReserveSpec {
-    double power_W = 0.0;       ///< rating on which the droop is based
-    double droop = 0.04;        ///< share of frequency for full power
-    double lag_s = 5.0;         ///< first order; 0: at once
-    double deadBand_Hz = 0.0;   ///< half width without action
-    double most_W = std::numeric_limits<double>::infinity();  ///< largest increase
+    double power_W = 0.0;                                    ///< rating on which the droop is based
+    double droop = 0.04;                                     ///< share of frequency for full power
+    double lag_s = 5.0;                                      ///< first order; 0: at once
+    double deadBand_Hz = 0.0;                                ///< half width without action
+    double most_W = std::numeric_limits<double>::infinity(); ///< largest increase
     double least_W = -std::numeric_limits<double>::infinity(); ///< largest decrease, ≤ 0
 };
 
 struct AreaSpec {
     double nominal_Hz = 50.0;
-    double storedEnergy_J = 0.0;   ///< E_k of everything but the plant's own units, > 0
+    double storedEnergy_J = 0.0; ///< E_k of everything but the plant's own units, > 0
     double load_W = 0.0;
-    double loadDamping_1Hz = 0.0;  ///< share of the load per Hz
+    double loadDamping_1Hz = 0.0; ///< share of the load per Hz
     std::optional<ReserveSpec> reserve = {};
 };
 
 Findings check(const AreaSpec& spec, const std::string& subject = {});
 
 struct AreaState {
-    double deviation_Hz = 0.0;   ///< from the frequency at rest
+    double deviation_Hz = 0.0; ///< from the frequency at rest
     double rate_Hzs = 0.0;
-    double reserve_W = 0.0;      ///< of the other units, from rest
-    double imbalance_W = 0.0;    ///< surplus accelerating the area, at this instant
+    double reserve_W = 0.0;   ///< of the other units, from rest
+    double imbalance_W = 0.0; ///< surplus accelerating the area, at this instant
 };
 
 /// Powers as deviations from rest, at the beginning and the end of a step, positive into the area.
 struct AreaStep {
-    double ownStart_W = 0.0, ownEnd_W = 0.0; ///< of the plant's units minus their rest
+    double ownStart_W = 0.0, ownEnd_W = 0.0;   ///< of the plant's units minus their rest
     double lostStart_W = 0.0, lostEnd_W = 0.0; ///< lost generation, positive = lost
     double step_s = 0.0;
     double extraEnergy_J = 0.0; ///< of units locked to the frequency, at nominal speed

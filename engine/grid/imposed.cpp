@@ -9,7 +9,9 @@ namespace headroom::grid {
 
 namespace {
 
-double turns(const FrequencySine& sine) { return 2.0 * constants::pi / sine.period_s; }
+double turns(const FrequencySine& sine) {
+    return 2.0 * constants::pi / sine.period_s;
+}
 
 } // namespace
 
@@ -36,23 +38,22 @@ double frequency_Hz(const ImposedFrequency& law, double time_s) {
 
 double rate_Hzs(const ImposedFrequency& law, double time_s) {
     return std::visit(
-        overloaded{
-            [](const FrequencyStep&) { return 0.0; },
-            [&](const FrequencyRamp& ramp) {
-                const double since = time_s - ramp.time_s;
-                const bool moving = since >= 0.0 && since < ramp.over_s;
-                return moving ? (ramp.to_Hz - ramp.from_Hz) / ramp.over_s : 0.0;
-            },
-            [&](const FrequencySine& sine) {
-                const double since = time_s - sine.time_s;
-                return since >= 0.0
-                           ? sine.amplitude_Hz * turns(sine) * numerics::cos(turns(sine) * since)
-                           : 0.0;
-            },
-            [&](const FrequencyTable& table) {
-                const double since = time_s - table.time_s;
-                return since < table.rows.x().back() ? table.rows.slope(since) : 0.0;
-            }},
+        overloaded{[](const FrequencyStep&) { return 0.0; },
+                   [&](const FrequencyRamp& ramp) {
+                       const double since = time_s - ramp.time_s;
+                       const bool moving = since >= 0.0 && since < ramp.over_s;
+                       return moving ? (ramp.to_Hz - ramp.from_Hz) / ramp.over_s : 0.0;
+                   },
+                   [&](const FrequencySine& sine) {
+                       const double since = time_s - sine.time_s;
+                       return since >= 0.0 ? sine.amplitude_Hz * turns(sine)
+                                                 * numerics::cos(turns(sine) * since)
+                                           : 0.0;
+                   },
+                   [&](const FrequencyTable& table) {
+                       const double since = time_s - table.time_s;
+                       return since < table.rows.x().back() ? table.rows.slope(since) : 0.0;
+                   }},
         law);
 }
 

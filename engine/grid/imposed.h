@@ -8,16 +8,24 @@
 namespace headroom::grid {
 
 /// Constant until `time_s`, then another value.
-struct FrequencyStep { double time_s = 0.0, before_Hz = 50.0, after_Hz = 50.0; };
+struct FrequencyStep {
+    double time_s = 0.0, before_Hz = 50.0, after_Hz = 50.0;
+};
 /// From one value to another along a straight line over `over_s` > 0.
-struct FrequencyRamp { double time_s = 0.0, over_s = 1.0, from_Hz = 50.0, to_Hz = 50.0; };
+struct FrequencyRamp {
+    double time_s = 0.0, over_s = 1.0, from_Hz = 50.0, to_Hz = 50.0;
+};
 /// Sine about a mean from `time_s` on.
-struct FrequencySine { double time_s = 0.0, mean_Hz = 50.0, amplitude_Hz = 0.0, period_s = 1.0; };
+struct FrequencySine {
+    double time_s = 0.0, mean_Hz = 50.0, amplitude_Hz = 0.0, period_s = 1.0;
+};
 /// Rows (s, Hz) counted from `time_s`; held before and after.
-struct FrequencyTable { double time_s = 0.0; numerics::Table rows; };
+struct FrequencyTable {
+    double time_s = 0.0;
+    numerics::Table rows;
+};
 
-using ImposedFrequency =
-    std::variant<FrequencyStep, FrequencyRamp, FrequencySine, FrequencyTable>;
+using ImposedFrequency = std::variant<FrequencyStep, FrequencyRamp, FrequencySine, FrequencyTable>;
 
 /// Frequency at `time_s` [Hz], an exact function of counted time. At a step's own instant the value
 /// is still the one before it.

@@ -11,9 +11,9 @@ inline constexpr Message areaNotPositive{
     "grid.area-not-positive", Severity::error,
     "The area's {name} is {value}; it must be above zero.",
     "Give the {name} of the area without this plant's own units."};
-inline constexpr Message areaNegative{
-    "grid.area-negative", Severity::error,
-    "The area's {name} is {value}; it cannot be negative.", "Give zero or a positive value."};
+inline constexpr Message areaNegative{"grid.area-negative", Severity::error,
+                                      "The area's {name} is {value}; it cannot be negative.",
+                                      "Give zero or a positive value."};
 inline constexpr Message reserveLimits{
     "grid.reserve-limits", Severity::error,
     "The other reserve may move from {least} to {most}; the range must hold zero.",

@@ -31,8 +31,8 @@ RotorState rotorAfter(const RotorSpec& spec, const RotorState& state, double spe
     RotorState next{0.0, speed_pu, frequency_pu, state.onGrid};
     if (state.onGrid) {
         const double turn = 0.5 * step_s * spec.baseSpeed_rads();
-        next.angle_rad = state.angle_rad + turn * (state.speed_pu - state.frequency_pu) +
-                         turn * (speed_pu - frequency_pu);
+        next.angle_rad = state.angle_rad + turn * (state.speed_pu - state.frequency_pu)
+                         + turn * (speed_pu - frequency_pu);
     }
     return next;
 }

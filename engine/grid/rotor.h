@@ -12,13 +12,13 @@ struct RotorSpec {
     double synchronising_pu = 1.5; ///< K_S, torque per electrical rad
     double damping_pu = 20.0;      ///< K_D, torque per unit of slip
     double nominal_Hz = 50.0;
-    bool locked = false;           ///< speed is the grid's frequency; no angle
+    bool locked = false; ///< speed is the grid's frequency; no angle
 
     double baseSpeed_rads() const { return 2.0 * constants::pi * nominal_Hz; }
 };
 
 struct RotorState {
-    double angle_rad = 0.0;        ///< electrical, ahead of the grid; K_S·angle is the spring's torque
+    double angle_rad = 0.0; ///< electrical, ahead of the grid; K_S·angle is the spring's torque
     double speed_pu = 1.0;
     double frequency_pu = 1.0;
     bool onGrid = true;
@@ -46,12 +46,15 @@ double torque_pu(const RotorSpec& spec, const RotorState& state);
 
 /// Of a unit locked to the frequency: turbine torque minus what accelerates its own mass,
 /// T_g = T − J·dω/dt.
-inline double lockedTorque_Nm(double turbineTorque_Nm, double inertia_kgm2, double speedRate_rads2) {
+inline double lockedTorque_Nm(double turbineTorque_Nm, double inertia_kgm2,
+                              double speedRate_rads2) {
     return turbineTorque_Nm - inertia_kgm2 * speedRate_rads2;
 }
 
 /// Undamped swing [rad/s] and damping ratio of the linear machine, T_a = 2H on the same base.
-struct Swing { double frequency_rads = 0.0, dampingRatio = 0.0; };
+struct Swing {
+    double frequency_rads = 0.0, dampingRatio = 0.0;
+};
 Swing swing(const RotorSpec& spec, double accelerationTime_s);
 
 } // namespace headroom::grid

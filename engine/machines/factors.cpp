@@ -18,7 +18,9 @@ constexpr double secondsPerMinute = 60.0;
 /// One metric horsepower [W]: 75 kgf·m/s with standard gravity; definition.
 constexpr double metricHorsepower_W = 735.49875;
 
-double cubed(double x) { return x * x * x; }
+double cubed(double x) {
+    return x * x * x;
+}
 
 } // namespace
 
@@ -70,13 +72,21 @@ SpecificSpeeds specificSpeeds(const TurbineDuty& d) {
 }
 
 // USBR Engineering Monograph 20 (1976), from memory.
-double trialSpecificSpeed_mhp(double head_m) { return 2334.0 / sqrt(head_m); }
+double trialSpecificSpeed_mhp(double head_m) {
+    return 2334.0 / sqrt(head_m);
+}
 // De Siervo & de Leva (1976), from memory.
-double trialSpecificSpeed_kW(double head_m) { return 3470.0 * pow(head_m, -0.625); }
+double trialSpecificSpeed_kW(double head_m) {
+    return 3470.0 * pow(head_m, -0.625);
+}
 // ESHA guide (2004), from memory.
-double trialEnergySpecificSpeed(double head_m) { return 1.924 / pow(head_m, 0.512); }
+double trialEnergySpecificSpeed(double head_m) {
+    return 1.924 / pow(head_m, 0.512);
+}
 // USBR Engineering Monograph 20 (1976), from memory.
-double trialRunaway_pu(double specificSpeed_mhp) { return 0.63 * pow(specificSpeed_mhp, 0.2); }
+double trialRunaway_pu(double specificSpeed_mhp) {
+    return 0.63 * pow(specificSpeed_mhp, 0.2);
+}
 
 // De Siervo & de Leva (1976), from memory.
 double trialDiameter_m(double speed_rpm, double head_m, double specificSpeed_kW,
@@ -123,7 +133,9 @@ LinearTurbine linearTurbine(const ChartPoint& p, double relativeOpening) {
     return linear;
 }
 
-LinearTurbine idealTurbine() { return {0.5, 0.0, 1.0, 1.5, -1.0, 1.0}; }
+LinearTurbine idealTurbine() {
+    return {0.5, 0.0, 1.0, 1.5, -1.0, 1.0};
+}
 
 std::complex<double> rigidColumnResponse(const LinearTurbine& u, double waterStartingTime_s,
                                          std::complex<double> s) {

@@ -19,12 +19,18 @@ struct TurbineDuty {
 };
 
 /// n₁₁, Q₁₁, T₁₁, P₁₁ on runner diameter and head in m, speed in rpm.
-struct UnitQuantities { double n11 = 0.0, q11 = 0.0, t11 = 0.0, p11 = 0.0; };
+struct UnitQuantities {
+    double n11 = 0.0, q11 = 0.0, t11 = 0.0, p11 = 0.0;
+};
 UnitQuantities unitQuantities(const TurbineDuty& duty);
 
 /// Dimensionless factors of IEC 60193 (from memory), E = gH, n in 1/s.
-struct EnergyFactors { double nEd = 0.0, qEd = 0.0, tEd = 0.0, pEd = 0.0; };
-struct SpeedFactors { double eNd = 0.0, qNd = 0.0, tNd = 0.0, pNd = 0.0; };
+struct EnergyFactors {
+    double nEd = 0.0, qEd = 0.0, tEd = 0.0, pEd = 0.0;
+};
+struct SpeedFactors {
+    double eNd = 0.0, qNd = 0.0, tNd = 0.0, pNd = 0.0;
+};
 EnergyFactors energyFactors(const TurbineDuty& duty);
 SpeedFactors speedFactors(const TurbineDuty& duty);
 
@@ -41,16 +47,18 @@ SpecificSpeeds specificSpeeds(const TurbineDuty& duty);
 double specificSpeed(double speed, double power, double head);
 
 /// Trial specific speeds of Francis runners over head; spread ±20 %, for defaults only.
-double trialSpecificSpeed_mhp(double head_m);       ///< 2334/√H
-double trialSpecificSpeed_kW(double head_m);        ///< 3470 H^−0.625
-double trialEnergySpecificSpeed(double head_m);     ///< N_QE = 1.924/H^0.512
+double trialSpecificSpeed_mhp(double head_m);   ///< 2334/√H
+double trialSpecificSpeed_kW(double head_m);    ///< 3470 H^−0.625
+double trialEnergySpecificSpeed(double head_m); ///< N_QE = 1.924/H^0.512
 /// Runaway over rated speed at design head, full gate: 0.63 n_s^0.2, n_s in metric hp.
 double trialRunaway_pu(double specificSpeed_mhp);
 /// Reference runner diameter from speed, head and n_s(kW): u = (0.31 + 2.5e-3 n_s)·√(2gH).
 double trialDiameter_m(double speed_rpm, double head_m, double specificSpeed_kW,
                        double gravity_mps2);
 
-struct ConduitPiece { double length_m = 0.0, area_m2 = 0.0; };
+struct ConduitPiece {
+    double length_m = 0.0, area_m2 = 0.0;
+};
 /// T_w = Q/(gH)·ΣL/A [s].
 double waterStartingTime_s(std::span<const ConduitPiece> pieces, double flow_m3s, double head_m,
                            double gravity_mps2);
@@ -61,7 +69,7 @@ struct PenstockNumbers {
     double travelTime_s = 0.0;     ///< T_e = L/a
     double impedance_pu = 0.0;     ///< Z_n = aQ/(gAH)
     double waterStartingTime_s = 0.0;
-    double allievi = 0.0;          ///< ρ_A = Z_n/2
+    double allievi = 0.0; ///< ρ_A = Z_n/2
 };
 PenstockNumbers penstockNumbers(const ConduitPiece& pipe, double waveSpeed_mps, double flow_m3s,
                                 double head_m, double gravity_mps2);
@@ -69,7 +77,9 @@ PenstockNumbers penstockNumbers(const ConduitPiece& pipe, double waveSpeed_mps, 
 std::complex<double> pipeResponse(const PenstockNumbers& numbers, std::complex<double> s);
 
 /// gH = u₁c_u1 − u₂c_u2 [m].
-struct EulerVelocities { double u1_mps = 0.0, cu1_mps = 0.0, u2_mps = 0.0, cu2_mps = 0.0; };
+struct EulerVelocities {
+    double u1_mps = 0.0, cu1_mps = 0.0, u2_mps = 0.0, cu2_mps = 0.0;
+};
 double eulerHead_m(const EulerVelocities& velocities, double gravity_mps2);
 
 /// Small changes about a steady point, per unit of the rated values:

@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "machines/francis_chart.h"
-
 #include "base/constants.h"
 #include "machines/factors.h"
+#include "machines/francis_chart.h"
 #include "machines/francis_solve.h"
 #include "machines/messages.h"
 #include "numerics/elementary.h"
@@ -29,7 +28,9 @@ Finding finding(const Message& message, const std::string& subject,
     return {.message = &message, .subject = subject, .arguments = std::move(arguments)};
 }
 
-Amount share(double value) { return amount(Quantity::perUnit, value); }
+Amount share(double value) {
+    return amount(Quantity::perUnit, value);
+}
 
 /// Parts of the form that a Francis chart does not fit; recipes worked out with them once.
 FrancisForm fixedParts(const FrancisTargets& targets) {
@@ -77,9 +78,9 @@ FrancisForm formOf(const FrancisTargets& targets, const Shape& shape) {
         form.recirculation * numerics::exp(-1.0 / square(form.recirculationFlow));
     form.e1 = (form.ratedEfficiency * (1.0 + form.disc + atRated) + form.u2 * outlet) / form.u1;
     form.e2 = form.e1 - 1.0 / shape.shockFreeFlow;
-    form.frictionTurbine = 1.0 - (form.u1 * form.e1 - form.u2 * outlet) -
-                           0.5 * form.shockTurbine * form.u1 * square(form.e1 - form.e2 - 1.0) -
-                           0.5 * form.exitTurbine * form.u2 * square(outlet);
+    form.frictionTurbine = 1.0 - (form.u1 * form.e1 - form.u2 * outlet)
+                           - 0.5 * form.shockTurbine * form.u1 * square(form.e1 - form.e2 - 1.0)
+                           - 0.5 * form.exitTurbine * form.u2 * square(outlet);
     form.frictionPump = form.frictionTurbine;
     fitZeroFlow(form);
     return form;
@@ -100,8 +101,8 @@ void polishRatedPoint(FrancisForm& form) {
 constexpr std::size_t targetCount = 6;
 
 std::optional<std::array<double, targetCount>> reached(const FrancisForm& form) {
-    if (!(form.flowTerm(1.0) > 0.0) || !(std::fabs(form.blendShift) < 20.0) ||
-        !(form.shockPump >= 0.0)) {
+    if (!(form.flowTerm(1.0) > 0.0) || !(std::fabs(form.blendShift) < 20.0)
+        || !(form.shockPump >= 0.0)) {
         return std::nullopt;
     }
     const auto noLoad = pointOfTorque(form, 0.0);
@@ -110,9 +111,9 @@ std::optional<std::array<double, targetCount>> reached(const FrancisForm& form) 
     if (!noLoad || !half || !best) {
         return std::nullopt;
     }
-    return std::array{runawayAt(form, 1.0), noLoad->q,
+    return std::array{runawayAt(form, 1.0),        noLoad->q,
                       flowAt(form, 1.0, 0.0, 1.0), best->m,
-                      best->efficiency(form), half->efficiency(form)};
+                      best->efficiency(form),      half->efficiency(form)};
 }
 
 std::vector<CalibrationRow> rowsOf(const FrancisTargets& t,
@@ -148,7 +149,8 @@ std::vector<double> fitShape(const FrancisTargets& targets) {
 void requirePositive(Findings& found, const std::string& subject, const std::string& name,
                      Amount value) {
     if (!(value.si > 0.0) || !std::isfinite(value.si)) {
-        found.push_back(finding(ratedValueNotPositive, subject, {{"name", name}, {"value", value}}));
+        found.push_back(
+            finding(ratedValueNotPositive, subject, {{"name", name}, {"value", value}}));
     }
 }
 
@@ -156,8 +158,10 @@ void requireWithin(Findings& found, const std::string& subject, const std::strin
                    double value, double least, double most) {
     if (!(value >= least && value <= most)) {
         found.push_back(finding(targetOutOfRange, subject,
-                                {{"name", name}, {"value", share(value)},
-                                 {"least", share(least)}, {"most", share(most)}}));
+                                {{"name", name},
+                                 {"value", share(value)},
+                                 {"least", share(least)},
+                                 {"most", share(most)}}));
     }
 }
 
@@ -185,9 +189,9 @@ Findings checkTargets(const FrancisTargets& t, const std::string& subject) {
     }
     constexpr double slowest = 0.3, fastest = 3.0; // beyond, the form has not been tried
     if (!(t.u1 >= slowest && t.u1 <= fastest)) {
-        found.push_back(finding(speedNotFrancis, subject,
-                                {{"value", share(t.u1)}, {"least", share(slowest)},
-                                 {"most", share(fastest)}}));
+        found.push_back(
+            finding(speedNotFrancis, subject,
+                    {{"value", share(t.u1)}, {"least", share(slowest)}, {"most", share(fastest)}}));
     }
     requireWithin(found, subject, "runaway speed", t.runaway, 1.2, 3.0);
     requireWithin(found, subject, "no-load flow", t.noLoadFlow, 0.02, 0.3);
@@ -213,16 +217,17 @@ Findings checkForm(const FrancisForm& form, const std::vector<CalibrationRow>& r
         const double times = std::fabs(row.residual());
         if (!(times <= largestResidual)) {
             found.push_back(finding(chartMissesTarget, subject,
-                                    {{"name", row.name}, {"asked", share(row.asked)},
+                                    {{"name", row.name},
+                                     {"asked", share(row.asked)},
                                      {"reached", share(row.reached)},
                                      {"times", amount(Quantity::factor, times)},
                                      {"tolerance", share(row.tolerance)}}));
         }
     }
     if (!(form.frictionTurbine >= smallestFriction)) {
-        found.push_back(finding(chartLossTooSmall, subject,
-                                {{"value", share(form.frictionTurbine)},
-                                 {"least", share(smallestFriction)}}));
+        found.push_back(
+            finding(chartLossTooSmall, subject,
+                    {{"value", share(form.frictionTurbine)}, {"least", share(smallestFriction)}}));
     }
     return found;
 }
@@ -253,8 +258,8 @@ Findings checkRows(const std::vector<std::pair<double, double>>& rows, const std
         }
     }
     constexpr double rounding = 1e-9;
-    if (rows.front().first != 0.0 || rows.front().second != 0.0 ||
-        !(std::fabs(rows.back().first - 1.0) < rounding)) {
+    if (rows.front().first != 0.0 || rows.front().second != 0.0
+        || !(std::fabs(rows.back().first - 1.0) < rounding)) {
         found.push_back(finding(gateLawEnds, subject,
                                 {{"firstStroke", share(rows.front().first)},
                                  {"firstFlow", share(rows.front().second)},
@@ -298,8 +303,10 @@ FrancisTargets targetsOf(const FrancisRating& r) {
     const double water_W = r.density_kgm3 * r.gravity_mps2 * r.ratedFlow_m3s * r.ratedHead_m;
     t.ratedEfficiency = r.ratedPower_W / water_W;
     const double speed_rpm = r.ratedSpeed_rads * rpmPerRads;
-    const auto speeds = specificSpeeds({.speed_rpm = speed_rpm, .flow_m3s = r.ratedFlow_m3s,
-                                        .head_m = r.ratedHead_m, .diameter_m = 1.0,
+    const auto speeds = specificSpeeds({.speed_rpm = speed_rpm,
+                                        .flow_m3s = r.ratedFlow_m3s,
+                                        .head_m = r.ratedHead_m,
+                                        .diameter_m = 1.0,
                                         .efficiency = t.ratedEfficiency,
                                         .gravity_mps2 = r.gravity_mps2,
                                         .density_kgm3 = r.density_kgm3});

@@ -15,20 +15,21 @@ namespace headroom::machines {
 /// What is known of a Francis turbine. The four rated values are needed; the others have defaults
 /// that `FrancisChart::calibrate` fills in and `FrancisTargets` shows.
 struct FrancisRating {
-    double ratedHead_m = 0.0;      ///< net head, > 0
-    double ratedFlow_m3s = 0.0;    ///< > 0
-    double ratedSpeed_rads = 0.0;  ///< > 0
-    double ratedPower_W = 0.0;     ///< at the shaft; fixes the rated efficiency
+    double ratedHead_m = 0.0;     ///< net head, > 0
+    double ratedFlow_m3s = 0.0;   ///< > 0
+    double ratedSpeed_rads = 0.0; ///< > 0
+    double ratedPower_W = 0.0;    ///< at the shaft; fixes the rated efficiency
     double gravity_mps2 = 9.81;
     double density_kgm3 = 1000.0;
-    std::optional<double> runnerDiameter_m = {};      ///< inlet; else from the specific speed
-    std::optional<double> runaway_pu = {};            ///< of rated speed, full opening, rated head
-    std::optional<double> noLoadFlow_pu = {};         ///< of rated flow at rated head and speed
-    std::optional<double> standstillFlow_pu = {};     ///< of rated flow, full opening, rated head
-    std::optional<double> bestPower_pu = {};          ///< of rated power, where efficiency is best
+    std::optional<double> runnerDiameter_m = {};  ///< inlet; else from the specific speed
+    std::optional<double> runaway_pu = {};        ///< of rated speed, full opening, rated head
+    std::optional<double> noLoadFlow_pu = {};     ///< of rated flow at rated head and speed
+    std::optional<double> standstillFlow_pu = {}; ///< of rated flow, full opening, rated head
+    std::optional<double> bestPower_pu = {};      ///< of rated power, where efficiency is best
     std::optional<double> bestEfficiency_pu = {};
     std::optional<double> halfPowerEfficiency_pu = {};
-    std::vector<std::pair<double, double>> flowByStroke = {}; ///< shares of one; empty: a straight line
+    std::vector<std::pair<double, double>> flowByStroke =
+        {}; ///< shares of one; empty: a straight line
 };
 
 /// The rating with every default filled in, per unit of rated.
@@ -43,7 +44,7 @@ struct FrancisTargets {
 
 /// What the calibration asked for and what the chart gives.
 struct CalibrationRow {
-    std::string name;     ///< "runaway speed"
+    std::string name; ///< "runaway speed"
     double asked = 0.0, reached = 0.0, tolerance = 0.0;
     double residual() const { return (asked - reached) / tolerance; }
 };

@@ -73,11 +73,11 @@ ChartPoint FrancisForm::at(double q, double n, double c) const {
 
     const Slopes eulerT = u1 * vanes - u2 * exit;
     const Slopes eulerP = u1 * pumpSwirl;
-    const Slopes lossT = (0.5 * shockTurbine * u1) * squared(vanes - speed - e2 * flow) +
-                         (0.5 * exitTurbine * u2) * squared(exit) + pipeT * flow2;
-    const Slopes lossP = (0.5 * shockPump * u1) * squared(pumpSwirl - vanes) +
-                         (0.5 * exitPump * u2) * squared(speed - (1.0 / phiPump) * flow) +
-                         pipeP * flow2;
+    const Slopes lossT = (0.5 * shockTurbine * u1) * squared(vanes - speed - e2 * flow)
+                         + (0.5 * exitTurbine * u2) * squared(exit) + pipeT * flow2;
+    const Slopes lossP = (0.5 * shockPump * u1) * squared(pumpSwirl - vanes)
+                         + (0.5 * exitPump * u2) * squared(speed - (1.0 / phiPump) * flow)
+                         + pipeP * flow2;
 
     const double radius = numerics::sqrt(radius2);
     const double width = blendWidth * radius;
@@ -110,8 +110,8 @@ ChartPoint FrancisForm::shut(double n) const {
 
 double FrancisForm::flowTerm(double c) const {
     const double e = e1 * c - e2;
-    return 0.5 * shockTurbine * u1 * e * e + 0.5 * exitTurbine * u2 / square(phi) +
-           frictionTurbine + gate * (c * c - 1.0);
+    return 0.5 * shockTurbine * u1 * e * e + 0.5 * exitTurbine * u2 / square(phi) + frictionTurbine
+           + gate * (c * c - 1.0);
 }
 
 double FrancisForm::mixedTerm(double c) const {

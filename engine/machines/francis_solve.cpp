@@ -14,7 +14,9 @@ namespace {
 using numerics::ValueAndSlope;
 
 /// Derivative of the flow by c at constant head and speed.
-double flowSlope(const ChartPoint& p) { return -p.dh_dc / p.dh_dq; }
+double flowSlope(const ChartPoint& p) {
+    return -p.dh_dc / p.dh_dq;
+}
 
 constexpr double tightest = 1e-15;
 
@@ -39,8 +41,8 @@ double flowAt(const FrancisForm& form, double h, double n, double c) {
         low *= 2.0;
     }
     const double guess = numerics::signedRoot(h / std::fmax(form.flowTerm(c), tightest));
-    const auto root = numerics::bracketedNewton(head, low, high, guess,
-                                                {.argumentTolerance = tightest * scale});
+    const auto root =
+        numerics::bracketedNewton(head, low, high, guess, {.argumentTolerance = tightest * scale});
     ensure(root.has_value(), "the head of a runner rises without bound with its flow");
     return *root;
 }
@@ -86,7 +88,7 @@ std::optional<RatedHeadPoint> pointOfTorque(const FrancisForm& form, double m) {
         const ChartPoint p = form.at(flowAt(form, 1.0, 1.0, c), 1.0, c);
         return ValueAndSlope{p.m - m, p.dm_dc + p.dm_dq * flowSlope(p)};
     };
-    constexpr double open = 0.9;      // a little beyond the rated opening
+    constexpr double open = 0.9; // a little beyond the rated opening
     constexpr double almostShut = 1e3;
     const auto c = numerics::bracketedNewton(torque, open, almostShut, 2.0);
     return c ? std::optional(ratedHeadPoint(form, *c)) : std::nullopt;

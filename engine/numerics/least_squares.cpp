@@ -44,8 +44,9 @@ private:
 
     bool evaluate(const Vector& x, Vector& into) const {
         into.resize(problem_.residualCount);
-        const bool formed = problem_.residuals({x.data(), static_cast<std::size_t>(x.size())},
-                                               {into.data(), static_cast<std::size_t>(into.size())});
+        const bool formed =
+            problem_.residuals({x.data(), static_cast<std::size_t>(x.size())},
+                               {into.data(), static_cast<std::size_t>(into.size())});
         return formed && into.allFinite();
     }
 
@@ -111,8 +112,8 @@ private:
         Matrix normal = j.transpose() * j;
         held_.assign(static_cast<std::size_t>(x_.size()), false);
         for (Eigen::Index i = 0; i < x_.size(); ++i) {
-            const bool atWall = (x_[i] <= lower_[i] && gradient[i] > 0.0) ||
-                                (x_[i] >= upper_[i] && gradient[i] < 0.0);
+            const bool atWall = (x_[i] <= lower_[i] && gradient[i] > 0.0)
+                                || (x_[i] >= upper_[i] && gradient[i] < 0.0);
             if (atWall || !(normal(i, i) > 0.0)) {
                 held_[static_cast<std::size_t>(i)] = true;
                 normal.row(i).setZero();
@@ -142,8 +143,8 @@ private:
 } // namespace
 
 LeastSquaresFit fitBounded(const LeastSquaresProblem& problem, const LeastSquaresOptions& options) {
-    ensure(problem.start.size() == problem.lower.size() &&
-               problem.start.size() == problem.upper.size() && problem.residualCount > 0,
+    ensure(problem.start.size() == problem.lower.size()
+               && problem.start.size() == problem.upper.size() && problem.residualCount > 0,
            "a least-squares problem has bounds for each unknown");
     return Fit(problem, options).run();
 }

@@ -8,7 +8,8 @@
 namespace headroom::numerics {
 
 /// Fills `residuals` (a fixed number) from `unknowns`; returns false where they cannot be formed.
-using Residuals = std::function<bool(std::span<const double> unknowns, std::span<double> residuals)>;
+using Residuals =
+    std::function<bool(std::span<const double> unknowns, std::span<double> residuals)>;
 
 struct LeastSquaresProblem {
     Residuals residuals;

@@ -7,10 +7,9 @@
 
 namespace headroom::numerics {
 
-inline constexpr Message tableTooShort{
-    "numerics.table-too-short", Severity::error,
-    "The table has {rows} complete rows; it needs at least two.",
-    "Give a first and a last row, each with both columns."};
+inline constexpr Message tableTooShort{"numerics.table-too-short", Severity::error,
+                                       "The table has {rows} complete rows; it needs at least two.",
+                                       "Give a first and a last row, each with both columns."};
 inline constexpr Message tableNotFinite{
     "numerics.table-not-finite", Severity::error,
     "Row {row} of the table holds a value that is not a finite number.",

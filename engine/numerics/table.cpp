@@ -20,7 +20,8 @@ std::size_t segmentOf(const std::vector<double>& x, double at) {
 }
 
 Finding rowFinding(const Message& message, const std::string& subject, std::size_t row) {
-    return {.message = &message, .subject = subject,
+    return {.message = &message,
+            .subject = subject,
             .arguments = {{"row", static_cast<std::int64_t>(row + 1)}}};
 }
 
@@ -28,9 +29,10 @@ Findings faults(const std::vector<double>& x, const std::vector<double>& y,
                 const std::string& subject) {
     Findings found;
     if (x.size() < 2 || x.size() != y.size()) {
-        found.push_back({.message = &tableTooShort, .subject = subject,
-                         .arguments = {{"rows", static_cast<std::int64_t>(std::min(
-                                                    x.size(), y.size()))}}});
+        found.push_back(
+            {.message = &tableTooShort,
+             .subject = subject,
+             .arguments = {{"rows", static_cast<std::int64_t>(std::min(x.size(), y.size()))}}});
         return found;
     }
     for (std::size_t i = 0; i < x.size(); ++i) {
@@ -112,13 +114,13 @@ double Table::integral(double from, double to) const {
 }
 
 bool Table::rising() const {
-    return std::adjacent_find(y_.begin(), y_.end(),
-                              [](double a, double b) { return !(b > a); }) == y_.end();
+    return std::adjacent_find(y_.begin(), y_.end(), [](double a, double b) { return !(b > a); })
+           == y_.end();
 }
 
 bool Table::falling() const {
-    return std::adjacent_find(y_.begin(), y_.end(),
-                              [](double a, double b) { return !(b < a); }) == y_.end();
+    return std::adjacent_find(y_.begin(), y_.end(), [](double a, double b) { return !(b < a); })
+           == y_.end();
 }
 
 std::optional<double> Table::inverse(double y) const {
@@ -176,7 +178,9 @@ MonotoneCurve::MonotoneCurve(std::vector<double> x, std::vector<double> y)
     }
 }
 
-std::size_t MonotoneCurve::segment(double x) const { return segmentOf(x_, x); }
+std::size_t MonotoneCurve::segment(double x) const {
+    return segmentOf(x_, x);
+}
 
 double MonotoneCurve::value(double x) const {
     if (!(x > x_.front())) {
@@ -216,12 +220,10 @@ double MonotoneCurve::inverse(double y) const {
         return x_.back();
     }
     const std::size_t i = segmentOf(y_, y);
-    const auto difference = [&](double x) {
-        return ValueAndSlope{value(x) - y, slope(x)};
-    };
+    const auto difference = [&](double x) { return ValueAndSlope{value(x) - y, slope(x)}; };
     const double share = (y - y_[i]) / (y_[i + 1] - y_[i]);
-    const auto root = bracketedNewton(difference, x_[i], x_[i + 1],
-                                      x_[i] + share * (x_[i + 1] - x_[i]));
+    const auto root =
+        bracketedNewton(difference, x_[i], x_[i + 1], x_[i] + share * (x_[i + 1] - x_[i]));
     ensure(root.has_value(), "a rising curve has an inverse inside its rows");
     return *root;
 }

@@ -10,8 +10,8 @@ namespace headroom::numerics {
 /// drift and two runs with the same grid meet at the same instants bit for bit.
 struct TimeGrid {
     double start_s = 0.0;
-    double step_s = 0.0;     ///< > 0
-    std::int64_t steps = 0;  ///< number of steps; the last instant is at(steps)
+    double step_s = 0.0;    ///< > 0
+    std::int64_t steps = 0; ///< number of steps; the last instant is at(steps)
 
     double at(std::int64_t n) const { return start_s + static_cast<double>(n) * step_s; }
     double end_s() const { return at(steps); }

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "control/pid_governor.h"
-
 #include "control/servo.h"
 #include "machines/factors.h"
 #include "support/catch.h"
@@ -15,7 +14,9 @@ using namespace headroom::control;
 
 namespace {
 
-PidGovernor governor(const PidSpec& spec) { return PidGovernor::make(spec).value(); }
+PidGovernor governor(const PidSpec& spec) {
+    return PidGovernor::make(spec).value();
+}
 
 /// Order after `until` when the speed deviation follows `speed(t)`, opening reference 0.5.
 template <class Speed>
@@ -148,7 +149,7 @@ TEST_CASE("Governor: conversions between the forms", "[governor][analytic]") {
     // Hagihara, T_w 1, T_m 8: 6.4, 1.92, 2.16 is convertible.
     CHECK(temporaryDroop({6.4, 1.92, 2.16}, true));
     const auto starter = isolatedSettings(1.63, 7.11);
-    CHECK_THAT(starter.bt, WithinAbs(0.516, 1e-3)); // of 0.46–0.57 for the demo plant
+    CHECK_THAT(starter.bt, WithinAbs(0.516, 1e-3));  // of 0.46–0.57 for the demo plant
     CHECK_THAT(starter.td_s, WithinAbs(8.15, 1e-9)); // of 6.5–9.8 s
 }
 
@@ -165,9 +166,9 @@ TEST_CASE("Governor: what cannot be converted is refused with its reason", "[gov
                ContainsSubstring("no series form") && ContainsSubstring("4"));
     CHECK(temporaryDroop({1.0, 1.0, 1.0}, false));
     CHECK_THAT(said(temporaryDroop({1.0, 0.0, 0.0}, true)), ContainsSubstring("an integral part"));
-    CHECK_THAT(said(parallelGains({0.0, -1.0, -1.0})),
-               ContainsSubstring("temporary droop") && ContainsSubstring("reset time") &&
-                   ContainsSubstring("derivative time"));
+    CHECK_THAT(said(parallelGains({0.0, -1.0, -1.0})), ContainsSubstring("temporary droop")
+                                                           && ContainsSubstring("reset time")
+                                                           && ContainsSubstring("derivative time"));
 }
 
 TEST_CASE("Governor: bad settings are refused all at once", "[governor][messages]") {
@@ -183,11 +184,11 @@ TEST_CASE("Governor: bad settings are refused all at once", "[governor][messages
     for (const auto& finding : result.findings()) {
         said += text(finding) + "\n";
     }
-    CHECK_THAT(said, ContainsSubstring("proportional gain, on the grid is") &&
-                         ContainsSubstring("integral gain, on the grid is not") &&
-                         ContainsSubstring("neither") && ContainsSubstring("droop is") &&
-                         ContainsSubstring("derivative filter") &&
-                         ContainsSubstring("opening limit is"));
+    CHECK_THAT(said, ContainsSubstring("proportional gain, on the grid is")
+                         && ContainsSubstring("integral gain, on the grid is not")
+                         && ContainsSubstring("neither") && ContainsSubstring("droop is")
+                         && ContainsSubstring("derivative filter")
+                         && ContainsSubstring("opening limit is"));
 }
 
 TEST_CASE("Governor, servo and ideal turbine on the grid: frequency step", "[governor][analytic]") {

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "control/load_control.h"
-
 #include "support/catch.h"
 
 #include <cmath>

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "control/order_memory.h"
-
 #include "base/ensure.h"
+#include "control/order_memory.h"
 #include "support/catch.h"
 
 using headroom::control::OrderMemory;

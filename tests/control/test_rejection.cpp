@@ -16,8 +16,12 @@ namespace {
 /// The demo plant's unit, servo and penstock (invented plant), rigid column below still water.
 struct Rejection {
     machines::FrancisChart chart = makeChart();
-    ServoSpec servo{.opening_s = 8.0, .closing = {{0.0, 9.0}}, .cushionBelow_pu = 0.12,
-                    .cushion_s = 3.0, .deadTime_s = 0.2, .lag_s = 0.15};
+    ServoSpec servo{.opening_s = 8.0,
+                    .closing = {{0.0, 9.0}},
+                    .cushionBelow_pu = 0.12,
+                    .cushion_s = 3.0,
+                    .deadTime_s = 0.2,
+                    .lag_s = 0.15};
     double step_s = 0.005;
 
     double highestSpeed = 0.0, closedFrom_s = -1.0, settled_s = -1.0, lowestAfter = 10.0;
@@ -51,9 +55,16 @@ struct Rejection {
         }
         for (int i = 0; i < static_cast<int>(200.0 / step_s); ++i) {
             const double t = i * step_s;
-            m = {.time_s = t + step_s, .step_s = step_s, .speed_pu = n, .frequency_pu = 1.0,
-                 .opening_pu = gate.opening_pu, .power_pu = 0.0, .inletHead_m = 0.0,
-                 .chamberLevel_m = 0.0, .reference = {idle, 0.0}, .speedReference_pu = 1.0,
+            m = {.time_s = t + step_s,
+                 .step_s = step_s,
+                 .speed_pu = n,
+                 .frequency_pu = 1.0,
+                 .opening_pu = gate.opening_pu,
+                 .power_pu = 0.0,
+                 .inletHead_m = 0.0,
+                 .chamberLevel_m = 0.0,
+                 .reference = {idle, 0.0},
+                 .speedReference_pu = 1.0,
                  .onGrid = false};
             const double next = governor.decide(m).opening_pu;
             advance(servo, gate, {order, next}, t, step_s);
@@ -64,8 +75,8 @@ struct Rejection {
             const double before = q;
             for (int k = 0; k < 20 && tau >= 0.003; ++k) {
                 p = chart.at(q, n, 1.0 / tau);
-                const double residual = column * (q - before) / step_s - head +
-                                        loss * q * std::fabs(q) + p.h;
+                const double residual =
+                    column * (q - before) / step_s - head + loss * q * std::fabs(q) + p.h;
                 q -= residual / (column / step_s + 2.0 * loss * std::fabs(q) + p.dh_dq);
             }
             n += step_s / ta * p.m;
@@ -112,8 +123,7 @@ TEST_CASE("Rejection: the gate closes fully, then the speed settles without hunt
         rejection.run(PidGovernor::make(spec).value());
         CAPTURE(starter, rejection.highestSpeed, rejection.closedFrom_s, rejection.settled_s);
         // Dead time, 0.934 → 0.12 at 9 s, cushion 3 s (derived here from the servo's data).
-        CHECK_THAT(rejection.closedFrom_s,
-                   WithinAbs(0.2 + (0.934 - 0.12) * 9.0 + 3.0, 0.02));
+        CHECK_THAT(rejection.closedFrom_s, WithinAbs(0.2 + (0.934 - 0.12) * 9.0 + 3.0, 0.02));
         CHECK(rejection.highestSpeed > 1.39);
         CHECK(rejection.highestSpeed < 1.53); // without the tunnel's loss, so above the plant's own
         CHECK(rejection.lowestAfter > 0.975);

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "control/servo.h"
-
 #include "support/catch.h"
 #include "units/text.h"
 
@@ -137,8 +136,8 @@ TEST_CASE("Servo: exact lag for a straight order, order two for a smooth one", "
         // T·ẏ + y = 0.5 + 0.01·sin(w(t − 0.2)) from t = 0.2 on, y = 0.5 before.
         const double t = 4.0 - 0.2, wt = w * spec.lag_s;
         const double solution =
-            0.01 / (1.0 + wt * wt) *
-            (std::sin(w * t) - wt * std::cos(w * t) + wt * std::exp(-t / spec.lag_s));
+            0.01 / (1.0 + wt * wt)
+            * (std::sin(w * t) - wt * std::cos(w * t) + wt * std::exp(-t / spec.lag_s));
         return std::fabs(s.opening_pu - 0.5 - solution);
     };
     CHECK_THAT(std::log2(error(100) / error(200)), WithinAbs(2.0, 0.05));
@@ -187,10 +186,10 @@ TEST_CASE("Servo: faults are named all at once", "[servo][messages]") {
     for (const auto& finding : check(spec, "plant/units/Unit 1/servo")) {
         said += text(finding) + "\n";
     }
-    CHECK_THAT(said, ContainsSubstring("opening time is") && ContainsSubstring("closing time is") &&
-                         ContainsSubstring("stage 2") && ContainsSubstring("lag is") &&
-                         ContainsSubstring("cushion") && ContainsSubstring("dead time") &&
-                         ContainsSubstring("strokes run"));
+    CHECK_THAT(said, ContainsSubstring("opening time is") && ContainsSubstring("closing time is")
+                         && ContainsSubstring("stage 2") && ContainsSubstring("lag is")
+                         && ContainsSubstring("cushion") && ContainsSubstring("dead time")
+                         && ContainsSubstring("strokes run"));
     CHECK_FALSE(check(ServoSpec{}).empty()); // no closing time
     CHECK(check(bare()).empty());
 }

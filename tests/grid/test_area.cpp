@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "grid/area.h"
-
 #include "support/catch.h"
 #include "units/text.h"
 
@@ -23,9 +22,10 @@ AreaSpec plain(double stored_J) {
 
 TEST_CASE("Area: first rate of change after a loss", "[area][analytic]") {
     // Source: f₀·ΔP/(2E_k) (Kundur 1994 ch. 11, from memory; recomputed), 1450 MW and 3000 MW.
-    const std::array rows{std::array{120e9, 1450e6, -0.302083}, std::array{150e9, 1450e6, -0.241667},
-                          std::array{190e9, 1450e6, -0.190789}, std::array{280e9, 1450e6, -0.129464},
-                          std::array{2000e9, 3000e6, -0.0375}, std::array{1500e9, 3000e6, -0.05}};
+    const std::array rows{
+        std::array{120e9, 1450e6, -0.302083}, std::array{150e9, 1450e6, -0.241667},
+        std::array{190e9, 1450e6, -0.190789}, std::array{280e9, 1450e6, -0.129464},
+        std::array{2000e9, 3000e6, -0.0375},  std::array{1500e9, 3000e6, -0.05}};
     for (const auto& [energy, lost, rate] : rows) {
         const AreaSpec spec = plain(energy);
         CHECK_THAT(initialRate_Hzs(spec, lost), WithinAbs(rate, 1e-6));
@@ -49,8 +49,11 @@ TEST_CASE("Area: lowest frequency with a reserve that rises at a constant rate",
         for (int n = 0; n < 1000; ++n) {
             const double t = 0.01 * n;
             state = advance(plain(energy), state,
-                            {.ownStart_W = reserve(t), .ownEnd_W = reserve(t + 0.01),
-                             .lostStart_W = 1450e6, .lostEnd_W = 1450e6, .step_s = 0.01});
+                            {.ownStart_W = reserve(t),
+                             .ownEnd_W = reserve(t + 0.01),
+                             .lostStart_W = 1450e6,
+                             .lostEnd_W = 1450e6,
+                             .step_s = 0.01});
             if (state.deviation_Hz < found) {
                 found = state.deviation_Hz;
                 at = t + 0.01;
@@ -74,8 +77,8 @@ TEST_CASE("Area: steady deviation with droop and damping", "[area][analytic]") {
         CHECK_THAT(steadyDeviation_Hz(spec, lost * 1e9), WithinAbs(deviation, 1e-6));
         AreaState state;
         for (int n = 0; n < 20000; ++n) {
-            state = advance(spec, state, {.lostStart_W = lost * 1e9, .lostEnd_W = lost * 1e9,
-                                          .step_s = 0.01});
+            state = advance(spec, state,
+                            {.lostStart_W = lost * 1e9, .lostEnd_W = lost * 1e9, .step_s = 0.01});
         }
         CHECK_THAT(state.deviation_Hz, WithinAbs(deviation, 1e-6));
         CHECK_THAT(state.imbalance_W, WithinAbs(0.0, 10.0));
@@ -117,8 +120,9 @@ TEST_CASE("Area: order two with a lagged reserve", "[area][order]") {
     const double w = std::sqrt(b - a * a), end = -p / (d + 1.0 / r), time = 5.0;
     const double slope = -p / twoH;
     const double exact =
-        end + std::exp(-a * time) *
-                  (-end * std::cos(w * time) + (slope - a * end) / w * std::sin(w * time));
+        end
+        + std::exp(-a * time)
+              * (-end * std::cos(w * time) + (slope - a * end) / w * std::sin(w * time));
     CHECK_THAT(after(4000) / 50.0, WithinAbs(exact, 1e-8));
     const double coarse = std::fabs(after(100) / 50.0 - exact);
     const double fine = std::fabs(after(200) / 50.0 - exact);
@@ -129,8 +133,12 @@ TEST_CASE("Area: dead band and saturation of the other reserve", "[area][limit]"
     AreaSpec spec = plain(4e9);
     spec.load_W = 1e9;
     spec.loadDamping_1Hz = 0.02;
-    spec.reserve = ReserveSpec{.power_W = 1e9, .droop = 0.05, .lag_s = 0.0, .deadBand_Hz = 0.1,
-                               .most_W = 5e7, .least_W = -2e7};
+    spec.reserve = ReserveSpec{.power_W = 1e9,
+                               .droop = 0.05,
+                               .lag_s = 0.0,
+                               .deadBand_Hz = 0.1,
+                               .most_W = 5e7,
+                               .least_W = -2e7};
     // Inside the dead band the load alone answers: 20 MW/Hz.
     CHECK_THAT(steadyDeviation_Hz(spec, 1e6), WithinAbs(-0.05, 1e-9));
     // Beyond: 400 MW/Hz more.
@@ -162,8 +170,9 @@ TEST_CASE("Area: at rest it stays; a huge area does not move", "[area][limit]") 
     }
     CHECK(std::fabs(huge.deviation_Hz) < 1e-15);
     // Units locked to the frequency add their energy.
-    const AreaState heavy = advance(plain(1e9), {}, {.lostStart_W = 1e6, .lostEnd_W = 1e6,
-                                                     .step_s = 0.01, .extraEnergy_J = 1e9});
+    const AreaState heavy =
+        advance(plain(1e9), {},
+                {.lostStart_W = 1e6, .lostEnd_W = 1e6, .step_s = 0.01, .extraEnergy_J = 1e9});
     CHECK_THAT(heavy.rate_Hzs, WithinRel(initialRate_Hzs(plain(2e9), 1e6), 1e-12));
 }
 
@@ -180,17 +189,21 @@ TEST_CASE("Area: faults are named all at once", "[area][messages]") {
     AreaSpec spec;
     spec.loadDamping_1Hz = -0.1;
     spec.load_W = std::numeric_limits<double>::quiet_NaN();
-    spec.reserve = ReserveSpec{.power_W = 1e9, .droop = 0.0, .lag_s = -1.0, .deadBand_Hz = 0.0,
-                               .most_W = -5.0, .least_W = 3.0};
+    spec.reserve = ReserveSpec{.power_W = 1e9,
+                               .droop = 0.0,
+                               .lag_s = -1.0,
+                               .deadBand_Hz = 0.0,
+                               .most_W = -5.0,
+                               .least_W = 3.0};
     std::string said;
     for (const auto& finding : check(spec, "plant/grid/area")) {
         said += text(finding) + "\n";
     }
-    CHECK_THAT(said, ContainsSubstring("stored energy is") && ContainsSubstring("load is") &&
-                         ContainsSubstring("load damping is") &&
-                         ContainsSubstring("other reserve's droop") &&
-                         ContainsSubstring("other reserve's lag") &&
-                         ContainsSubstring("must hold zero"));
+    CHECK_THAT(said, ContainsSubstring("stored energy is") && ContainsSubstring("load is")
+                         && ContainsSubstring("load damping is")
+                         && ContainsSubstring("other reserve's droop")
+                         && ContainsSubstring("other reserve's lag")
+                         && ContainsSubstring("must hold zero"));
     CHECK(check(plain(45e9)).empty());
 }
 

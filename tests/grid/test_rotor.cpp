@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "grid/rotor.h"
-
 #include "grid/imposed.h"
+#include "grid/rotor.h"
 #include "support/catch.h"
 
 #include <cmath>
@@ -49,8 +48,7 @@ TEST_CASE("Rotor: swing of one machine on an infinite bus", "[rotor][analytic]")
     CHECK_THAT(std::log2(coarse / fine), WithinAbs(2.0, 0.05));
 }
 
-TEST_CASE("Rotor: at rest it carries its torque; off the grid it carries none",
-          "[rotor][limit]") {
+TEST_CASE("Rotor: at rest it carries its torque; off the grid it carries none", "[rotor][limit]") {
     const RotorSpec spec;
     RotorState state = rotorAtRest(spec, 0.9, 1.0);
     CHECK_THAT(torque_pu(spec, state), WithinAbs(0.9, 1e-15));

@@ -1,11 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "machines/messages.h"
-
-#include "plant_a.h"
 #include "support/catch.h"
 #include "units/text.h"
 
 #include <limits>
+
+#include "plant_a.h"
 
 using namespace headroom;
 using namespace headroom::machines;
@@ -32,15 +32,15 @@ TEST_CASE("Francis rating: all missing values are named at once", "[chart][messa
     r.ratedFlow_m3s = -60.0;
     r.ratedSpeed_rads = std::numeric_limits<double>::quiet_NaN();
     const std::string said = refusal(r);
-    CHECK_THAT(said, ContainsSubstring("rated head") && ContainsSubstring("rated flow") &&
-                         ContainsSubstring("rated speed") && ContainsSubstring("above zero"));
+    CHECK_THAT(said, ContainsSubstring("rated head") && ContainsSubstring("rated flow")
+                         && ContainsSubstring("rated speed") && ContainsSubstring("above zero"));
 }
 
 TEST_CASE("Francis rating: an impossible efficiency is refused", "[chart][messages]") {
     FrancisRating r = plantA();
     r.ratedPower_W = 140e6;
-    CHECK_THAT(refusal(r), ContainsSubstring("efficiency of 1.07") &&
-                               ContainsSubstring("Check rated head, flow and shaft power"));
+    CHECK_THAT(refusal(r), ContainsSubstring("efficiency of 1.07")
+                               && ContainsSubstring("Check rated head, flow and shaft power"));
     r.ratedPower_W = 40e6;
     CHECK_THAT(refusal(r), ContainsSubstring("efficiency of 0.306"));
 }
@@ -48,8 +48,8 @@ TEST_CASE("Francis rating: an impossible efficiency is refused", "[chart][messag
 TEST_CASE("Francis rating: speed or diameter of another kind of machine", "[chart][messages]") {
     FrancisRating r = plantA();
     r.runnerDiameter_m = 8.0;
-    CHECK_THAT(refusal(r), ContainsSubstring("Squared rim speed") &&
-                               ContainsSubstring("runner diameter"));
+    CHECK_THAT(refusal(r),
+               ContainsSubstring("Squared rim speed") && ContainsSubstring("runner diameter"));
 }
 
 TEST_CASE("Francis rating: targets out of range", "[chart][messages]") {
@@ -58,17 +58,17 @@ TEST_CASE("Francis rating: targets out of range", "[chart][messages]") {
     r.noLoadFlow_pu = 0.6;
     r.bestEfficiency_pu = 0.90; // below the rated efficiency
     const std::string said = refusal(r);
-    CHECK_THAT(said, ContainsSubstring("runaway speed") && ContainsSubstring("no-load flow") &&
-                         ContainsSubstring("best efficiency"));
+    CHECK_THAT(said, ContainsSubstring("runaway speed") && ContainsSubstring("no-load flow")
+                         && ContainsSubstring("best efficiency"));
 }
 
 TEST_CASE("Francis rating: data that no chart meets name the residual", "[chart][messages]") {
     FrancisRating r = plantA();
     r.runaway_pu = 1.3; // far below what the standstill flow allows
     const std::string said = refusal(r);
-    CHECK_THAT(said, ContainsSubstring("standstill flow comes out at 1.31") &&
-                         ContainsSubstring("where 1.150") &&
-                         ContainsSubstring("Move the standstill flow"));
+    CHECK_THAT(said, ContainsSubstring("standstill flow comes out at 1.31")
+                         && ContainsSubstring("where 1.150")
+                         && ContainsSubstring("Move the standstill flow"));
 }
 
 TEST_CASE("Francis rating: flow over stroke must rise from nothing to full", "[chart][messages]") {
@@ -94,6 +94,6 @@ TEST_CASE("Francis rating: low specific speed is refused, not bent", "[chart][me
     r.ratedPower_W = 0.92 * 9810.0 * 400.0 * 40.0;
     r.ratedSpeed_rads = 310.0 * constants::pi / 30.0;
     r.runnerDiameter_m = 4.0;
-    CHECK_THAT(refusal(r), ContainsSubstring("falls with rising flow") &&
-                               ContainsSubstring("runaway speed"));
+    CHECK_THAT(refusal(r),
+               ContainsSubstring("falls with rising flow") && ContainsSubstring("runaway speed"));
 }

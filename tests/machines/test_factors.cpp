@@ -1,12 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "machines/factors.h"
-
 #include "machines/francis_chart.h"
-#include "plant_a.h"
 #include "support/catch.h"
 
 #include <array>
 #include <cmath>
+
+#include "plant_a.h"
 
 using namespace headroom;
 using namespace headroom::machines;
@@ -14,8 +14,11 @@ using namespace headroom::machines;
 namespace {
 
 // Worked point used by the sources below.
-const TurbineDuty duty{.speed_rpm = 1000.0 / 3.0, .flow_m3s = 30.0, .head_m = 250.0,
-                       .diameter_m = 2.2, .efficiency = 0.92};
+const TurbineDuty duty{.speed_rpm = 1000.0 / 3.0,
+                       .flow_m3s = 30.0,
+                       .head_m = 250.0,
+                       .diameter_m = 2.2,
+                       .efficiency = 0.92};
 
 } // namespace
 
@@ -135,8 +138,9 @@ TEST_CASE("Linear coefficients of a Francis chart are those of its own steady po
     const LinearTurbine unit = linearTurbine(chart.at(q, 1.0, 1.0 / tau), tau);
     const double d = 1e-5;
     const auto slope = [&](double dh, double dn, double dy, double FrancisPoint::*what) {
-        return (chart.point(1.0 + dh, 1.0 + dn, tau + dy).*what -
-                chart.point(1.0 - dh, 1.0 - dn, tau - dy).*what) / (2.0 * d);
+        return (chart.point(1.0 + dh, 1.0 + dn, tau + dy).*what
+                - chart.point(1.0 - dh, 1.0 - dn, tau - dy).*what)
+               / (2.0 * d);
     };
     CHECK_THAT(unit.qH, WithinAbs(slope(d, 0, 0, &FrancisPoint::q), 1e-8));
     CHECK_THAT(unit.qX, WithinAbs(slope(0, d, 0, &FrancisPoint::q), 1e-8));

@@ -1,13 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "machines/francis_chart.h"
-
 #include "machines/francis_solve.h"
-#include "plant_a.h"
 #include "support/catch.h"
 
 #include <array>
 #include <cmath>
 #include <limits>
+
+#include "plant_a.h"
 
 using namespace headroom;
 using namespace headroom::machines;
@@ -76,9 +76,10 @@ TEST_CASE("Francis chart of plant A: no worse a fit than the printed parameters"
     printed.e2 = 0.107127;
     printed.frictionTurbine = 0.059431;
     const auto best = bestPoint(printed).value();
-    const std::array reached{runawayAt(printed, 1.0), pointOfTorque(printed, 0.0)->q,
-                             flowAt(printed, 1.0, 0.0, 1.0), best.m, best.efficiency(printed),
-                             pointOfTorque(printed, 0.5)->efficiency(printed)};
+    const std::array reached{
+        runawayAt(printed, 1.0),        pointOfTorque(printed, 0.0)->q,
+        flowAt(printed, 1.0, 0.0, 1.0), best.m,
+        best.efficiency(printed),       pointOfTorque(printed, 0.5)->efficiency(printed)};
     double theirs = 0.0, ours = 0.0;
     for (std::size_t i = 0; i < reached.size(); ++i) {
         const CalibrationRow& row = chartA().calibration()[i];
@@ -91,7 +92,7 @@ TEST_CASE("Francis chart of plant A: no worse a fit than the printed parameters"
 }
 
 TEST_CASE("Francis chart of plant A: efficiency over power", "[chart][reference]") {
-    const std::array rows{std::pair{0.30, 0.789}, std::pair{0.40, 0.844}, std::pair{0.50, 0.880},
+    const std::array rows{std::pair{0.30, 0.789}, std::pair{0.40, 0.844},  std::pair{0.50, 0.880},
                           std::pair{0.60, 0.906}, std::pair{0.70, 0.9245}, std::pair{0.80, 0.936},
                           std::pair{0.88, 0.939}, std::pair{1.00, 0.930}};
     for (const auto& [power, efficiency] : rows) {
@@ -201,8 +202,9 @@ TEST_CASE("Francis chart: slopes are those of the values in all quadrants", "[ch
                 const auto& form = chartA().form();
                 const ChartPoint p = form.at(q, n, c);
                 const auto slope = [&](double dq, double dn, double dc, double ChartPoint::*what) {
-                    return (form.at(q + dq, n + dn, c + dc).*what -
-                            form.at(q - dq, n - dn, c - dc).*what) / (2.0 * delta);
+                    return (form.at(q + dq, n + dn, c + dc).*what
+                            - form.at(q - dq, n - dn, c - dc).*what)
+                           / (2.0 * delta);
                 };
                 // Central differences: delta² times a third derivative of up to (c/δ)³.
                 const double near = 1e-6 * (1.0 + c * c);

@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "machines/ideal_units.h"
-
 #include "base/constants.h"
 #include "machines/factors.h"
+#include "machines/ideal_units.h"
 #include "machines/shaft.h"
 #include "support/catch.h"
 
@@ -24,22 +23,21 @@ TEST_CASE("Orifice unit: odd in head, resistance is its inverse", "[ideal][analy
 }
 
 TEST_CASE("Flow unit: the table, held outside", "[ideal][limit]") {
-    const FlowUnit unit{numerics::Table::make({0.0, 10.0}, {30.0, 0.0}, numerics::Outside::hold)
-                            .value()};
+    const FlowUnit unit{
+        numerics::Table::make({0.0, 10.0}, {30.0, 0.0}, numerics::Outside::hold).value()};
     CHECK(unit.at(-5.0) == 30.0);
     CHECK_THAT(unit.at(4.0), WithinAbs(18.0, 1e-12));
     CHECK(unit.at(99.0) == 0.0);
 }
 
 TEST_CASE("Power unit: constant ρgQH down to its lowest head", "[ideal][limit]") {
-    const PowerUnit unit{.power_W = 50e6, .density_kgm3 = 1000.0, .gravity_mps2 = 9.81,
-                         .lowestHead_m = 20.0};
+    const PowerUnit unit{
+        .power_W = 50e6, .density_kgm3 = 1000.0, .gravity_mps2 = 9.81, .lowestHead_m = 20.0};
     for (double head : {400.0, 100.0, 20.001}) {
         const auto flow = unit.at(head);
         CHECK_THAT(9810.0 * flow.flow_m3s * head, WithinRel(50e6, 1e-13));
         const double delta = 1e-5 * head;
-        const double difference =
-            (unit.at(head + delta).flow_m3s - flow.flow_m3s) / delta;
+        const double difference = (unit.at(head + delta).flow_m3s - flow.flow_m3s) / delta;
         CHECK_THAT(flow.slope_m2s, WithinRel(difference, 2e-5));
     }
     CHECK(unit.at(-3.0).belowLowest);
@@ -60,8 +58,8 @@ TEST_CASE("Ideal turbine below a rigid column: gate step and ramp", "[ideal][ana
             // h = (q − q_y y)/q_h, trapezoid.
             const double a = (q - unit.qY * gate(i * dt)) / unit.qH;
             const double share = 0.5 * dt / tw;
-            q = (q - share * (a - unit.qY * gate((i + 1) * dt) / unit.qH)) /
-                (1.0 + share / unit.qH);
+            q = (q - share * (a - unit.qY * gate((i + 1) * dt) / unit.qH))
+                / (1.0 + share / unit.qH);
         }
         const double h = (q - unit.qY * gate(until)) / unit.qH;
         return unit.mH * h + unit.mY * gate(until);
@@ -101,8 +99,9 @@ TEST_CASE("Ideal turbine below a rigid column: frequency response", "[ideal][ana
 TEST_CASE("Orifice unit on a rigid column: uniform closing and opening", "[ideal][analytic]") {
     // Source: constant head while an orifice moves uniformly on a rigid frictionless column,
     // h = ½K(K ± √(K² + 4)), K = T_w/T_c (Parmakian 1963; Chaudhry 2014; recomputed).
-    const std::array rows{std::array{0.1, 0.105125, -0.095125}, std::array{0.15, 0.161671, -0.139171},
-                          std::array{0.2, 0.220998, -0.180998}, std::array{0.3, 0.348356, -0.258356}};
+    const std::array rows{
+        std::array{0.1, 0.105125, -0.095125}, std::array{0.15, 0.161671, -0.139171},
+        std::array{0.2, 0.220998, -0.180998}, std::array{0.3, 0.348356, -0.258356}};
     const OrificeUnit unit{.ratedHead_m = 1.0, .ratedFlow_m3s = 1.0};
     for (const auto& [k, rise, fall] : rows) {
         // T_w dq/dt = 1 − H(q, τ); per unit of closing time, implicit Euler with a fine step: the
@@ -177,8 +176,7 @@ TEST_CASE("Shaft: starting time, GD² and energy", "[shaft][analytic]") {
     // T_a = GD²[t m²] n²/(364.756 P[kW])
     CHECK_THAT(4000.0 * 333.333 * 333.333 / (364.756 * 100e3),
                WithinRel(accelerationTime_s(1.0e6, speed_rads, 100e6), 2e-6));
-    CHECK_THAT(inertiaFromAccelerationTime(8.0, speed_rads, 67.689e6),
-               WithinRel(444419.758, 1e-8));
+    CHECK_THAT(inertiaFromAccelerationTime(8.0, speed_rads, 67.689e6), WithinRel(444419.758, 1e-8));
     CHECK_THAT(rebase(7.0, 100e6, 90e6), WithinRel(7.777778, 1e-6));
     CHECK_THAT(kineticEnergy_J(709248.29, 31.415927), WithinRel(350e6, 1e-7));
 }

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "numerics/table.h"
-
 #include "numerics/messages.h"
+#include "numerics/table.h"
 #include "support/catch.h"
 #include "units/text.h"
 
