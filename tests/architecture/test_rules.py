@@ -26,6 +26,10 @@ SOUND = {
     "engine/simulation/run.h": HEADER + '#include "plant/pipe.h"\n',
     "app/drawing/look.h": HEADER + 'const QColor ink("#102030");\n',
     "app/desk/window.cpp": f"// {SPDX}\n#include <QMessageBox>\nQMessageBox box(this);\n",
+    "app/desk/lanes.h": HEADER + "#include <qcustomplot.h>\n",
+    "app/desk/lane_a.cpp": f'// {SPDX}\n#include "desk/lanes.h"\n',
+    "app/desk/lane_b.cpp": f'// {SPDX}\n#include "desk/lanes.h"\n',
+    "app/desk/lane_c.cpp": f'// {SPDX}\n#include "qcustomplot.h"\n',
     "tests/plant/pipe_test.cpp": f"// {SPDX}\n// pipe, ground, run\n",
     "packaging/start.sh": f"# {SPDX}\n",
 }
@@ -55,10 +59,7 @@ FAULTS = {
         ("app/desk/window.cpp", "painter.setPen(Qt::darkGray);\n", 4),
     ],
     "message_boxes": [("app/desk/window.cpp", "QMessageBox::warning(this);\n", 4)],
-    "plot_header": [
-        ("app/desk/lanes.h", HEADER + "#include <qcustomplot.h>\n", 3),
-        ("app/desk/window.cpp", "#include <qcustomplot.h>\n" * 4, 7),
-    ],
+    "plot_header": [("app/desk/window.cpp", '#include <qcustomplot.h>\n', 4)],
     "unfinished": [
         ("engine/plant/pipe.cpp", "// T" + "ODO later\n", 4),
         ("packaging/start.sh", "# a st" + "ub\n", 2),
