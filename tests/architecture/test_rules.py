@@ -29,7 +29,7 @@ SOUND = {
     "app/desk/lanes.h": HEADER + "#include <qcustomplot.h>\n",
     "app/desk/lane_a.cpp": f'// {SPDX}\n#include "desk/lanes.h"\n',
     "app/desk/lane_b.cpp": f'// {SPDX}\n#include "desk/lanes.h"\n',
-    "app/desk/lane_c.cpp": f'// {SPDX}\n#include "qcustomplot.h"\n',
+    "app/desk/lane_c.cpp": f'// {SPDX}\n#include <qcustomplot.h>\n',
     "tests/plant/pipe_test.cpp": f"// {SPDX}\n// pipe, ground, run\n",
     "packaging/start.sh": f"# {SPDX}\n",
 }
