@@ -2,7 +2,6 @@
 # headroom_test(<name> SOURCES a.cpp ... USES plant ... LINKS Qt6::Test ...)
 # makes test_<name>, registered with ctest under the same name.
 find_package(Catch2 REQUIRED)
-set(HEADROOM_TIMEOUT_FACTOR 1 CACHE STRING "Times longer than usual that a test may take")
 
 function(headroom_test name)
   cmake_parse_arguments(TEST "" "TIMEOUT" "SOURCES;USES;LINKS;LABELS" ${ARGN})
