@@ -314,6 +314,26 @@ void ElasticRows::setEnd(ElasticState& state, std::size_t conduit, double head_m
     state.lastFlow_[node] = flow_m3s;
 }
 
+void ElasticRows::jumpStart(ElasticState& state, std::size_t conduit, double head_m,
+                            double flow_m3s) const {
+    const std::size_t node = rows_[conduit].firstNode;
+    const Cell& cell = firstCell(conduit);
+    state.nextRight_[node] = head_m + cell.impedance * flow_m3s - 0.5 * cell.loss(flow_m3s);
+    state.nextLeft_[node] = head_m;
+    state.head_[node] = head_m;
+    state.lastFlow_[node] = flow_m3s;
+}
+
+void ElasticRows::jumpEnd(ElasticState& state, std::size_t conduit, double head_m,
+                          double flow_m3s) const {
+    const std::size_t node = rows_[conduit].firstNode + rows_[conduit].cells;
+    const Cell& cell = lastCell(conduit);
+    state.nextLeft_[node] = head_m - cell.impedance * flow_m3s + 0.5 * cell.loss(flow_m3s);
+    state.nextRight_[node] = head_m;
+    state.head_[node] = head_m;
+    state.lastFlow_[node] = flow_m3s;
+}
+
 void ElasticRows::advance(ElasticState& state) const {
     std::swap(state.right_, state.nextRight_);
     std::swap(state.left_, state.nextLeft_);

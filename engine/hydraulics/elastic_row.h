@@ -117,6 +117,12 @@ public:
     const EndLaw& endLaw(const ElasticState& state, std::size_t conduit) const;
     void setStart(ElasticState& state, std::size_t conduit, double head_m, double flow_m3s) const;
     void setEnd(ElasticState& state, std::size_t conduit, double head_m, double flow_m3s) const;
+    /// What is prescribed at an end jumps at the present instant, after `setStart`/`setEnd`: the
+    /// arriving wave stays, so the head jumps by ±B times the discharge, without friction.
+    double startImpedance_sm2(std::size_t conduit) const { return firstCell(conduit).impedance; }
+    double endImpedance_sm2(std::size_t conduit) const { return lastCell(conduit).impedance; }
+    void jumpStart(ElasticState& state, std::size_t conduit, double head_m, double flow_m3s) const;
+    void jumpEnd(ElasticState& state, std::size_t conduit, double head_m, double flow_m3s) const;
     /// The new time becomes the present one.
     void advance(ElasticState& state) const;
 

@@ -10,8 +10,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 constexpr double sliver = 1e-6; // of a step: the time a jump takes
 constexpr double mostJump = 1e4; // of the plant's head; more means that nothing can give way
 
@@ -171,15 +169,19 @@ void Advance::setKnownHeads(double time_s, bool after) {
     }
 }
 
-/// Imposed: exact at the new time. Area: straight on from the last two instants, because it
-/// follows from the powers of this step.
+/// Imposed, or imposed on the area by the study: exact at the new time. Else that of the area:
+/// straight on from the last two instants, because it follows from the powers of this step.
 double Advance::frequencyAt(double time_s, bool after) const {
-    if (model_.area) {
+    if (areaRules(time_s)) {
         return after ? state_.frequency_Hz
                      : 2.0 * state_.frequency_Hz - state_.frequencyBefore_Hz;
     }
     const Prescription& imposed = state_.schedule.frequency_Hz;
     return after ? imposed.valueAfter(time_s) : imposed.value(time_s);
+}
+
+bool Advance::areaRules(double time_s) const {
+    return model_.area && !state_.schedule.frequency_Hz.givenAt(time_s);
 }
 
 void Advance::fillUnitSteps(double time_s, bool after) {
@@ -220,7 +222,7 @@ void Advance::advanceGrid(double start_s, double end_s) {
     const double before = state_.frequency_Hz;
     state_.frequencyBefore_Hz = before;
     const double own = gridPower_W();
-    if (model_.area) {
+    if (areaRules(end_s)) {
         const double step = end_s - start_s;
         double lostMean = state_.lost_W;
         for (const Loss& loss : state_.schedule.losses) {
@@ -274,7 +276,7 @@ void Advance::settleJump(double time_s) {
     for (UnitStep& unit : unitSteps_) {
         unit.backwardEuler = true;
     }
-    const bool solved = water_.solve(state_, unitSteps_, step, true);
+    const bool solved = water_.solve(state_, unitSteps_, step, WaterStep::Mode::jump);
     double worst = 0.0;
     for (std::size_t i = 0; i < model_.nodes.size(); ++i) {
         if (!model_.nodes[i].known()) {
@@ -306,7 +308,8 @@ bool Advance::step() {
     for (UnitStep& unit : unitSteps_) {
         unit.backwardEuler = euler;
     }
-    if (!water_.solve(state_, unitSteps_, step, euler)) {        // 4, 5, 6
+    if (!water_.solve(state_, unitSteps_, step,                   // 4, 5, 6
+                      euler ? WaterStep::Mode::kink : WaterStep::Mode::smooth)) {
         return false;
     }
     water_.accept(state_, unitSteps_, step);                     // 7
@@ -338,7 +341,7 @@ Finding Advance::failure() const {
     const ClusterFailure& why = water_.failure();
     Finding out{.message = &clusterUnsolved,
                 .subject = why.where.empty() ? std::string("plant") : why.where,
-                .time_s = state_.time_s};
+                .time_s = std::max(0.0, state_.time_s)};
     std::string names;
     for (const auto& [path, residual] : why.residuals) {
         out.related.push_back(path);

@@ -42,6 +42,7 @@ private:
     void placeMachines();
     void placeSchedule();
     void setKnownHeads(double time_s, bool after);
+    bool areaRules(double time_s) const;
     double frequencyAt(double time_s, bool after) const;
     void fillUnitSteps(double time_s, bool after);
     bool modeChanges() const;

@@ -7,8 +7,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 /// Value → scale·value + shift with scale > 0, which keeps extremes extremes.
 results::Channel derived(const results::Channel& from, Measure measure, double scale,
                          double shift) {

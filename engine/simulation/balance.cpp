@@ -7,8 +7,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 } // namespace
 
 BalanceKeeper::BalanceKeeper(const Model& model) : model_(model) {

@@ -12,8 +12,6 @@ namespace {
 
 using results::Thing;
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 constexpr int mostStations = 40;
 
 /// Cells at which heads are kept: evenly spread, and those nearest to corners and reach ends.

@@ -10,8 +10,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 /// Joins sets of nodes that one inertia or one unit connects.
 class Sets {
 public:

@@ -10,8 +10,8 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
+constexpr double chatterWindow_s = 1.0;
+constexpr int mostChanges = 20;
 constexpr double rounding = 1e-9; // of a step: an instant at a step's end belongs to the next
 
 bool inStep(double time, double start, double step) {
@@ -242,6 +242,22 @@ void GateControl::protect(State& state, int unit) {
     }
 }
 
+/// A gate that seats and leaves its seat again and again within one second of the plant's time.
+void GateControl::countChanges(State& state, int unit) {
+    ControlState& control = state.controls[at(unit)];
+    if ((control.opening > 0.0) == (control.openingBefore > 0.0) || control.chattered) {
+        return;
+    }
+    if (state.time_s - control.changesSince_s > chatterWindow_s) {
+        control.changesSince_s = state.time_s;
+        control.modeChanges = 0;
+    }
+    if (++control.modeChanges > mostChanges) {
+        control.chattered = true;
+        state.incidents.push_back(incident(chatters, model_.unitPath[at(unit)], state.time_s));
+    }
+}
+
 void GateControl::afterWater(State& state) {
     for (int i = 0; i < static_cast<int>(model_.units.size()); ++i) {
         ControlState& control = state.controls[at(i)];
@@ -253,11 +269,13 @@ void GateControl::afterWater(State& state) {
             machine.onGrid = true;
             machine.rotor =
                 grid::rotorAtClosing(machine.speed, state.frequency_Hz / model_.nominal_Hz);
+            machine.electrical = grid::torque_pu(row.rotor, machine.rotor) * row.electricalScale;
             state.incidents.push_back(
                 incident(unitJoined, model_.unitPath[at(i)], state.time_s));
         }
         control.joining = false;
         protect(state, i);
+        countChanges(state, i);
     }
 }
 

@@ -28,6 +28,7 @@ private:
     double wanted(State& state, int unit, double time_s, double step_s);
     void trip(State& state, int unit, double time_s);
     void protect(State& state, int unit);
+    void countChanges(State& state, int unit);
     std::vector<control::LoadOrder> loadOrders(State& state, const RestPoint& rest, int unit);
 
     const Model& model_;

@@ -6,7 +6,7 @@ namespace headroom::simulation {
 std::span<const Message* const> messages() {
     static constexpr const Message* all[] = {
         &twoReservoirs, &chamberAtReservoir, &chamberAlone, &conduitWithoutLength, &lossNeedsArea,
-        &frequencyNeedsImposed, &flowNeedsFlowUnit, &eventWithoutTime, &outputAndOpening,
+        &flowNeedsFlowUnit, &eventWithoutTime, &outputAndOpening,
         &startNeedsGate, &noRest, &outputStoppedByGate, &outputPastTurn, &chamberRestOutside,
         &restMoves, &stepChosen, &sampleTimesNotDivided, &elasticChosen, &rigidChosen,
         &shortElementChosen, &stretchedSome, &stretchedMuch, &clusterUnsolved, &valueNotFinite,

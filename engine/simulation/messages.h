@@ -28,10 +28,6 @@ inline constexpr Message lossNeedsArea{
     "simulation.loss-needs-area", Severity::error,
     "Generation is lost in the area, but the grid's frequency is imposed.",
     "Describe the grid as an area, or impose the frequency that the loss would cause."};
-inline constexpr Message frequencyNeedsImposed{
-    "simulation.frequency-needs-imposed", Severity::error,
-    "A frequency is imposed, but the grid is an area whose frequency follows from its powers.",
-    "Describe the grid as imposed, or lose generation in the area instead."};
 inline constexpr Message flowNeedsFlowUnit{
     "simulation.flow-needs-flow-unit", Severity::error,
     "A discharge is ordered from a unit whose discharge follows from its gate.",

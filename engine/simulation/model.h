@@ -27,6 +27,9 @@
 /// `State`.
 namespace headroom::simulation {
 
+/// Position of a counted thing in its array.
+inline std::size_t at(int index) { return static_cast<std::size_t>(index); }
+
 /// A place with one energy level: a declared point, or a reservoir that stands at no point.
 struct Node {
     results::Thing thing = results::Thing::point;

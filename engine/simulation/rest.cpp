@@ -13,8 +13,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 constexpr double watched_s = 100.0;
 constexpr double mayMove = 1e-6; // m, and of rated flow
 

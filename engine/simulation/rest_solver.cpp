@@ -14,7 +14,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
 using numerics::signedSquare;
 
 constexpr int mostIterations = 60;
@@ -313,8 +312,8 @@ int unitAtLimit(const Model& model, const RestAsked& asked, const RestPoint& poi
 
 Amount watts(double value) { return {static_cast<int>(Quantity::power), value}; }
 
-Finding notReached(const Model& model, const RestAsked& asked, const RestPoint& best,
-                   bool byGate) {
+/// The gate stops it if it is nearly open as far as it may; else power turned over opening.
+Finding notReached(const Model& model, const RestAsked& asked, const RestPoint& best) {
     int worst = 0;
     for (std::size_t i = 0; i < model.units.size(); ++i) {
         if (asked.output_W[i] && *asked.output_W[i] > 0.0) {
@@ -322,6 +321,8 @@ Finding notReached(const Model& model, const RestAsked& asked, const RestPoint& 
         }
     }
     const double level = largest(model.reservoirLevel_m);
+    constexpr double nearly = 0.02; // the last step of the search is shorter than that
+    const bool byGate = best.opening[at(worst)] > model.units[at(worst)].openingLimit - nearly;
     return {.message = byGate ? &outputStoppedByGate : &outputPastTurn,
             .subject = model.unitPath[at(worst)],
             .arguments = {{"level", Amount{static_cast<int>(Quantity::elevation), level}},
@@ -361,10 +362,9 @@ Result<RestPoint> solveRest(const Model& model, const RestAsked& asked) {
         return Finding{.message = &noRest, .subject = "plant"};
     }
     if (unitAtLimit(model, trial, point) >= 0) {
-        return notReached(model, trial, point, true);
+        return notReached(model, trial, point);
     }
     double share = firstShare, step = shareStep;
-    bool byGate = false;
     while (share < 1.0) {
         RestPoint next = point;
         const double target = std::min(1.0, share + step);
@@ -375,10 +375,9 @@ Result<RestPoint> solveRest(const Model& model, const RestAsked& asked) {
             share = target;
             continue;
         }
-        byGate = byGate || solved;
         step *= 0.5;
         if (step < leastShareStep) {
-            return notReached(model, trial, point, byGate);
+            return notReached(model, trial, point);
         }
     }
     return point;

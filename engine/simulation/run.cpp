@@ -78,7 +78,10 @@ public:
     }
 
     void assemble(const State& state, results::Run& out) {
-        const std::int64_t last = std::max<std::int64_t>(state.step, 0);
+        const std::int64_t last = state.step;
+        if (last < 0) {
+            return; // not even the first instant was reached
+        }
         watch_.finish(last);
         record_.finish();
         out.channels =

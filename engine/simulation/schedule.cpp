@@ -77,9 +77,6 @@ struct Reader {
         out.losses.push_back({time_s, event.power_W});
     }
     void operator()(const plant::ImposedFrequency& event) {
-        if (!std::holds_alternative<plant::ImposedGrid>(plant.grid)) {
-            findings.push_back({&frequencyNeedsImposed, path, {}, {}, {}, {}, {}});
-        }
         prescribe(out.frequency_Hz, event.table);
     }
     void operator()(const plant::OpeningOrder& event) {

@@ -110,6 +110,56 @@ void solvePowerSpeed(const UnitRow& unit, double power, MachineWork& work) {
     work.torque = work.n > 0.0 ? power / work.n : 0.0;
 }
 
+/// Head on the runner, torque and shaft power at the solved point.
+void acceptTurbine(const Model& model, const UnitRow& unit, double drop, MachineWork& work,
+                   MachineState& state) {
+    const double flow = work.flow_m3s;
+    if (unit.kind == UnitKind::francis) {
+        if (work.shut) {
+            solveShutSpeed(unit, work);
+        } else {
+            state.x = work.q * work.c;
+        }
+        state.runnerHead_m = unit.headScale_m * work.head;
+        state.shaftPower_W = work.torque * work.n * unit.powerScale_W;
+        return;
+    }
+    const bool orifice = unit.kind == UnitKind::orifice;
+    const double inertial = orifice ? work.w0_m - work.linear_sm2 * flow : 0.0;
+    state.runnerHead_m = drop - unit.exitLoss_s2m5 * numerics::signedSquare(flow) + inertial;
+    const double water = model.medium.density_kgm3 * model.medium.gravity_mps2 * flow *
+                         state.runnerHead_m;
+    state.shaftPower_W = flow > 0.0 ? (orifice ? unit.orifice.efficiency : 1.0) * water : 0.0;
+    solvePowerSpeed(unit, state.shaftPower_W / unit.powerScale_W, work);
+}
+
+/// What the generator takes from the shaft and gives to the grid.
+void acceptGenerator(const UnitRow& unit, const UnitStep& step, double speedBefore,
+                     const MachineWork& work, MachineState& state) {
+    if (step.tripFraction >= 0.0) {
+        state.onGrid = false;
+        state.rotor.onGrid = false;
+    }
+    if (!state.onGrid) {
+        state.electrical = 0.0;
+        state.terminalPower_W = 0.0;
+        return;
+    }
+    double power = state.shaftPower_W;
+    if (unit.freeShaft() && unit.rotor.locked) {
+        state.electrical = work.torque - (work.n - speedBefore) / step.step_s *
+                                             unit.accelerationTime_s();
+        power = state.electrical * work.n * unit.powerScale_W;
+    } else if (unit.freeShaft()) {
+        state.electrical = work.electricalConstant + work.electricalSlope * work.n;
+        state.rotor =
+            grid::rotorAfter(unit.rotor, state.rotor, work.n, step.frequency_pu, step.step_s);
+        power = state.electrical * work.n * unit.powerScale_W;
+    }
+    const double efficiency = unit.generatorEfficiency;
+    state.terminalPower_W = power * (power >= 0.0 ? efficiency : 1.0 / efficiency);
+}
+
 } // namespace
 
 void prepareUnit(const UnitRow& unit, const MachineState& state, const UnitStep& step,
@@ -211,61 +261,15 @@ bool solveAlone(const Model& model, const UnitRow& unit, double drop, MachineWor
 }
 
 void acceptUnit(const Model& model, const UnitRow& unit, const UnitStep& step, double drop,
-                const MachineWork& solved, MachineState& state) {
-    MachineWork work = solved;
-    const double flow = work.flow_m3s;
-    const double net = drop - unit.exitLoss_s2m5 * numerics::signedSquare(flow);
+                MachineWork& work, MachineState& state) {
     state.flowBefore_m3s = state.flow_m3s;
-    state.flow_m3s = flow;
+    state.flow_m3s = work.flow_m3s;
     state.xBefore = state.x;
-    if (unit.kind == UnitKind::francis) {
-        if (work.shut) {
-            solveShutSpeed(unit, work);
-        }
-        state.x = work.shut ? state.x : work.q * work.c;
-        state.runnerHead_m = unit.headScale_m * work.head;
-    } else {
-        const double efficiency = unit.kind == UnitKind::orifice ? unit.orifice.efficiency : 1.0;
-        const double inertial = unit.kind == UnitKind::orifice
-                                    ? work.w0_m - work.linear_sm2 * flow : 0.0;
-        state.runnerHead_m = net + inertial;
-        const double water = model.medium.density_kgm3 * model.medium.gravity_mps2 * flow *
-                             state.runnerHead_m;
-        const double power = flow > 0.0 ? efficiency * water : 0.0;
-        solvePowerSpeed(unit, power / unit.powerScale_W, work);
-        state.shaftPower_W = power;
-    }
-    const double old = state.speed;
+    acceptTurbine(model, unit, drop, work, state);
     state.speedBefore = state.speed;
     state.speed = work.n;
     state.torque = work.torque;
-    if (unit.turns() && unit.kind == UnitKind::francis) {
-        state.shaftPower_W = work.torque * work.n * unit.powerScale_W;
-    }
-    if (step.tripFraction >= 0.0) {
-        state.onGrid = false;
-        state.rotor.onGrid = false;
-    }
-    if (!state.onGrid) {
-        state.electrical = 0.0;
-        state.terminalPower_W = 0.0;
-        return;
-    }
-    if (!unit.freeShaft()) {
-        state.terminalPower_W = state.shaftPower_W;
-    } else if (unit.rotor.locked) {
-        const double acceleration =
-            step.step_s > 0.0 ? (work.n - old) / step.step_s * unit.accelerationTime_s() : 0.0;
-        state.electrical = work.torque - acceleration;
-        state.terminalPower_W = state.electrical * work.n * unit.powerScale_W;
-    } else {
-        state.electrical = work.electricalConstant + work.electricalSlope * work.n;
-        state.rotor =
-            grid::rotorAfter(unit.rotor, state.rotor, work.n, step.frequency_pu, step.step_s);
-        state.terminalPower_W = state.electrical * work.n * unit.powerScale_W;
-    }
-    const double efficiency = unit.generatorEfficiency;
-    state.terminalPower_W *= state.terminalPower_W >= 0.0 ? efficiency : 1.0 / efficiency;
+    acceptGenerator(unit, step, state.speedBefore, work, state);
 }
 
 } // namespace headroom::simulation

@@ -34,6 +34,6 @@ bool solveAlone(const Model& model, const UnitRow& unit, double drop_m, MachineW
 
 /// Puts the solved iterate into the machine's state at the new time.
 void acceptUnit(const Model& model, const UnitRow& unit, const UnitStep& step, double drop_m,
-                const MachineWork& work, MachineState& state);
+                MachineWork& work, MachineState& state);
 
 } // namespace headroom::simulation

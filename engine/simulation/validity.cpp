@@ -14,8 +14,6 @@ namespace {
 
 using results::Thing;
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 constexpr int stepsWatched = 64; // rows are compared with boiling once in so many steps
 
 } // namespace

@@ -9,8 +9,6 @@
 namespace headroom::simulation {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
-
 constexpr int mostIterations = 12;
 constexpr int mostRobust = 200;
 constexpr double headTolerance = 1e-12;   // of the plant's head
@@ -71,38 +69,40 @@ double WaterStep::drop(const State& state, const UnitRow& unit) const {
     return state.head_m[at(unit.inlet)] - state.head_m[at(unit.outlet)];
 }
 
-void WaterStep::prepareBranches(State& state, double step_s, bool backwardEuler) {
-    for (std::size_t i = 0; i < model_.branches.size(); ++i) {
-        const BranchRow& row = model_.branches[i];
-        const ConduitRow& conduit = model_.conduits[at(row.conduit)];
-        const EndLoss& from = conduit.geometry.from;
-        const EndLoss& to = conduit.geometry.to;
-        BranchState& branch = state.branches[i];
-        if (row.kind == BranchKind::rigid) {
-            const double inertia = conduit.inertia_s2m2 / step_s;
-            const double expected =
-                backwardEuler ? branch.now_m3s : 2.0 * branch.now_m3s - branch.before_m3s;
-            const double friction = conduit.quadratic_s2m5(expected);
-            branch.w0_m = backwardEuler
-                              ? inertia * branch.now_m3s
-                              : inertia * (2.0 * branch.now_m3s - 0.5 * branch.before_m3s);
-            branch.linear_sm2 = (backwardEuler ? 1.0 : 1.5) * inertia + conduit.linear_sm2;
-            branch.forward_s2m5 =
-                friction + conduit.forward_s2m5 + from.leaving_s2m5 + to.arriving_s2m5;
-            branch.reverse_s2m5 =
-                friction + conduit.reverse_s2m5 + from.arriving_s2m5 + to.leaving_s2m5;
-            continue;
-        }
-        const bool start = row.kind == BranchKind::elasticStart;
-        const auto& law = start ? model_.rows.startLaw(state.elastic, at(conduit.row))
-                                : model_.rows.endLaw(state.elastic, at(conduit.row));
-        branch.w0_m = start ? -law.arriving_m : law.arriving_m;
-        branch.linear_sm2 = law.linear_sm2;
-        branch.forward_s2m5 =
-            law.forward_s2m5 + (start ? from.leaving_s2m5 : to.arriving_s2m5);
-        branch.reverse_s2m5 =
-            law.reverse_s2m5 + (start ? from.arriving_s2m5 : to.leaving_s2m5);
+void WaterStep::prepareRigid(BranchState& branch, const ConduitRow& conduit) const {
+    const EndLoss& from = conduit.geometry.from;
+    const EndLoss& to = conduit.geometry.to;
+    const double inertia = conduit.inertia_s2m2 / step_;
+    const bool smooth = mode_ == Mode::smooth;
+    const double expected = smooth ? 2.0 * branch.now_m3s - branch.before_m3s : branch.now_m3s;
+    const double friction = conduit.quadratic_s2m5(expected);
+    branch.w0_m = smooth ? inertia * (2.0 * branch.now_m3s - 0.5 * branch.before_m3s)
+                         : inertia * branch.now_m3s;
+    branch.linear_sm2 = (smooth ? 1.5 : 1.0) * inertia + conduit.linear_sm2;
+    branch.forward_s2m5 = friction + conduit.forward_s2m5 + from.leaving_s2m5 + to.arriving_s2m5;
+    branch.reverse_s2m5 = friction + conduit.reverse_s2m5 + from.arriving_s2m5 + to.leaving_s2m5;
+}
+
+void WaterStep::prepareEnd(State& state, const BranchRow& row, BranchState& branch) const {
+    const ConduitRow& conduit = model_.conduits[at(row.conduit)];
+    const auto elastic = at(conduit.row);
+    const bool start = row.kind == BranchKind::elasticStart;
+    const EndLoss& loss = start ? conduit.geometry.from : conduit.geometry.to;
+    hydraulics::EndLaw law;
+    if (mode_ == Mode::jump) { // the wave that arrives at this very instant
+        const auto i = at(row.conduit);
+        law.linear_sm2 = start ? model_.rows.startImpedance_sm2(elastic)
+                               : model_.rows.endImpedance_sm2(elastic);
+        law.arriving_m = start ? state.startHead_m[i] - law.linear_sm2 * state.startFlow_m3s[i]
+                               : state.endHead_m[i] + law.linear_sm2 * state.endFlow_m3s[i];
+    } else {
+        law = start ? model_.rows.startLaw(state.elastic, elastic)
+                    : model_.rows.endLaw(state.elastic, elastic);
     }
+    branch.w0_m = start ? -law.arriving_m : law.arriving_m;
+    branch.linear_sm2 = law.linear_sm2;
+    branch.forward_s2m5 = law.forward_s2m5 + (start ? loss.leaving_s2m5 : loss.arriving_s2m5);
+    branch.reverse_s2m5 = law.reverse_s2m5 + (start ? loss.arriving_s2m5 : loss.leaving_s2m5);
 }
 
 void WaterStep::prepareUnits(State& state, const std::vector<UnitStep>& units) {
@@ -115,7 +115,7 @@ void WaterStep::guessHeads(State& state, const Cluster& cluster) {
     for (const int node : cluster.nodes) {
         const double now = state.head_m[at(node)];
         const double before = state.headBefore_m[at(node)];
-        state.head_m[at(node)] = euler_ ? now : 2.0 * now - before;
+        state.head_m[at(node)] = mode_ == Mode::smooth ? 2.0 * now - before : now;
         state.headBefore_m[at(node)] = now;
     }
 }
@@ -372,10 +372,17 @@ void WaterStep::closeBalance(State& state, const Cluster& cluster) {
 }
 
 bool WaterStep::solve(State& state, const std::vector<UnitStep>& units, double step_s,
-                      bool backwardEuler) {
+                      Mode mode) {
     step_ = step_s;
-    euler_ = backwardEuler;
-    prepareBranches(state, step_s, backwardEuler);
+    mode_ = mode;
+    for (std::size_t i = 0; i < model_.branches.size(); ++i) {
+        const BranchRow& row = model_.branches[i];
+        if (row.kind == BranchKind::rigid) {
+            prepareRigid(state.branches[i], model_.conduits[at(row.conduit)]);
+        } else {
+            prepareEnd(state, row, state.branches[i]);
+        }
+    }
     prepareUnits(state, units);
     for (std::size_t i = 0; i < model_.clusters.size(); ++i) {
         const Cluster& cluster = model_.clusters[i];
@@ -392,34 +399,52 @@ bool WaterStep::solve(State& state, const std::vector<UnitStep>& units, double s
     return true;
 }
 
+void WaterStep::handBackRigid(State& state, std::size_t i) {
+    const ConduitRow& conduit = model_.conduits[i];
+    const EndLoss& from = conduit.geometry.from;
+    const EndLoss& to = conduit.geometry.to;
+    const double flow = state.startFlow_m3s[i];
+    const double square = flow * std::fabs(flow);
+    state.startHead_m[i] = state.head_m[at(conduit.from)] -
+                           (flow >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
+    state.endHead_m[i] = state.head_m[at(conduit.to)] +
+                         (flow >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
+}
+
+void WaterStep::handBackElastic(State& state, std::size_t i) {
+    const ConduitRow& conduit = model_.conduits[i];
+    const auto row = at(conduit.row);
+    const double start = state.startFlow_m3s[i];
+    const double end = state.endFlow_m3s[i];
+    if (mode_ == Mode::jump) {
+        const BranchState& a = state.branches[at(model_.startBranch[i])];
+        const BranchState& b = state.branches[at(model_.endBranch[i])];
+        state.startHead_m[i] = -a.w0_m + a.linear_sm2 * start;
+        state.endHead_m[i] = b.w0_m - b.linear_sm2 * end;
+        model_.rows.jumpStart(state.elastic, row, state.startHead_m[i], start);
+        model_.rows.jumpEnd(state.elastic, row, state.endHead_m[i], end);
+        return;
+    }
+    const auto& a = model_.rows.startLaw(state.elastic, row);
+    const auto& b = model_.rows.endLaw(state.elastic, row);
+    const double aQuadratic = start >= 0.0 ? a.forward_s2m5 : a.reverse_s2m5;
+    const double bQuadratic = end >= 0.0 ? b.forward_s2m5 : b.reverse_s2m5;
+    state.startHead_m[i] = a.arriving_m + (a.linear_sm2 + aQuadratic * std::fabs(start)) * start;
+    state.endHead_m[i] = b.arriving_m - (b.linear_sm2 + bQuadratic * std::fabs(end)) * end;
+    model_.rows.setStart(state.elastic, row, state.startHead_m[i], start);
+    model_.rows.setEnd(state.elastic, row, state.endHead_m[i], end);
+}
+
 /// Heads at the ends follow from the discharges by the conduits' own laws.
 void WaterStep::handBack(State& state) {
     for (std::size_t i = 0; i < model_.conduits.size(); ++i) {
-        const ConduitRow& conduit = model_.conduits[i];
-        const double start = state.branches[at(model_.startBranch[i])].flow_m3s;
-        const double end = state.branches[at(model_.endBranch[i])].flow_m3s;
-        state.startFlow_m3s[i] = start;
-        state.endFlow_m3s[i] = end;
-        if (conduit.kind != ConduitKind::elastic) {
-            const EndLoss& from = conduit.geometry.from;
-            const EndLoss& to = conduit.geometry.to;
-            const double square = start * std::fabs(start);
-            state.startHead_m[i] = state.head_m[at(conduit.from)] -
-                                   (start >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
-            state.endHead_m[i] = state.head_m[at(conduit.to)] +
-                                 (end >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
-            continue;
+        state.startFlow_m3s[i] = state.branches[at(model_.startBranch[i])].flow_m3s;
+        state.endFlow_m3s[i] = state.branches[at(model_.endBranch[i])].flow_m3s;
+        if (model_.conduits[i].kind == ConduitKind::elastic) {
+            handBackElastic(state, i);
+        } else {
+            handBackRigid(state, i);
         }
-        const auto row = at(conduit.row);
-        const auto& a = model_.rows.startLaw(state.elastic, row);
-        const auto& b = model_.rows.endLaw(state.elastic, row);
-        const double aQuadratic = start >= 0.0 ? a.forward_s2m5 : a.reverse_s2m5;
-        const double bQuadratic = end >= 0.0 ? b.forward_s2m5 : b.reverse_s2m5;
-        state.startHead_m[i] =
-            a.arriving_m + (a.linear_sm2 + aQuadratic * std::fabs(start)) * start;
-        state.endHead_m[i] = b.arriving_m - (b.linear_sm2 + bQuadratic * std::fabs(end)) * end;
-        model_.rows.setStart(state.elastic, row, state.startHead_m[i], start);
-        model_.rows.setEnd(state.elastic, row, state.endHead_m[i], end);
     }
 }
 

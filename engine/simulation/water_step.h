@@ -22,11 +22,15 @@ class WaterStep {
 public:
     explicit WaterStep(const Model& model);
 
+    enum class Mode {
+        smooth, ///< rigid inertia by the two-step formula
+        kink,   ///< rigid inertia by backward Euler
+        jump,   ///< at one instant: a step that takes next to no time
+    };
     /// Known heads at the new time are already in `state.head_m`. `step_s` is the model's step, or
-    /// a sliver of it to settle what a jump changes at one instant.
+    /// a sliver of it for a jump.
     /// @return false where a cluster has no solution; see `failure`.
-    bool solve(State& state, const std::vector<UnitStep>& units, double step_s,
-               bool backwardEuler);
+    bool solve(State& state, const std::vector<UnitStep>& units, double step_s, Mode mode);
     /// Volumes, levels, discharges and heads of the new time become the state's.
     void accept(State& state, const std::vector<UnitStep>& units, double step_s);
     /// The same at one instant: discharges and heads jump, volumes and inertias do not move.
@@ -35,7 +39,8 @@ public:
     const ClusterFailure& failure() const { return failure_; }
 
 private:
-    void prepareBranches(State& state, double step_s, bool backwardEuler);
+    void prepareRigid(BranchState& branch, const ConduitRow& conduit) const;
+    void prepareEnd(State& state, const BranchRow& row, BranchState& branch) const;
     void prepareUnits(State& state, const std::vector<UnitStep>& units);
     void guessHeads(State& state, const Cluster& cluster);
     bool solveCluster(State& state, const Cluster& cluster);
@@ -49,10 +54,12 @@ private:
     double drop(const State& state, const UnitRow& unit) const;
     void closeBalance(State& state, const Cluster& cluster);
     void handBack(State& state);
+    void handBackRigid(State& state, std::size_t conduit);
+    void handBackElastic(State& state, std::size_t conduit);
 
     const Model& model_;
     double step_ = 0.0;
-    bool euler_ = false;
+    Mode mode_ = Mode::smooth;
     std::vector<double> residual_, matrix_, change_, trial_; // of the cluster being solved
     std::vector<double> sizes_;
     std::size_t size_ = 0;

@@ -93,8 +93,12 @@ TEST_CASE("surge: total rejection with quadratic friction", "[surge][analytic]")
         CHECK_THAT(z.atRest, WithinAbs(-row.loss, 1e-6));
         CHECK_THAT(z.greatest.value, WithinAbs(row.z1, 5e-4 * zStar));
         CHECK_THAT(z.greatest.time_s, WithinAbs(row.t1, 0.1));
-        CHECK_THAT(z.least.value, WithinAbs(row.z2, 5e-4 * zStar));
-        CHECK_THAT(z.least.time_s, WithinAbs(row.t2, 0.1));
+        CHECK_THAT(valueAt(run, Measure::level, chamberPlace(), row.t2),
+                   WithinAbs(row.z2, 5e-4 * zStar));
+        if (row.z2 < -row.loss) { // else the start is the lowest level
+            CHECK_THAT(z.least.value, WithinAbs(row.z2, 5e-4 * zStar));
+            CHECK_THAT(z.least.time_s, WithinAbs(row.t2, 0.1));
+        }
     }
 }
 
@@ -164,8 +168,8 @@ TEST_CASE("surge: optimum throttle makes the two maxima equal", "[surge][analyti
     // Derived here: frictionless R₀ = z₁ = Z*/√2 and the head stays constant all the way up.
     const auto run = rejection(0.0, 15.963771420).run();
     CHECK_THAT(level(run).greatest.value, WithinAbs(15.963771420, 5e-4 * zStar));
-    for (const double t : {0.0, 10.0, 30.0, 50.0, 65.0}) {
-        CHECK_THAT(valueAt(run, Measure::head, pointPlace(1), t), WithinAbs(15.963771420, 0.01));
+    for (const double t : {0.0, 10.0, 30.0, 50.0, 62.0}) {
+        CHECK_THAT(valueAt(run, Measure::head, pointPlace(1), t), WithinAbs(15.963771420, 1e-4));
     }
     struct Row { double loss, r0, z1; };
     for (const Row& row : {Row{2.0, 16.573270392, 14.573270392}, Row{5.0, 17.602854186, 12.602854186},
