@@ -32,9 +32,9 @@ public:
     int firstRow = 0, rowsShown = 0, firstColumn = 0, columnsShown = 0; ///< after clamping
     void paint(QPainter& painter) const;
 
+    struct Scene; ///< inside of the drawing only
 private:
     friend BoardPicture boardPicture(const BoardInput& input);
-    struct Scene;
     std::shared_ptr<const Scene> scene_;
 };
 

@@ -31,7 +31,7 @@ struct Spacing {
     double rightMargin = 10;   ///< of Section and Ribbon
     double laneGutter = 96;    ///< right of the Lanes: names and cursor values
     double unit = 4;           ///< all other gaps are multiples of it
-    double row = 26;           ///< of the Board
+    double row = 34;           ///< of the Board: a share over a letter
     double bar = 40;           ///< of the Headroom strip, with its text
     double mark = 18;          ///< side of a mark in Board and Strip
     double sentenceMark = 28;

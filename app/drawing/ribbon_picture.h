@@ -11,9 +11,9 @@ public:
     Items items;
     void paint(QPainter& painter) const;
 
+    struct Scene; ///< inside of the drawing only
 private:
     friend RibbonPicture ribbonPicture(const SectionInput& input);
-    struct Scene;
     std::shared_ptr<const Scene> scene_;
 };
 

@@ -45,9 +45,9 @@ public:
     /// One paragraph that says what is shown at a time.
     QString description(double time_s) const;
 
+    struct Scene; ///< inside of the drawing only
 private:
     friend SectionPicture sectionPicture(const SectionInput& input);
-    struct Scene;
     std::shared_ptr<const Scene> scene_;
 };
 

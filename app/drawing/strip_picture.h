@@ -32,9 +32,9 @@ public:
     int rowsShown = 0;
     void paint(QPainter& painter) const;
 
+    struct Scene; ///< inside of the drawing only
 private:
     friend StripPicture stripPicture(const StripInput& input);
-    struct Scene;
     std::shared_ptr<const Scene> scene_;
 };
 

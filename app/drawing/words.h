@@ -14,7 +14,11 @@ namespace headroom::drawing {
 
 QString text(std::string_view utf8);
 /// "456.1 m", with thin space and true minus.
-QString amount(Quantity quantity, double si);
+QString numberText(Quantity quantity, double si);
+/// "5 000 m": without decimals, thousands set apart.
+QString wholeAmount(Quantity quantity, double si);
+/// "151 s", "9.4 s".
+QString timeWords(double time_s);
 /// "456.1 of 458.0 m".
 QString amountOf(Quantity quantity, double si, double bound);
 /// Share as whole per cent without its sign: "−6"; never rounded to the other side of 0.
@@ -25,7 +29,7 @@ QString percent(double share);
 Quantity valueQuantity(const plant::Limit& limit);
 Quantity marginQuantity(const plant::Limit& limit);
 
-/// "1.9 m below its limit", "2.7 m inside its limit", "at its limit".
+/// "1.9 m below", "2.7 m inside", "at the limit".
 QString marginWords(const plant::Limit& limit, const results::Verdict& verdict);
 /// "456.1 m at 151 s, 1.9 m below"; lozenge's label.
 QString lozengeWords(const plant::Limit& limit, const results::Verdict& verdict);

@@ -1,0 +1,401 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "drawing/board_scene.h"
+
+#include "drawing/words.h"
+#include "limits/judge.h"
+#include "units/text.h"
+
+#include <QFontMetricsF>
+#include <QStringList>
+#include <QTransform>
+#include <algorithm>
+#include <cmath>
+#include <numbers>
+
+namespace headroom::drawing {
+
+namespace {
+
+using Scene = BoardPicture::Scene;
+
+constexpr double narrowest = 40.0, widest = 66.0; ///< columns
+constexpr double leastRow = 0.86;                 ///< share of the usual height
+constexpr double slantedMost_px = 78.0;           ///< longest slanted line
+
+struct Making {
+    const BoardInput& input;
+    Scene& scene;
+    BoardPicture& picture;
+    double left = 0.0;    ///< where the columns begin
+    double pitch = 0.0;   ///< of the columns
+    double top = 0.0;     ///< where the rows begin
+    double height = 0.0;  ///< of a row
+};
+
+QString optionName(const studies::Snapshot& snapshot, int option) {
+    return text(snapshot.variant(option).name);
+}
+
+int columnsOf(const studies::Snapshot& snapshot) {
+    return snapshot.options() + 1;
+}
+
+// --- column titles ------------------------------------------------------------------------------
+
+/// The words on at most two lines, as even as they get.
+std::vector<QString> twoLines(const QString& name, const QFont& font) {
+    const QStringList words = name.split(QLatin1Char(' '), Qt::SkipEmptyParts);
+    if (words.size() < 2) {
+        return {name};
+    }
+    std::vector<QString> best;
+    double least = 0.0;
+    for (qsizetype cut = 1; cut < words.size(); ++cut) {
+        const QString first = words.mid(0, cut).join(QLatin1Char(' '));
+        const QString second = words.mid(cut).join(QLatin1Char(' '));
+        const double wide = std::max(textSize(first, font).width(), textSize(second, font).width());
+        if (best.empty() || wide < least) {
+            best = {first, second};
+            least = wide;
+        }
+    }
+    return best;
+}
+
+double widthOf(const std::vector<QString>& lines, const QFont& font) {
+    double wide = 0.0;
+    for (const auto& line : lines) {
+        wide = std::max(wide, textSize(line, font).width());
+    }
+    return wide;
+}
+
+struct Header {
+    bool slanted = false;
+    double height = 0.0;
+    double longest = 0.0; ///< of a slanted line
+};
+
+/// Level titles if each fits its column, else slanted ones with the room they need.
+Header headerFor(const studies::Snapshot& snapshot, const Look& look, double pitch) {
+    const QFont font = look.font(TextSize::small, TextWeight::strong); // the widest used
+    const double line = look.lineHeight(TextSize::small);
+    Header header;
+    for (int option = -1; option < snapshot.options(); ++option) {
+        header.longest =
+            std::max(header.longest, widthOf(twoLines(optionName(snapshot, option), font), font));
+    }
+    header.slanted = header.longest > pitch - 0.5 * look.space.unit;
+    header.longest = std::min(header.longest, slantedMost_px * look.scale);
+    const double angle = slant_deg * std::numbers::pi / 180.0;
+    header.height = header.slanted ? header.longest * std::sin(angle) + 2 * line * std::cos(angle)
+                                   : 2 * line;
+    header.height += 2 * look.space.unit;
+    return header;
+}
+
+double headingHeight(const Look& look) {
+    return look.lineHeight(TextSize::small);
+}
+
+void addColumn(Making& making, int position, const Header& header) {
+    const auto& look = making.input.look;
+    const int option = making.picture.firstColumn + position - 1;
+    const QString name = optionName(making.input.snapshot, option);
+    BoardColumn column;
+    column.option = option;
+    column.inHand = option == making.input.optionInHand;
+    column.column = QRectF(making.left + position * making.pitch, 0, making.pitch, making.top);
+    column.slanted = header.slanted;
+    const QFont font = look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
+    const double line = look.lineHeight(TextSize::small);
+    column.lines = twoLines(name, font);
+    Item item;
+    if (column.slanted) {
+        const double angle = slant_deg * std::numbers::pi / 180.0;
+        column.pivot = {column.column.left() + 2 * line * std::sin(angle) - 0.6 * look.space.unit,
+                        making.top - look.space.unit};
+        // To the picture's edge and not beyond.
+        const double room = (making.input.size.width() - column.pivot.x()) / std::cos(angle) - 2;
+        const QFontMetricsF metrics(font);
+        for (auto& words : column.lines) {
+            words = metrics.elidedText(words, Qt::ElideRight, std::min(room, header.longest + 1));
+        }
+        QTransform turn;
+        turn.translate(column.pivot.x(), column.pivot.y());
+        turn.rotate(-slant_deg);
+        const double high = line * static_cast<double>(column.lines.size());
+        item.shape.addPolygon(turn.map(QPolygonF(QRectF(0, -high, widthOf(column.lines, font), high))));
+        item.shape.closeSubpath();
+    } else {
+        double y = making.top - look.space.unit - line * static_cast<double>(column.lines.size());
+        for (const auto& words : column.lines) {
+            const double wide = textSize(words, font).width();
+            column.boxes.push_back(QRectF(column.column.center().x() - wide / 2, y, wide, line));
+            item.shape.addRect(column.boxes.back());
+            y += line;
+        }
+    }
+    item.kind = ItemKind::columnTitle;
+    item.option = option;
+    item.thing = option < 0 ? plant::Path{"base"}
+                            : plant::Path{"options", making.input.snapshot.project().options.name(option)};
+    item.box = item.shape.boundingRect();
+    for (const auto& words : column.lines) {
+        item.label += (item.label.isEmpty() ? QString() : QStringLiteral(" ")) + words;
+    }
+    item.description = (option < 0 ? QStringLiteral("Base: ") : QStringLiteral("Option: ")) + name;
+    if (column.inHand) {
+        item.description += QStringLiteral(", changes go into it");
+    }
+    making.picture.items.push_back(std::move(item));
+    making.scene.columns.push_back(std::move(column));
+}
+
+// --- cells --------------------------------------------------------------------------------------
+
+const studies::Cell* cellOf(const BoardInput& input, CellId id) {
+    for (const auto& cell : input.cells) {
+        if (cell.option == id.option && cell.study == id.study) {
+            return &cell;
+        }
+    }
+    return nullptr;
+}
+
+bool hasShare(const studies::Cell& cell, const results::Verdict& verdict) {
+    const bool ended = cell.state == studies::CellState::done || cell.state == studies::CellState::cutShort ||
+                       cell.state == studies::CellState::failed;
+    return ended && verdict.mark != results::Mark::notRun && verdict.mark != results::Mark::notApplicable &&
+           std::isfinite(verdict.share);
+}
+
+QString stateWords(const studies::Cell& cell) {
+    switch (cell.state) {
+    case studies::CellState::waiting: return QStringLiteral("waiting");
+    case studies::CellState::running:
+        return QStringLiteral("running, %1 per cent done").arg(percent(cell.progress));
+    case studies::CellState::cutShort: return QStringLiteral("cut short");
+    case studies::CellState::failed: return QStringLiteral("failed");
+    default: return words(markOf(cell));
+    }
+}
+
+QString spokenCell(const Making& making, CellId id, const studies::Cell* cell) {
+    const auto& snapshot = making.input.snapshot;
+    const auto& variant = snapshot.variant(id.option);
+    const auto& project = snapshot.project();
+    QString out = text(project.studies.name(id.study)) + QStringLiteral(", ") + text(variant.name) +
+                  QStringLiteral(": ");
+    if (cell == nullptr) {
+        return out + QStringLiteral("not run.");
+    }
+    out += stateWords(*cell);
+    const auto* worst = limits::worst(cell->verdicts);
+    if (worst != nullptr && hasShare(*cell, *worst) && worst->limit < variant.limits.size()) {
+        out += QStringLiteral(", share left %1 per cent, worst limit %2. %3")
+                   .arg(percent(worst->share), limitLetter(project, variant, worst->limit),
+                        spokenVerdict(text(variant.limits.name(worst->limit)),
+                                      variant.limits[worst->limit], *worst));
+    } else {
+        out += QLatin1Char('.');
+    }
+    if (cell->reason) {
+        out += QLatin1Char(' ') + text(whatText(*cell->reason));
+    }
+    return out;
+}
+
+void addCell(Making& making, CellId id, const QRectF& frame) {
+    const auto& look = making.input.look;
+    const auto* cell = cellOf(making.input, id);
+    BoardCell out;
+    out.id = id;
+    out.frame = frame.adjusted(1, 1, -1, -1);
+    out.mark = cell == nullptr ? MarkState::notRun : markOf(*cell);
+    out.progress = cell == nullptr ? 0.0 : std::clamp(cell->progress, 0.0, 1.0);
+    const auto& shownRuns = making.input.selection.shown;
+    const auto found = std::find(shownRuns.begin(), shownRuns.end(), id);
+    out.shownAs = found == shownRuns.end() ? -1 : static_cast<int>(found - shownRuns.begin());
+    if (out.mark == MarkState::running) {
+        const double high = out.progress * out.frame.height();
+        out.fill = QRectF(out.frame.left(), out.frame.bottom() - high, out.frame.width(), high);
+    }
+    const double side = std::min(look.space.mark, 0.5 * frame.width());
+    const double gap = 0.5 * look.space.unit;
+    out.markBox = QRectF(frame.left() + gap, frame.center().y() - side / 2, side, side);
+    const auto* worst = cell == nullptr ? nullptr : limits::worst(cell->verdicts);
+    QString shownShare, letter;
+    if (worst != nullptr && hasShare(*cell, *worst)) {
+        shownShare = percent(worst->share);
+        letter = limitLetter(making.input.snapshot.project(), making.input.snapshot.variant(id.option),
+                             worst->limit);
+    }
+    const double line = look.lineHeight(TextSize::small);
+    const double left = out.markBox.right() + gap;
+    // A share over its letter; the two lines may touch, they never overlap.
+    const double step = std::min(line, (frame.height() - 2) / 2);
+    const double first = frame.center().y() - step;
+    const double wide = std::max(1.0, frame.right() - left - 1);
+    out.share = {shownShare, QRectF(left, first, wide, step), TextSize::small};
+    out.letter = {letter, QRectF(left, first + step, wide, step), TextSize::small,
+                  TextWeight::normal, true, false, {}};
+    Item item;
+    item.kind = ItemKind::cell;
+    item.option = id.option;
+    item.study = id.study;
+    item.box = frame;
+    item.shape.addRect(frame);
+    item.label = shownShare;
+    item.description = spokenCell(making, id, cell);
+    item.limit = worst != nullptr && !shownShare.isEmpty() ? worst->limit : -1;
+    making.picture.items.push_back(std::move(item));
+    making.scene.cells.push_back(std::move(out));
+}
+
+// --- rows ---------------------------------------------------------------------------------------
+
+void addRow(Making& making, int study, double y) {
+    const auto& look = making.input.look;
+    const auto& studies = making.input.snapshot.project().studies;
+    const double line = look.lineHeight(TextSize::small), gap = look.space.unit;
+    BoardRow row;
+    row.study = study;
+    row.row = QRectF(0, y, making.input.size.width(), making.height);
+    row.selected = !making.input.selection.shown.empty() &&
+                   making.input.selection.inHand().study == study;
+    const double middle = y + (making.height - line) / 2, letter = 4 * gap;
+    const auto weight = row.selected ? TextWeight::strong : TextWeight::normal;
+    row.letter = {classLetter(studies[study].loadClass), QRectF(gap, middle, letter, line),
+                  TextSize::small, TextWeight::normal, true, false, {}};
+    row.name = {text(studies.name(study)),
+                QRectF(gap + letter, middle, std::max(1.0, making.left - letter - 2 * gap), line),
+                TextSize::small, weight};
+    const QFontMetricsF metrics(look.font(TextSize::small, weight));
+    Item item;
+    item.kind = ItemKind::rowTitle;
+    item.study = study;
+    item.thing = {"studies", studies.name(study)};
+    item.box = QRectF(0, y, making.left, making.height);
+    item.shape.addRect(item.box);
+    item.label = metrics.elidedText(row.name.text, Qt::ElideRight, row.name.box.width() + 1);
+    item.description = QStringLiteral("Study %1, class %2")
+                           .arg(row.name.text, className(studies[study].loadClass));
+    making.picture.items.push_back(std::move(item));
+    making.scene.rows.push_back(std::move(row));
+    for (int i = 0; i < making.picture.columnsShown; ++i) {
+        addCell(making, {making.picture.firstColumn + i - 1, study},
+                QRectF(making.left + i * making.pitch, y, making.pitch, making.height));
+    }
+}
+
+void addLabel(Making& making, const QString& words, const QRectF& where) {
+    Item item;
+    item.kind = ItemKind::label;
+    item.box = where;
+    item.shape.addRect(where);
+    item.label = item.description = words;
+    making.picture.items.push_back(std::move(item));
+    making.scene.labels.push_back({words, where, TextSize::small, TextWeight::normal, true, false, {}});
+}
+
+QString outOfSight(const BoardPicture& picture, int rows, int columns) {
+    QStringList parts;
+    const auto add = [&](int count, const char* words) {
+        if (count > 0) {
+            parts << QStringLiteral("%1 %2").arg(count).arg(QLatin1String(words));
+        }
+    };
+    add(picture.firstRow, "studies above");
+    add(rows - picture.firstRow - picture.rowsShown, "more below");
+    add(picture.firstColumn, "options left");
+    add(columns - picture.firstColumn - picture.columnsShown, "more options right");
+    return parts.join(QStringLiteral(" · "));
+}
+
+void layColumns(Making& making) {
+    const auto& look = making.input.look;
+    const auto& snapshot = making.input.snapshot;
+    double names = 0.0;
+    const QFont font = look.font(TextSize::small, TextWeight::strong);
+    for (const auto& name : snapshot.project().studies.names()) {
+        names = std::max(names, textSize(text(name), font).width());
+    }
+    const double width = making.input.size.width();
+    const int columns = columnsOf(snapshot);
+    const double least = narrowest * look.scale;
+    const double wanted = names + 7 * look.space.unit;
+    making.left = std::min(wanted, std::max(0.25 * width, width - least * columns));
+    making.left = std::min(making.left, std::max(0.0, width - least));
+    const int fitting = std::max(1, static_cast<int>((width - making.left) / least + 1e-6));
+    making.picture.columnsShown = std::min(columns, fitting);
+    making.picture.firstColumn =
+        std::clamp(making.input.firstColumn, 0, columns - making.picture.columnsShown);
+    making.pitch = std::min((width - making.left) / making.picture.columnsShown, widest * look.scale);
+}
+
+void layRows(Making& making) {
+    const auto& look = making.input.look;
+    auto& picture = making.picture;
+    const int rows = making.input.snapshot.studies();
+    const double line = look.lineHeight(TextSize::small) + look.space.unit;
+    const double room = std::max(0.0, making.input.size.height() - making.top);
+    const bool columnsHidden = picture.columnsShown < columnsOf(making.input.snapshot);
+    making.height = look.space.row;
+    if (rows > 0 && rows * making.height > room - (columnsHidden ? line : 0.0)) {
+        making.height = std::max(leastRow * look.space.row, (room - (columnsHidden ? line : 0.0)) / rows);
+    }
+    const bool all = rows * making.height <= room - (columnsHidden ? line : 0.0) + 0.5;
+    picture.rowsShown = all ? rows : std::max(0, static_cast<int>((room - line) / making.height));
+    picture.firstRow = std::clamp(making.input.firstRow, 0, std::max(0, rows - picture.rowsShown));
+}
+
+} // namespace
+
+BoardPicture boardPicture(const BoardInput& input) {
+    auto scene = std::make_shared<BoardPicture::Scene>(input.look);
+    BoardPicture picture;
+    Making making{input, *scene, picture};
+    layColumns(making);
+    const Header header = headerFor(input.snapshot, input.look, making.pitch);
+    making.top = header.height;
+    layRows(making);
+    scene->headerBottom = making.top;
+    scene->width = input.size.width();
+    const double line = headingHeight(input.look), gap = input.look.space.unit;
+    if (making.left > 8 * gap) {
+        addLabel(making, QStringLiteral("headroom left, %"),
+                 QRectF(gap, making.top - gap - line, making.left - 2 * gap, line));
+    }
+    for (int i = 0; i < picture.columnsShown; ++i) {
+        addColumn(making, i, header);
+    }
+    for (int i = 0; i < picture.rowsShown; ++i) {
+        addRow(making, picture.firstRow + i, making.top + i * making.height);
+    }
+    const QString hidden = outOfSight(picture, input.snapshot.studies(), columnsOf(input.snapshot));
+    if (!hidden.isEmpty()) {
+        addLabel(making, hidden, QRectF(gap, making.top + picture.rowsShown * making.height,
+                                        input.size.width() - 2 * gap, line + gap));
+    }
+    if (input.snapshot.studies() == 0) {
+        addLabel(making, QStringLiteral("No studies yet."),
+                 QRectF(gap, making.top + gap, input.size.width() - 2 * gap, line));
+    }
+    picture.scene_ = std::move(scene);
+    return picture;
+}
+
+double boardHeight(const studies::Snapshot& snapshot, const Look& look, double width_px) {
+    static const std::vector<studies::Cell> noCells;
+    auto scene = std::make_shared<BoardPicture::Scene>(look);
+    BoardPicture picture;
+    const BoardInput input{snapshot, noCells, {}, QSizeF(width_px, 1e6), look};
+    Making making{input, *scene, picture};
+    layColumns(making);
+    const bool hidden = picture.columnsShown < columnsOf(snapshot);
+    return headerFor(snapshot, look, making.pitch).height + snapshot.studies() * look.space.row +
+           (hidden ? look.lineHeight(TextSize::small) + look.space.unit : 0.0) + look.space.unit;
+}
+
+} // namespace headroom::drawing
