@@ -189,7 +189,7 @@ const Field* fieldAt(const Path& path) {
         if (nameNext) {
             nameNext = false; // a user's name: the collection's row answers for it
         } else if (owner.kind == FieldKind::patch) {
-            here = rowOf(projectFields(), key);
+            here = rowOf(projectRow().fields, key);
             if (here == nullptr || !here->varies) {
                 return nullptr;
             }

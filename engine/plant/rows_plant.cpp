@@ -49,7 +49,7 @@ RowsOf<GridArea> areaRows() {
         number(&GridArea::storedEnergy_J, Quantity::energy, {"storedEnergy_GWs", "Stored energy",
             "Kinetic energy of all machines of the area but this plant's own units."}).needed().range(1e-6, 1e5).moves("rate of change of frequency"),
         number(&GridArea::loadDamping_1Hz, Quantity::loadDamping, {"loadDamping_pctHz", "Load damping",
-            "Fall of the load in per cent when the frequency falls by 1 Hz."}).range(0, 20).usual(0.5, 4),
+            "Fall of the load in per cent when the frequency falls by 1 Hz."}).range(0, 20).usual(0, 4),
         number(&GridArea::load_W, Quantity::load, {"load_GW", "Load",
             "Load of the area at nominal frequency."}).needed().range(1e-6, 1e4),
         group(&GridArea::otherReserve, otherReserveRows(), {"otherReserve", "Other reserve",
