@@ -13,6 +13,7 @@ namespace {
 using results::Thing;
 
 constexpr int mostStations = 40;
+constexpr double mostWindowRows = 1000.0;
 
 /// Cells at which heads are kept: evenly spread, and those nearest to corners and reach ends.
 std::vector<int> stationCells(const ConduitRow& conduit) {
@@ -86,9 +87,11 @@ Channels::Channels(const Model& model) : model_(model) {
         add(Measure::pressureRate, Thing::point, i);
     }
     addStations();
-    windowRows_ = static_cast<std::size_t>(
-        std::max(1.0, std::round(rateWindow_s / model.grid.step_s)));
+    const double steps = std::max(1.0, std::round(rateWindow_s / model.grid.step_s));
+    windowEvery_ = static_cast<std::size_t>(std::ceil(steps / mostWindowRows));
+    windowRows_ = std::max<std::size_t>(1, static_cast<std::size_t>(steps) / windowEvery_);
     window_.resize(windowRows_ * model.pointNode_.size());
+    rate_.resize(model.pointNode_.size());
 }
 
 void Channels::add(Measure measure, Thing thing, int index, double chainage) {
@@ -128,6 +131,9 @@ double Channels::pointHead(const State& state, int index) const {
 
 double* Channels::fillPoints(const State& state, double* out) {
     const std::size_t count = model_.pointNode_.size();
+    const double span =
+        static_cast<double>(windowRows_ * windowEvery_) * model_.grid.step_s;
+    const bool due = windowCount_ == 0;
     double* const row = window_.data() + windowRow_ * count;
     for (std::size_t i = 0; i < count; ++i) {
         const double head = pointHead(state, model_.pointNode_[i]);
@@ -136,13 +142,18 @@ double* Channels::fillPoints(const State& state, double* out) {
                 window_[k * count + i] = head;
             }
         }
-        const double span = static_cast<double>(windowRows_) * model_.grid.step_s;
+        if (due) {
+            rate_[i] = (head - row[i]) / span;
+            row[i] = head;
+        }
         *out++ = head;
-        *out++ = (head - row[i]) / span;
-        row[i] = head;
+        *out++ = rate_[i];
     }
     windowFilled_ = true;
-    windowRow_ = windowRow_ + 1 == windowRows_ ? 0 : windowRow_ + 1;
+    windowCount_ = windowCount_ + 1 == windowEvery_ ? 0 : windowCount_ + 1;
+    if (due) {
+        windowRow_ = windowRow_ + 1 == windowRows_ ? 0 : windowRow_ + 1;
+    }
     return out;
 }
 

@@ -48,8 +48,10 @@ private:
     const Model& model_;
     std::vector<Item> items_;
     std::vector<Station> stations_;
-    std::vector<double> window_; // heads of the last `rateWindow_s`, a row an instant
-    std::size_t windowRows_ = 0, windowRow_ = 0;
+    // Heads of the last `rateWindow_s`, a row for every `windowEvery_` instants; the rate is held in
+    // between, which is a thousandth of the window.
+    std::vector<double> window_, rate_;
+    std::size_t windowRows_ = 0, windowRow_ = 0, windowEvery_ = 1, windowCount_ = 0;
     bool windowFilled_ = false;
 };
 

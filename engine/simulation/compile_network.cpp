@@ -68,7 +68,7 @@ std::vector<hydraulics::ElasticCell> cellsOf(const ConduitGeometry& geometry, in
 
 void addBranches(Model& model) {
     const auto add = [&](BranchKind kind, int conduit, int from, int to) {
-        model.branches.push_back({kind, conduit, from, to});
+        model.branches.push_back({kind, conduit, from, to, -1, -1});
         return static_cast<int>(model.branches.size()) - 1;
     };
     for (int i = 0; i < static_cast<int>(model.conduits.size()); ++i) {
@@ -225,7 +225,7 @@ void fillChambers(Model& model, const plant::Plant& plant, Findings& findings) {
         if (!table) {
             continue;
         }
-        ChamberRow row{node, *table, {}, -1, 0.0};
+        ChamberRow row{node, -1, *table, {}, -1, 0.0};
         if (chamber.shape.throttled) {
             row.throttle = {chamber.shape.lossIn_s2m5, chamber.shape.lossOut_s2m5};
         }
@@ -239,6 +239,66 @@ void fillChambers(Model& model, const plant::Plant& plant, Findings& findings) {
         model.chambers.push_back(std::move(row));
     }
 }
+
+namespace {
+
+/// Gives every unknown node that a branch or a unit touches its cluster and its slot there.
+void placeNodes(Model& model, Sets& sets) {
+    std::vector<bool> used(model.nodes.size(), false);
+    for (const BranchRow& branch : model.branches) {
+        for (const int node : {branch.from, branch.to}) {
+            if (node >= 0) {
+                used[at(node)] = true;
+            }
+        }
+    }
+    for (const UnitRow& unit : model.units) {
+        used[at(unit.inlet)] = used[at(unit.outlet)] = true;
+    }
+    std::vector<int> clusterOf(model.nodes.size(), -1);
+    for (int i = 0; i < static_cast<int>(model.nodes.size()); ++i) {
+        Node& node = model.nodes[at(i)];
+        if (node.known() || !used[at(i)]) {
+            continue;
+        }
+        int& cluster = clusterOf[at(sets.root(i))];
+        if (cluster < 0) {
+            cluster = static_cast<int>(model.clusters.size());
+            model.clusters.emplace_back();
+        }
+        node.cluster = cluster;
+        node.slot = static_cast<int>(model.clusters[at(cluster)].nodes.size());
+        model.clusters[at(cluster)].nodes.push_back(i);
+    }
+}
+
+/// Puts branches and units into the cluster of an unknown node they touch; what lies between known
+/// heads goes into the first one.
+void placeBranches(Model& model) {
+    const auto slotOf = [&](int node) { return node >= 0 ? model.nodes[at(node)].slot : -1; };
+    const auto clusterAt = [&](int a, int b) {
+        for (const int node : {a, b}) {
+            if (node >= 0 && !model.nodes[at(node)].known()) {
+                return model.nodes[at(node)].cluster;
+            }
+        }
+        return 0;
+    };
+    for (int i = 0; i < static_cast<int>(model.branches.size()); ++i) {
+        BranchRow& branch = model.branches[at(i)];
+        branch.fromSlot = slotOf(branch.from);
+        branch.toSlot = slotOf(branch.to);
+        model.clusters[at(clusterAt(branch.from, branch.to))].branches.push_back(i);
+    }
+    for (int i = 0; i < static_cast<int>(model.units.size()); ++i) {
+        UnitRow& unit = model.units[at(i)];
+        unit.inletSlot = slotOf(unit.inlet);
+        unit.outletSlot = slotOf(unit.outlet);
+        model.clusters[at(clusterAt(unit.inlet, unit.outlet))].units.push_back(i);
+    }
+}
+
+} // namespace
 
 void fillClusters(Model& model, Findings& findings) {
     Sets sets(model.nodes.size());
@@ -255,57 +315,18 @@ void fillClusters(Model& model, Findings& findings) {
     for (const UnitRow& unit : model.units) {
         join(unit.inlet, unit.outlet);
     }
-    std::vector<int> clusterOf(model.nodes.size(), -1);
     model.clusters.emplace_back(); // everything between known heads
-    std::vector<bool> used(model.nodes.size(), false);
-    for (const BranchRow& branch : model.branches) {
-        for (const int node : {branch.from, branch.to}) {
-            if (node >= 0) {
-                used[at(node)] = true;
-            }
-        }
-    }
-    for (const UnitRow& unit : model.units) {
-        used[at(unit.inlet)] = used[at(unit.outlet)] = true;
-    }
-    for (int i = 0; i < static_cast<int>(model.nodes.size()); ++i) {
-        Node& node = model.nodes[at(i)];
-        if (node.known() || !used[at(i)]) {
-            continue;
-        }
-        const int root = sets.root(i);
-        if (clusterOf[at(root)] < 0) {
-            clusterOf[at(root)] = static_cast<int>(model.clusters.size());
-            model.clusters.emplace_back();
-        }
-        node.cluster = clusterOf[at(root)];
-        auto& cluster = model.clusters[at(node.cluster)];
-        node.slot = static_cast<int>(cluster.nodes.size());
-        cluster.nodes.push_back(i);
-    }
-    const auto clusterAt = [&](int a, int b) {
-        for (const int node : {a, b}) {
-            if (node >= 0 && !model.nodes[at(node)].known()) {
-                return model.nodes[at(node)].cluster;
-            }
-        }
-        return 0;
-    };
-    for (int i = 0; i < static_cast<int>(model.branches.size()); ++i) {
-        const BranchRow& branch = model.branches[at(i)];
-        model.clusters[at(clusterAt(branch.from, branch.to))].branches.push_back(i);
-    }
-    for (int i = 0; i < static_cast<int>(model.units.size()); ++i) {
-        const UnitRow& unit = model.units[at(i)];
-        model.clusters[at(clusterAt(unit.inlet, unit.outlet))].units.push_back(i);
-    }
+    placeNodes(model, sets);
+    placeBranches(model);
     for (int i = 0; i < static_cast<int>(model.chambers.size()); ++i) {
-        const int cluster = model.nodes[at(model.chambers[at(i)].node)].cluster;
-        if (cluster < 0) {
-            findings.push_back({&chamberAlone, model.chamberPath[at(i)], {}, {}, {}, {}, {}});
+        ChamberRow& chamber = model.chambers[at(i)];
+        const Node& node = model.nodes[at(chamber.node)];
+        if (node.cluster < 0) {
+            findings.push_back({.message = &chamberAlone, .subject = model.chamberPath[at(i)]});
             continue;
         }
-        model.clusters[at(cluster)].chambers.push_back(i);
+        chamber.slot = node.slot;
+        model.clusters[at(node.cluster)].chambers.push_back(i);
     }
 }
 

@@ -63,7 +63,7 @@ struct ConduitRow {
 };
 
 struct ChamberRow {
-    int node = -1;
+    int node = -1, slot = -1;
     hydraulics::ChamberTable table;
     hydraulics::Throttle throttle;
     int tunnelEnd = -1;         ///< conduit end whose velocity head it does not see, or -1
@@ -75,6 +75,7 @@ enum class UnitKind { francis, orifice, flow, power };
 struct UnitRow {
     UnitKind kind = UnitKind::flow;
     int inlet = -1, outlet = -1; ///< nodes
+    int inletSlot = -1, outletSlot = -1;
     double centreline_m = 0.0;
     double inertia_s2m2 = 0.0;      ///< spiral and draft tube
     double draftInertia_s2m2 = 0.0;
@@ -126,6 +127,7 @@ struct BranchRow {
     BranchKind kind = BranchKind::rigid;
     int conduit = -1;
     int from = -1, to = -1;
+    int fromSlot = -1, toSlot = -1; ///< of unknown nodes in their cluster
 };
 
 class Model {

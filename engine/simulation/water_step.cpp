@@ -10,10 +10,12 @@ namespace headroom::simulation {
 namespace {
 
 constexpr int mostIterations = 12;
-constexpr int mostRobust = 200;
+constexpr int mostRobust = 200, mostHalvings = 12;
 constexpr double headTolerance = 1e-12;   // of the plant's head
-constexpr double smoothTolerance = 3e-8;  // where the next error is its square
-constexpr double unitTolerance = 1e-6;    // per unit, the same
+// Where laws are gently curved the next error is the square of a move times the curvature over the
+// slope: below 1e-4 1/m for ends of conduits and rigid water, of the order of 1 for a runner.
+constexpr double smoothTolerance = 1e-6;  // of the plant's head
+constexpr double unitTolerance = 3e-6;    // per unit
 
 /// Solves the symmetric positive definite system in place (lower triangle of `matrix`, row by
 /// row); false if a pivot is not positive.
@@ -61,7 +63,6 @@ WaterStep::WaterStep(const Model& model) : model_(model) {
     residual_.resize(most);
     change_.resize(most);
     trial_.resize(most);
-    sizes_.resize(most);
     matrix_.resize(most * most);
 }
 
@@ -120,22 +121,19 @@ void WaterStep::guessHeads(State& state, const Cluster& cluster) {
     }
 }
 
-void WaterStep::addFlow(int from, int to, double flow, double slope) {
-    // Unknown nodes have slots; the others' rows do not exist.
-    const int a = from >= 0 ? model_.nodes[at(from)].slot : -1;
-    const int b = to >= 0 ? model_.nodes[at(to)].slot : -1;
-    if (a >= 0) {
-        residual_[at(a)] -= flow;
-        sizes_[at(a)] += std::fabs(flow);
-        matrix_[at(a) * size_ + at(a)] += slope;
+/// Slots are -1 where the node's head is known: its row does not exist.
+void WaterStep::addFlow(int fromSlot, int toSlot, double flow, double slope) {
+    if (fromSlot >= 0) {
+        residual_[at(fromSlot)] -= flow;
+        matrix_[at(fromSlot) * size_ + at(fromSlot)] += slope;
     }
-    if (b >= 0) {
-        residual_[at(b)] += flow;
-        sizes_[at(b)] += std::fabs(flow);
-        matrix_[at(b) * size_ + at(b)] += slope;
-    }
-    if (a >= 0 && b >= 0) {
-        matrix_[at(std::max(a, b)) * size_ + at(std::min(a, b))] -= slope;
+    if (toSlot >= 0) {
+        residual_[at(toSlot)] += flow;
+        matrix_[at(toSlot) * size_ + at(toSlot)] += slope;
+        if (fromSlot >= 0) {
+            matrix_[at(std::max(fromSlot, toSlot)) * size_ + at(std::min(fromSlot, toSlot))] -=
+                slope;
+        }
     }
 }
 
@@ -149,7 +147,7 @@ double WaterStep::addBranch(State& state, int index) {
     const auto solved = hydraulics::solveBranch(branch.linear_sm2, quadratic, w);
     branch.flow_m3s = solved.flow_m3s;
     branch.slope_m2s = solved.slope_m2s;
-    addFlow(row.from, row.to, solved.flow_m3s, solved.slope_m2s);
+    addFlow(row.fromSlot, row.toSlot, solved.flow_m3s, solved.slope_m2s);
     return solved.flow_m3s;
 }
 
@@ -169,7 +167,7 @@ double WaterStep::addChamber(State& state, int index) {
     const auto solved = law.flow(head);
     chamber.next_m3s = solved.flow_m3s;
     chamber.slope_m2s = solved.slope_m2s;
-    addFlow(row.node, -1, solved.flow_m3s, solved.slope_m2s);
+    addFlow(row.slot, -1, solved.flow_m3s, solved.slope_m2s);
     return solved.flow_m3s;
 }
 
@@ -177,7 +175,6 @@ double WaterStep::addChamber(State& state, int index) {
 bool WaterStep::evaluate(State& state, const Cluster& cluster, bool alone) {
     size_ = cluster.nodes.size();
     std::fill_n(residual_.begin(), size_, 0.0);
-    std::fill_n(sizes_.begin(), size_, 0.0);
     std::fill_n(matrix_.begin(), size_ * size_, 0.0);
     for (const int branch : cluster.branches) {
         addBranch(state, branch);
@@ -191,7 +188,7 @@ bool WaterStep::evaluate(State& state, const Cluster& cluster, bool alone) {
             const double slope = 2.0 * storage / step_;
             const double flow = slope * (state.head_m[at(node)] - state.headBefore_m[at(node)]) -
                                 state.storageFlow_m3s[at(node)];
-            addFlow(node, -1, flow, slope);
+            addFlow(model_.nodes[at(node)].slot, -1, flow, slope);
         }
     }
     bool answered = true;
@@ -201,48 +198,46 @@ bool WaterStep::evaluate(State& state, const Cluster& cluster, bool alone) {
         const double head = drop(state, row);
         answered = (alone ? solveAlone(model_, row, head, work)
                           : linearise(model_, row, head, work)) && answered;
-        addFlow(row.inlet, row.outlet, work.flow_m3s, work.slope_m2s);
+        addFlow(row.inletSlot, row.outletSlot, work.flow_m3s, work.slope_m2s);
     }
     return answered;
 }
 
 /// One Newton correction of heads, branch flows and units; false if the system is not solvable.
-bool WaterStep::correctHeads(State& state, const Cluster& cluster, double share) {
-    std::copy_n(residual_.begin(), size_, change_.begin());
+bool WaterStep::correctHeads(State& state, const Cluster& cluster) {
     if (size_ == 1) {
         if (!(matrix_[0] > 0.0)) {
             return false;
         }
-        change_[0] /= matrix_[0];
-    } else if (size_ > 1 && !choleskySolve(matrix_, change_, size_)) {
+        change_[0] = residual_[0] / matrix_[0];
+    } else {
+        std::copy_n(residual_.begin(), size_, change_.begin());
+    }
+    if (size_ > 1 && !choleskySolve(matrix_, change_, size_)) {
         return false;
     }
     worstChange_ = worstMove_ = 0.0;
     for (std::size_t i = 0; i < size_; ++i) {
-        change_[i] *= share;
         if (!std::isfinite(change_[i])) {
             return false;
         }
         worstChange_ = std::max(worstChange_, std::fabs(change_[i]));
         state.head_m[at(cluster.nodes[i])] += change_[i];
     }
-    const auto moved = [&](int node) {
-        const int slot = node >= 0 ? model_.nodes[at(node)].slot : -1;
-        return slot >= 0 ? change_[at(slot)] : 0.0;
-    };
+    const auto moved = [&](int slot) { return slot >= 0 ? change_[at(slot)] : 0.0; };
     for (const int index : cluster.branches) {
         const BranchRow& row = model_.branches[at(index)];
         BranchState& branch = state.branches[at(index)];
-        branch.flow_m3s += branch.slope_m2s * (moved(row.from) - moved(row.to));
+        branch.flow_m3s += branch.slope_m2s * (moved(row.fromSlot) - moved(row.toSlot));
     }
     for (const int index : cluster.chambers) {
         ChamberState& chamber = state.chambers[at(index)];
-        chamber.next_m3s += chamber.slope_m2s * moved(model_.chambers[at(index)].node);
+        chamber.next_m3s += chamber.slope_m2s * moved(model_.chambers[at(index)].slot);
     }
     for (const int index : cluster.units) {
         const UnitRow& row = model_.units[at(index)];
         MachineWork& work = state.work[at(index)];
-        correct(row, moved(row.inlet) - moved(row.outlet), work);
+        correct(row, moved(row.inletSlot) - moved(row.outletSlot), work);
         worstMove_ = std::max(worstMove_, work.moved);
     }
     return true;
@@ -253,7 +248,7 @@ bool WaterStep::solveCluster(State& state, const Cluster& cluster) {
     const double tolerance =
         (cluster.chambers.empty() ? smoothTolerance : headTolerance) * model_.headScale_m;
     for (int count = 0; count < mostIterations; ++count) {
-        if (!evaluate(state, cluster, false) || !correctHeads(state, cluster, 1.0)) {
+        if (!evaluate(state, cluster, false) || !correctHeads(state, cluster)) {
             return false;
         }
         if (worstChange_ <= tolerance && worstMove_ <= unitTolerance) {
@@ -263,50 +258,54 @@ bool WaterStep::solveCluster(State& state, const Cluster& cluster) {
     return false;
 }
 
+double WaterStep::totalResidual() const {
+    double sum = 0.0;
+    for (std::size_t i = 0; i < size_; ++i) {
+        sum += std::fabs(residual_[i]);
+    }
+    return sum;
+}
+
+/// Moves the heads by a share of `trial_` and evaluates there; the largest move, or nothing.
+std::optional<double> WaterStep::tryMove(State& state, const Cluster& cluster, double share) {
+    double worst = 0.0;
+    for (std::size_t i = 0; i < cluster.nodes.size(); ++i) {
+        state.head_m[at(cluster.nodes[i])] += share * trial_[i];
+        worst = std::max(worst, std::fabs(share * trial_[i]));
+    }
+    return evaluate(state, cluster, true) ? std::optional(worst) : std::nullopt;
+}
+
 /// Newton with step halving on the sum of residuals, each unit solved alone for every trial.
 bool WaterStep::solveRobustly(State& state, const Cluster& cluster) {
-    const auto total = [&] {
-        double sum = 0.0;
-        for (std::size_t i = 0; i < size_; ++i) {
-            sum += std::fabs(residual_[i]);
-        }
-        return sum;
-    };
-    for (std::size_t i = 0; i < cluster.nodes.size(); ++i) {
-        state.head_m[at(cluster.nodes[i])] = state.headBefore_m[at(cluster.nodes[i])];
+    for (const int node : cluster.nodes) {
+        state.head_m[at(node)] = state.headBefore_m[at(node)];
     }
     if (!evaluate(state, cluster, true)) {
         return false;
     }
+    const double tolerance = headTolerance * model_.headScale_m;
     for (int count = 0; count < mostRobust; ++count) {
-        const double before = total();
-        std::copy_n(residual_.begin(), size_, change_.begin());
-        if (size_ > 0 && !choleskySolve(matrix_, change_, size_)) {
+        const double before = totalResidual();
+        std::copy_n(residual_.begin(), size_, trial_.begin());
+        if (size_ > 0 && !choleskySolve(matrix_, trial_, size_)) {
             return false;
         }
-        std::copy_n(change_.begin(), size_, trial_.begin());
-        double share = 1.0, worst = 0.0;
-        for (int halving = 0; halving < 12; ++halving) {
-            worst = 0.0;
-            for (std::size_t i = 0; i < size_; ++i) {
-                state.head_m[at(cluster.nodes[i])] += share * trial_[i];
-                worst = std::max(worst, std::fabs(share * trial_[i]));
-            }
-            if (!evaluate(state, cluster, true)) {
+        std::optional<double> worst;
+        double share = 1.0;
+        for (int halving = 0; halving < mostHalvings; ++halving, share *= 0.5) {
+            worst = tryMove(state, cluster, share);
+            if (!worst || !std::isfinite(totalResidual())) {
                 return false;
             }
-            if (total() <= before || worst <= headTolerance * model_.headScale_m) {
+            if (totalResidual() <= before || *worst <= tolerance) {
                 break;
             }
-            for (std::size_t i = 0; i < size_; ++i) {
-                state.head_m[at(cluster.nodes[i])] -= share * trial_[i];
+            if (halving + 1 < mostHalvings) {
+                tryMove(state, cluster, -share);
             }
-            share *= 0.5;
         }
-        if (!std::isfinite(total())) {
-            return false;
-        }
-        if (worst <= 10.0 * headTolerance * model_.headScale_m) {
+        if (*worst <= 10.0 * tolerance) {
             return true;
         }
     }

@@ -4,7 +4,9 @@
 #include "simulation/state.h"
 #include "simulation/unit_branch.h"
 
+#include <optional>
 #include <string>
+#include <utility>
 #include <vector>
 
 /// One step of the water: branch constants, clusters, and what they hand back to conduits and
@@ -46,11 +48,13 @@ private:
     bool solveCluster(State& state, const Cluster& cluster);
     bool solveRobustly(State& state, const Cluster& cluster);
     bool evaluate(State& state, const Cluster& cluster, bool alone);
-    bool correctHeads(State& state, const Cluster& cluster, double share);
+    bool correctHeads(State& state, const Cluster& cluster);
+    double totalResidual() const;
+    std::optional<double> tryMove(State& state, const Cluster& cluster, double share);
     void setFailure(State& state, std::size_t cluster);
     double addBranch(State& state, int branch);
     double addChamber(State& state, int chamber);
-    void addFlow(int from, int to, double flow, double slope);
+    void addFlow(int fromSlot, int toSlot, double flow, double slope);
     double drop(const State& state, const UnitRow& unit) const;
     void closeBalance(State& state, const Cluster& cluster);
     void handBack(State& state);
@@ -61,7 +65,6 @@ private:
     double step_ = 0.0;
     Mode mode_ = Mode::smooth;
     std::vector<double> residual_, matrix_, change_, trial_; // of the cluster being solved
-    std::vector<double> sizes_;
     std::size_t size_ = 0;
     double worstChange_ = 0.0, worstMove_ = 0.0;
     ClusterFailure failure_;
