@@ -3,6 +3,8 @@
 
 #include "units/quantity.h"
 
+#include <fmt/format.h>
+
 namespace headroom::limits {
 
 namespace {
@@ -10,19 +12,22 @@ namespace {
 std::string datumText(const plant::Site& site) {
     return site.datum.empty()
                ? "Levels are metres above one datum, which the project does not name."
-               : "Levels are metres above the datum \"" + site.datum + "\".";
+               : fmt::format("Levels are metres above the datum \"{}\".", site.datum);
 }
 
 std::string allowanceText(const plant::Allowance& allowance) {
-    std::string text = "Added to the computed value on the side of the bound before it is compared:";
+    std::string parts;
     if (allowance.shareOfHead > 0.0) {
-        text += " " + print(Quantity::percent, allowance.shareOfHead) + " of the static head";
+        parts = fmt::format("{} of the static head", print(Quantity::percent, allowance.shareOfHead));
     }
     if (allowance.shareOfRise > 0.0) {
-        text += allowance.shareOfHead > 0.0 ? " and " : " ";
-        text += print(Quantity::percent, allowance.shareOfRise) + " of the change from rest";
+        parts += parts.empty() ? "" : " and ";
+        parts += fmt::format("{} of the change from rest",
+                             print(Quantity::percent, allowance.shareOfRise));
     }
-    return text + ".";
+    return fmt::format("Added to the computed value on the side of the bound before it is "
+                       "compared: {}.",
+                       parts);
 }
 
 } // namespace
@@ -61,7 +66,8 @@ std::vector<Definition> definitions(const plant::Variant& variant) {
     };
     for (const auto& [name, limit] : variant.limits) {
         if (limit.allowance.shareOfHead > 0.0 || limit.allowance.shareOfRise > 0.0) {
-            sheet.push_back({"Allowance in \"" + name + "\"", allowanceText(limit.allowance)});
+            sheet.push_back(
+                {fmt::format("Allowance in \"{}\"", name), allowanceText(limit.allowance)});
         }
     }
     return sheet;

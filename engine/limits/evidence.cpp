@@ -23,11 +23,22 @@ bool worseValue(Side side, double a, double b) {
 
 // --- from a channel -----------------------------------------------------------------------------
 
-/// A channel and what to add to it to have the measure asked for.
+/// A channel and how the measure asked for follows from it: times `scale`, plus `offset`.
 struct Source {
     const Channel* channel = nullptr;
+    double scale = 1.0;
     double offset = 0.0;
 };
+
+/// Area of the bore of a conduit at a chainage.
+double areaAt_m2(const plant::Conduit& conduit, double chainage_m) {
+    for (const auto& [name, reach] : conduit.reaches) {
+        if (!reach.to_m || chainage_m <= *reach.to_m) {
+            return reach.area_m2;
+        }
+    }
+    return conduit.reaches[conduit.reaches.size() - 1].area_m2;
+}
 
 /// The channel of a conduit nearest to a chainage; a head there belongs to the envelope unless
 /// the channel lies exactly there.
@@ -46,21 +57,33 @@ const Channel* nearestAlong(const Run& run, Measure measure, const Place& place)
     return nearest;
 }
 
-Source sourceOf(Measure measure, const Place& place, const Run& run, const plant::Plant* plant) {
-    if (const auto* channel = run.find(measure, place)) {
-        return {channel, 0.0};
-    }
-    const bool along = place.thing == Thing::conduit;
-    if (along && (measure == Measure::discharge || measure == Measure::velocity)) {
-        return {nearestAlong(run, measure, place), 0.0};
-    }
+/// A head at a point less its elevation, or a discharge over its area, where the measure itself
+/// has no channel.
+Source derived(Measure measure, const Place& place, const Run& run, const plant::Plant& plant) {
     if (measure == Measure::pressureHead && place.thing == Thing::point) {
-        if (const auto* head = run.find(Measure::head, place)) {
-            const double axis_m = plant == nullptr ? 0.0 : plant->points[place.index].elevation_m;
-            return {head, -axis_m};
+        return {run.find(Measure::head, place), 1.0, -plant.points[place.index].elevation_m};
+    }
+    if (measure == Measure::velocity && place.thing == Thing::conduit) {
+        const auto& conduit = plant.conduits[place.index];
+        if (!conduit.reaches.empty()) {
+            return {nearestAlong(run, Measure::discharge, place),
+                    1.0 / areaAt_m2(conduit, place.chainage_m), 0.0};
         }
     }
     return {};
+}
+
+Source sourceOf(Measure measure, const Place& place, const Run& run, const plant::Plant& plant) {
+    if (const auto* channel = run.find(measure, place)) {
+        return {channel};
+    }
+    const bool along = place.thing == Thing::conduit;
+    if (along && (measure == Measure::discharge || measure == Measure::velocity)) {
+        if (const auto* nearest = nearestAlong(run, measure, place)) {
+            return {nearest};
+        }
+    }
+    return derived(measure, place, run, plant);
 }
 
 /// Extreme and step of a trace up to an instant.
@@ -112,9 +135,11 @@ std::optional<Evidence> fromChannel(const Source& source, Side side, const Run& 
         return std::nullopt;
     }
     found.place = channel.place;
-    found.rest = channel.atRest + source.offset;
-    found.extreme += source.offset;
+    found.rest = source.scale * channel.atRest + source.offset;
+    found.extreme = source.scale * found.extreme + source.offset;
+    found.largestStep *= source.scale;
     found.trace = channel.trace.last.empty() ? nullptr : &channel.trace;
+    found.scale = source.scale;
     found.offset = source.offset;
     found.interval_s = run.recordInterval_s;
     return found;
@@ -197,15 +222,16 @@ std::optional<Evidence> fromEnvelope(const plant::Limit& limit, const Place& pla
 
 } // namespace
 
-bool recorded(const plant::Limit& limit, const Place& place, const Run& run) {
-    return sourceOf(limit.measure, place, run, nullptr).channel != nullptr ||
+bool recorded(const plant::Limit& limit, const Place& place, const Run& run,
+              const plant::Plant& plant) {
+    return sourceOf(limit.measure, place, run, plant).channel != nullptr ||
            (headAlong(limit, place) && envelopeOf(run, place.index) != nullptr);
 }
 
 std::optional<Evidence> evidence(const plant::Limit& limit, const Place& place, Side side,
                                  const Run& run, const plant::Plant& plant, double until_s) {
     if (!limit.wholeConduit) {
-        const auto source = sourceOf(limit.measure, place, run, &plant);
+        const auto source = sourceOf(limit.measure, place, run, plant);
         if (source.channel != nullptr) {
             return fromChannel(source, side, run, until_s);
         }

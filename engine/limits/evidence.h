@@ -19,7 +19,8 @@ struct Evidence {
     double time_s = 0.0;
     double largestStep = 0.0;               ///< S around the extreme
     const results::Trace* trace = nullptr;  ///< nullptr: no trace at this place
-    double offset = 0.0;                    ///< added to the trace's values to give the measure
+    double scale = 1.0;                     ///< > 0; a traced value times this …
+    double offset = 0.0;                    ///< … plus this is the measure
     double interval_s = 0.0;                ///< of the trace
 };
 
@@ -31,6 +32,7 @@ std::optional<Evidence> evidence(const plant::Limit& limit, const results::Place
                                  double until_s);
 
 /// Whether the run computes this measure at this place at all.
-bool recorded(const plant::Limit& limit, const results::Place& place, const results::Run& run);
+bool recorded(const plant::Limit& limit, const results::Place& place, const results::Run& run,
+              const plant::Plant& plant);
 
 } // namespace headroom::limits

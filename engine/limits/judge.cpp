@@ -171,7 +171,7 @@ bool measuredInHead(Measure measure) {
 Verdict judgeRun(const Verdict& start, const Case& given, const std::string& subject) {
     Case the = given;
     const auto& plant = the.variant.plant;
-    if (!recorded(the.limit, the.place, the.run)) {
+    if (!recorded(the.limit, the.place, the.run, plant)) {
         if (the.run.status.reason != EndReason::completed) {
             return notValid(start, *usable(the.run, the.place, subject).why);
         }
@@ -206,7 +206,7 @@ Verdict judgeRun(const Verdict& start, const Case& given, const std::string& sub
 Verdict judgeLimit(const plant::Variant& variant, const plant::Study& study, int index,
                    const Run* run, const Run* repeat) {
     const auto& limit = variant.limits[index];
-    const std::string subject = "limits/" + variant.limits.name(index);
+    const std::string subject = plant::join({"limits", variant.limits.name(index)});
     Verdict verdict;
     verdict.limit = index;
     verdict.measure = limit.measure;

@@ -3,6 +3,8 @@
 
 #include "units/quantity.h"
 
+#include <fmt/format.h>
+
 namespace headroom::limits {
 
 namespace {
@@ -53,8 +55,8 @@ std::string nameOf(const Place& place, const plant::Plant& plant) {
     case Thing::chamber: return plant.chambers.name(place.index);
     case Thing::unit: return plant.units.name(place.index);
     case Thing::conduit:
-        return plant.conduits.name(place.index) + " at " +
-               printNumber(Quantity::chainage, place.chainage_m, {}, 0) + " m";
+        return fmt::format("{} at {}\u2009m", plant.conduits.name(place.index),
+                           printNumber(Quantity::chainage, place.chainage_m, {}, 0));
     }
     return {};
 }

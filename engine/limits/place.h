@@ -6,6 +6,7 @@
 #include "results/run.h"
 
 #include <optional>
+#include <string>
 
 namespace headroom::limits {
 

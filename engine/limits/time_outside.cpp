@@ -49,7 +49,7 @@ Outside timeOutside(const Evidence& evidence, Side side, double bound, double un
     const auto& trace = *evidence.trace;
     const double sign = side == Side::upper ? 1.0 : -1.0;
     const auto beyond = [&](float value) {
-        return sign * (static_cast<double>(value) + evidence.offset - bound);
+        return sign * (evidence.scale * static_cast<double>(value) + evidence.offset - bound);
     };
     const auto& peaks = side == Side::upper ? trace.high : trace.low;
     Clock clock(beyond(trace.last.front()));
@@ -75,8 +75,8 @@ double valueExceededFor(const Evidence& evidence, Side side, plant::TimeRule rul
                         double allowed_s, double until_s) {
     const auto [low, high] =
         std::minmax_element(evidence.trace->last.begin(), evidence.trace->last.end());
-    double mild = (side == Side::upper ? static_cast<double>(*low) : static_cast<double>(*high)) +
-                  evidence.offset; // outside it for the longest time
+    const double mildest = static_cast<double>(side == Side::upper ? *low : *high);
+    double mild = evidence.scale * mildest + evidence.offset; // outside it for the longest time
     double severe = evidence.extreme; // outside it for no time
     const auto spent_s = [&](double value) {
         return timeOutside(evidence, side, value, until_s).counted_s(rule);

@@ -26,7 +26,7 @@ Finding note(const Message& message, const Snapshot& snapshot, int study,
              const results::Run& run) {
     Finding made;
     made.message = &message;
-    made.subject = "studies/" + snapshot.studyName(study);
+    made.subject = plant::join({"studies", snapshot.studyName(study)});
     made.arguments = {{"reached", amount(Quantity::time, run.status.reached_s)},
                       {"wanted", amount(Quantity::time, run.duration_s)}};
     return made;

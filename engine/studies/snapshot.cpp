@@ -46,7 +46,7 @@ int indexBefore(const plant::Keyed<Value>& now, int index, const plant::Keyed<Va
 
 /// The first error that stops a study, whatever the option: its own, or one of the whole project.
 const Finding* blockingError(const plant::Bound& bound, const std::string& studyName) {
-    const std::string own = "studies/" + studyName;
+    const std::string own = plant::join({"studies", studyName});
     const auto beginsWith = [](const std::string& text, std::string_view start) {
         return text.compare(0, start.size(), start) == 0;
     };
@@ -55,7 +55,7 @@ const Finding* blockingError(const plant::Bound& bound, const std::string& study
             continue;
         }
         const auto& subject = finding.subject;
-        const bool ofStudy = subject == own || beginsWith(subject, own + "/");
+        const bool ofStudy = subject == own || beginsWith(subject, plant::join({"studies", studyName, ""}));
         // Errors of site, plant, limits and an option's changes are those of its variant.
         bool elsewhere = false;
         for (const char* part : {"studies/", "options/", "plant", "site", "limits"}) {

@@ -136,10 +136,32 @@ TEST_CASE("evidence: a flow along a conduit from the nearest channel", "[limits]
     CHECK(found->place.chainage_m == 5000.0);
 }
 
+TEST_CASE("evidence: a velocity from the discharge and the bore", "[limits][analytic]") {
+    const auto run = hand_made::run(
+        {hand_made::channel(Measure::discharge, {Thing::conduit, 1, 5000.0}, {60.0, 50.0}, 1.0)},
+        1.0);
+    auto plant = hand_made::plantA();
+    plant::Reach wide, narrow;
+    wide.area_m2 = 20.0;
+    wide.to_m = 5100.0;
+    narrow.area_m2 = 10.0;
+    plant.conduits[1].reaches.add("wide", wide);
+    plant.conduits[1].reaches.add("narrow", narrow);
+    const auto found =
+        evidence(conduitLimit(Measure::velocity), bend, Side::upper, run, plant, whole_s);
+    REQUIRE(found);
+    CHECK(found->extreme == 6.0);
+    CHECK(found->rest == 6.0);
+    const auto upper = evidence(conduitLimit(Measure::velocity), {Thing::conduit, 1, 5050.0},
+                                Side::lower, run, plant, whole_s);
+    CHECK(upper->extreme == 2.5);
+}
+
 TEST_CASE("evidence: what a run does not compute is said", "[limits][limit]") {
     const auto run = withEnvelope();
-    CHECK(recorded(conduitLimit(Measure::head), bend, run));
-    CHECK_FALSE(recorded(conduitLimit(Measure::velocity), bend, run));
-    CHECK_FALSE(recorded(pointLimit(Measure::head), inlet, run));
-    CHECK_FALSE(recorded(hand_made::shaftLevel(), hand_made::shaftPlace, run));
+    const auto plant = hand_made::plantA();
+    CHECK(recorded(conduitLimit(Measure::head), bend, run, plant));
+    CHECK_FALSE(recorded(conduitLimit(Measure::velocity), bend, run, plant));
+    CHECK_FALSE(recorded(pointLimit(Measure::head), inlet, run, plant));
+    CHECK_FALSE(recorded(hand_made::shaftLevel(), hand_made::shaftPlace, run, plant));
 }

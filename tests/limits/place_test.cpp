@@ -45,6 +45,6 @@ TEST_CASE("place: the grid needs no name; what is not there is no place", "[limi
 TEST_CASE("place: is told by the user's name", "[limits][messages]") {
     const auto plant = hand_made::plantA();
     CHECK(nameOf({Thing::chamber, 0}, plant) == "Shaft");
-    CHECK(nameOf({Thing::conduit, 1, 5250.0}, plant) == "Penstock at 5250 m");
+    CHECK(nameOf({Thing::conduit, 1, 5250.0}, plant) == "Penstock at 5250\u2009m");
     CHECK(nameOf({}, plant) == "grid");
 }
