@@ -50,6 +50,7 @@ QString Document::name() const {
 
 void Document::openFile(const std::filesystem::path& path) {
     auto opened = files::openProject(path);
+    emit opening();
     path_ = path;
     tree_ = opened.tree;
     opened_ = true;
@@ -63,6 +64,7 @@ void Document::openFile(const std::filesystem::path& path) {
 }
 
 void Document::close() {
+    emit opening();
     path_.clear();
     tree_ = {};
     opened_ = false;

@@ -46,6 +46,7 @@ public:
     void undoGesture(int gesture);
 
 signals:
+    void opening(); ///< another project comes, or none; before its snapshot
     void snapshotChanged();
     void findingsChanged();
     void fileChanged(); ///< another file, saved, or changed since

@@ -365,6 +365,8 @@ void Lanes::setTimeRange(double from_s, double to_s) {
 
 void Lanes::showAllTime() { setTimeRange(0.0, longest_s()); }
 
+void Lanes::paintNow() { hidden_->plot->replot(QCustomPlot::rpImmediateRefresh); }
+
 void Lanes::zoomTime(double factor, double around_s) {
     const auto& h = *hidden_;
     setTimeRange(around_s - (around_s - h.from_s) * factor, around_s + (h.to_s - around_s) * factor);

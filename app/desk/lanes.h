@@ -44,6 +44,7 @@ public:
     QString description() const; ///< for a screen reader
 
     void showAllTime();
+    void paintNow(); ///< what is queued for the next turn of the event loop
     void stepCursor(int samples); ///< asks for the cursor that many recorded instants on
 
 signals:

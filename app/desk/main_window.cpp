@@ -18,6 +18,7 @@
 #include <QCloseEvent>
 #include <QCoreApplication>
 #include <QHBoxLayout>
+#include <QPixmap>
 #include <QSplitter>
 #include <QToolTip>
 #include <QVBoxLayout>
@@ -311,7 +312,10 @@ void MainWindow::setScale(double scale) {
 
 void MainWindow::applyLook() {
     const bool dark = session_.dress == Session::Dress::dark || (session_.dress == Session::Dress::system && systemIsDark());
-    const auto& look = drawing::look(dark ? drawing::Scheme::dark : drawing::Scheme::light, session_.scale);
+    dressIn(drawing::look(dark ? drawing::Scheme::dark : drawing::Scheme::light, session_.scale));
+}
+
+void MainWindow::dressIn(const drawing::Look& look) {
     styling_ = true;
     setPalette(paletteFor(look));
     setStyleSheet(styleSheetFor(look));
@@ -325,6 +329,15 @@ void MainWindow::applyLook() {
     lanes_->setLook(look);
     showLanes();
     update();
+}
+
+QPixmap MainWindow::printed() {
+    dressIn(drawing::look(drawing::Scheme::print, session_.scale));
+    QCoreApplication::sendPostedEvents();
+    lanes_->paintNow();
+    const auto picture = grab();
+    applyLook();
+    return picture;
 }
 
 void MainWindow::changeEvent(QEvent* event) {

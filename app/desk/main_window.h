@@ -52,6 +52,8 @@ public:
     void openSlip(const plant::Path& path, const QString& typed, int row = -1, int column = -1);
     void showFindings(bool shown);
     void reportInternalError(const QString& what);
+    /// The sheet as it is printed: in the print scheme, whatever the window's.
+    QPixmap printed();
 
 protected:
     void closeEvent(QCloseEvent* event) override;
@@ -76,6 +78,7 @@ private:
     void describe();
     bool mayLeave();
     void applyLook();
+    void dressIn(const drawing::Look& look);
     QRectF placeFor(const plant::Path& path) const;
     bool performEdit(CommandId id);
     bool performView(CommandId id);

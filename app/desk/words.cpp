@@ -73,8 +73,10 @@ QString pathWords(const plant::Path& path) {
         const auto* above = plant::fieldAt(owner);
         const bool isName = above != nullptr && above == field;
         const bool container = field != nullptr && field->kind == plant::FieldKind::keyed && !isName;
-        if (container || (field != nullptr && field->kind == plant::FieldKind::oneOf)) {
-            continue; // "Reaches", "Turbine": the name or kind below says enough
+        const bool kind = (field != nullptr && field->kind == plant::FieldKind::oneOf) ||
+                          (above != nullptr && above->kind == plant::FieldKind::oneOf);
+        if (container || kind) {
+            continue; // "Reaches", "Turbine", "Francis turbine": what stands below says enough
         }
         QString word = isName || field == nullptr ? text(part.back()) : text(field->label).toLower();
         words += words.isEmpty() ? word : QStringLiteral(", ") + word;

@@ -11,10 +11,9 @@ namespace headroom::desk {
 Workbench::Workbench(int threads)
     : runs_(threads), board_(runs_), look_(&drawing::look(drawing::Scheme::light)) {
     connect(&document_, &Document::snapshotChanged, this, &Workbench::snapshotChanged);
-    connect(&document_, &Document::fileChanged, this, [this] {
-        if (!document_.changed() && document_.undo().count() == 0) {
-            chosen_ = false; // another file: nothing chosen in it yet
-        }
+    connect(&document_, &Document::opening, this, [this] {
+        chosen_ = false; // nothing is chosen in it yet
+        selection_.set({});
     });
     connect(&board_, &BoardModel::changed, this, &Workbench::boardChanged);
     connect(&selection_, &SelectionModel::changed, this, &Workbench::selectionChanged);
@@ -26,10 +25,6 @@ void Workbench::setLook(const drawing::Look& look) {
 }
 
 void Workbench::snapshotChanged() {
-    if (document_.undo().count() == 0) {
-        chosen_ = false;
-        selection_.set({});
-    }
     board_.setSnapshot(document_.snapshot());
 }
 
