@@ -71,10 +71,11 @@ public:
                 }
             }
         }
+        std::string own("^");
+        own += plant::ownKeyPrefix;
         Members members{{"type", text("object")},
                         {"properties", Tree::object(std::move(properties))},
-                        {"patternProperties",
-                         Tree::object({{"^" + std::string(plant::ownKeyPrefix), Tree::object({})}})},
+                        {"patternProperties", Tree::object({{own, Tree::object({})}})},
                         {"additionalProperties", Tree::boolean(false)}};
         if (!patch_) {
             addPresence(owner, members);
@@ -165,7 +166,8 @@ private:
             for (const auto& row : form) {
                 all.push_back(row.key);
             }
-            Members option{{"required", texts(requiredOf(form))}};
+            Members option;
+            option.emplace_back("required", texts(requiredOf(form)));
             if (!others.empty()) {
                 option.emplace_back("not", without(others));
             }
@@ -180,8 +182,8 @@ private:
     /// A row's value with title, help and default.
     Tree described(const Field& row) const {
         std::string title(row.label);
-        const bool hasUnit = row.kind == FieldKind::number || row.kind == FieldKind::interval ||
-                             row.kind == FieldKind::numbers;
+        const bool hasUnit = row.kind == FieldKind::number || row.kind == FieldKind::interval
+                             || row.kind == FieldKind::numbers;
         if (hasUnit && !info(row.quantity).symbol.empty()) {
             title += fmt::format(" [{}]", info(row.quantity).symbol);
         }
@@ -202,47 +204,56 @@ private:
     Tree valueOf(const Field& row) const {
         switch (row.kind) {
         case FieldKind::number:
-            return row.fields.empty()
-                       ? numberWithin(row.quantity, row.hard)
-                       : anyOf({numberWithin(row.quantity, row.hard), group(row)});
+            return row.fields.empty() ? numberWithin(row.quantity, row.hard)
+                                      : anyOf({numberWithin(row.quantity, row.hard), group(row)});
         case FieldKind::whole:
             return Tree::object({{"type", text("integer")},
                                  {"minimum", Tree::number(row.hard ? row.hard->low : 0)}});
-        case FieldKind::truth: return typed("boolean");
-        case FieldKind::choice: return Tree::object({{"enum", texts(row.choices)}});
-        case FieldKind::text: return typed("string");
-        case FieldKind::reference: return name();
+        case FieldKind::truth:
+            return typed("boolean");
+        case FieldKind::choice:
+            return Tree::object({{"enum", texts(row.choices)}});
+        case FieldKind::text:
+            return typed("string");
+        case FieldKind::reference:
+            return name();
         case FieldKind::references:
-            return Tree::object({{"type", text("array")}, {"items", name()},
-                                 {"minItems", Tree::number(1)}});
+            return Tree::object(
+                {{"type", text("array")}, {"items", name()}, {"minItems", Tree::number(1)}});
         case FieldKind::location:
             return row.fields.empty() ? name() : anyOf({name(), group(row)});
-        case FieldKind::table: return table(row);
-        case FieldKind::interval: return rowOfNumbers({row.quantity, row.quantity},
-                                                      {row.hard, row.hard});
+        case FieldKind::table:
+            return table(row);
+        case FieldKind::interval:
+            return rowOfNumbers({row.quantity, row.quantity}, {row.hard, row.hard});
         case FieldKind::group:
-        case FieldKind::oneOf: return group(row);
-        case FieldKind::keyed: return names(patch_ ? anyOf({group(row), typed("null")})
-                                                   : group(row));
-        case FieldKind::numbers: return names(numberWithin(row.quantity, row.hard));
-        case FieldKind::patch: return Maker(true).group(plant::varyingRow());
+        case FieldKind::oneOf:
+            return group(row);
+        case FieldKind::keyed:
+            return names(patch_ ? anyOf({group(row), typed("null")}) : group(row));
+        case FieldKind::numbers:
+            return names(numberWithin(row.quantity, row.hard));
+        case FieldKind::patch:
+            return Maker(true).group(plant::varyingRow());
         case FieldKind::free:
-        case FieldKind::eitherOf: break;
+        case FieldKind::eitherOf:
+            break;
         }
         return Tree::object({});
     }
 
     static Tree name() {
-        return Tree::object({{"type", text("string")}, {"minLength", Tree::number(1)},
+        return Tree::object({{"type", text("string")},
+                             {"minLength", Tree::number(1)},
                              {"maxLength", Tree::number(plant::longestName)}});
     }
 
     static Tree names(Tree thing) {
-        return Tree::object({{"type", text("object")},
-                             {"propertyNames",
-                              Tree::object({{"minLength", Tree::number(1)},
-                                            {"maxLength", Tree::number(plant::longestName)}})},
-                             {"additionalProperties", std::move(thing)}});
+        return Tree::object(
+            {{"type", text("object")},
+             {"propertyNames", Tree::object({{"minLength", Tree::number(1)},
+                                             {"maxLength", Tree::number(plant::longestName)}})},
+             {"additionalProperties", std::move(thing)}});
     }
 
     static Tree rowOfNumbers(const std::vector<Quantity>& quantities,
@@ -252,8 +263,10 @@ private:
             cells.push_back(numberWithin(quantities[i], ranges[i]));
         }
         const auto count = Tree::number(static_cast<double>(cells.size()));
-        return Tree::object({{"type", text("array")}, {"prefixItems", Tree::array(std::move(cells))},
-                             {"minItems", count}, {"maxItems", count}});
+        return Tree::object({{"type", text("array")},
+                             {"prefixItems", Tree::array(std::move(cells))},
+                             {"minItems", count},
+                             {"maxItems", count}});
     }
 
     static Tree table(const Field& row) {
@@ -263,10 +276,10 @@ private:
             quantities.push_back(column.quantity);
             ranges.emplace_back(column.hard);
         }
-        const Tree inLine = Tree::object(
-            {{"type", text("array")}, {"items", rowOfNumbers(quantities, ranges)},
-             {"minItems", Tree::number(row.leastRows)},
-             {"maxItems", Tree::number(plant::longestInlineTable)}});
+        const Tree inLine = Tree::object({{"type", text("array")},
+                                          {"items", rowOfNumbers(quantities, ranges)},
+                                          {"minItems", Tree::number(row.leastRows)},
+                                          {"maxItems", Tree::number(plant::longestInlineTable)}});
         const Tree outer = Tree::object(
             {{"type", text("object")},
              {"properties", Tree::object({{std::string(plant::outerTableKey), typed("string")}})},
@@ -286,7 +299,9 @@ Tree projectSchema() {
                     {"description", text("A plant, its limits, options and studies. Made by "
                                          "headroom-batch schema from the program's field rows.")}};
     const Tree project = Maker(false).group(plant::projectRow());
-    members.insert(members.end(), project.members().begin(), project.members().end());
+    for (const auto& member : project.members()) {
+        members.push_back(member);
+    }
     members.emplace_back("$defs", Maker::sharedParts());
     return Tree::object(std::move(members));
 }
