@@ -10,7 +10,7 @@
 namespace headroom::simulation {
 namespace {
 
-constexpr double sliver = 1e-6; // of a step: the time a jump takes
+constexpr double sliver = 1e-6;  // of a step: the time a jump takes
 constexpr double mostJump = 1e4; // of the plant's head; more means that nothing can give way
 
 Schedule nothing(const Model& model) {
@@ -66,10 +66,10 @@ void Advance::placeWater() {
         const EndLoss& from = conduit.geometry.from;
         const EndLoss& to = conduit.geometry.to;
         state_.startFlow_m3s[i] = state_.endFlow_m3s[i] = flow;
-        state_.startHead_m[i] = rest_.head_m[at(conduit.from)] -
-                                (flow >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
-        state_.endHead_m[i] = rest_.head_m[at(conduit.to)] +
-                              (flow >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
+        state_.startHead_m[i] = rest_.head_m[at(conduit.from)]
+                                - (flow >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
+        state_.endHead_m[i] = rest_.head_m[at(conduit.to)]
+                              + (flow >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
         for (const int branch : {model_.startBranch[i], model_.endBranch[i]}) {
             BranchState& state = state_.branches[at(branch)];
             state.flow_m3s = state.now_m3s = state.before_m3s = flow;
@@ -90,11 +90,12 @@ std::optional<Finding> Advance::placeChambers() {
             level -= row.velocityShare_s2m5 * flow * flow;
         }
         if (level < row.table.floor_m() || level > row.table.rim_m()) {
-            return Finding{.message = &chamberRestOutside,
-                           .subject = model_.chamberPath[i],
-                           .arguments = {{"level", amount(Quantity::elevation, level)},
-                                         {"floor", amount(Quantity::elevation, row.table.floor_m())},
-                                         {"rim", amount(Quantity::elevation, row.table.rim_m())}}};
+            return Finding{
+                .message = &chamberRestOutside,
+                .subject = model_.chamberPath[i],
+                .arguments = {{"level", amount(Quantity::elevation, level)},
+                              {"floor", amount(Quantity::elevation, row.table.floor_m())},
+                              {"rim", amount(Quantity::elevation, row.table.rim_m())}}};
         }
         state_.chambers[i].volume_m3 = row.table.volume_m3(level);
         state_.chambers[i].level_m = level;
@@ -150,9 +151,9 @@ void Advance::placeSchedule() {
             schedule.jumps_s.insert(schedule.jumps_s.end(), jumps.begin(), jumps.end());
         }
     }
-    const bool offset = !undisturbed_ && std::any_of(model_.chamberStart_m.begin(),
-                                                     model_.chamberStart_m.end(),
-                                                     [](const auto& v) { return v.has_value(); });
+    const bool offset = !undisturbed_
+                        && std::any_of(model_.chamberStart_m.begin(), model_.chamberStart_m.end(),
+                                       [](const auto& v) { return v.has_value(); });
     if (offset) {
         schedule.jumps_s.push_back(0.0);
     }
@@ -173,8 +174,7 @@ void Advance::setKnownHeads(double time_s, bool after) {
 /// straight on from the last two instants, because it follows from the powers of this step.
 double Advance::frequencyAt(double time_s, bool after) const {
     if (areaRules(time_s)) {
-        return after ? state_.frequency_Hz
-                     : 2.0 * state_.frequency_Hz - state_.frequencyBefore_Hz;
+        return after ? state_.frequency_Hz : 2.0 * state_.frequency_Hz - state_.frequencyBefore_Hz;
     }
     const Prescription& imposed = state_.schedule.frequency_Hz;
     return after ? imposed.valueAfter(time_s) : imposed.value(time_s);
@@ -240,8 +240,8 @@ void Advance::advanceGrid(double start_s, double end_s) {
         }
         state_.area = grid::advance(*model_.area, state_.area,
                                     {state_.ownPower_W - state_.ownPowerAtRest_W,
-                                     own - state_.ownPowerAtRest_W,
-                                     2.0 * lostMean - state_.lost_W, state_.lost_W, step, locked});
+                                     own - state_.ownPowerAtRest_W, 2.0 * lostMean - state_.lost_W,
+                                     state_.lost_W, step, locked});
         state_.frequency_Hz = model_.nominal_Hz + state_.area.deviation_Hz;
     } else {
         state_.frequency_Hz = frequencyAt(end_s, false);
@@ -251,8 +251,8 @@ void Advance::advanceGrid(double start_s, double end_s) {
 }
 
 bool Advance::jumpAt(double time_s) const {
-    return nextJump_ < state_.schedule.jumps_s.size() &&
-           state_.schedule.jumps_s[nextJump_] <= time_s + 1e-9 * model_.grid.step_s;
+    return nextJump_ < state_.schedule.jumps_s.size()
+           && state_.schedule.jumps_s[nextJump_] <= time_s + 1e-9 * model_.grid.step_s;
 }
 
 /// What a jump changes at one instant: discharges and heads, found by a step that takes no time.
@@ -299,24 +299,24 @@ bool Advance::step() {
     const double start = model_.grid.at(state_.step);
     const double end = model_.grid.at(state_.step + 1);
     const double step = model_.grid.step_s;
-    setKnownHeads(end, false);                                   // 1
-    gates_.advance(state_, start, step);                         // 2
-    model_.rows.sweep(state_.elastic, model_.instructions);      // 3
+    setKnownHeads(end, false);                              // 1
+    gates_.advance(state_, start, step);                    // 2
+    model_.rows.sweep(state_.elastic, model_.instructions); // 3
     const bool changes = modeChanges();
     const bool euler = state_.restart || changes;
     fillUnitSteps(end, false);
     for (UnitStep& unit : unitSteps_) {
         unit.backwardEuler = euler;
     }
-    if (!water_.solve(state_, unitSteps_, step,                   // 4, 5, 6
+    if (!water_.solve(state_, unitSteps_, step, // 4, 5, 6
                       euler ? WaterStep::Mode::kink : WaterStep::Mode::smooth)) {
         return false;
     }
-    water_.accept(state_, unitSteps_, step);                     // 7
-    advanceGrid(start, end);                                     // 8
+    water_.accept(state_, unitSteps_, step); // 7
+    advanceGrid(start, end);                 // 8
     state_.step += 1;
     state_.time_s = end;
-    gates_.afterWater(state_);                                   // 9
+    gates_.afterWater(state_); // 9
     state_.restart = changes;
     jumped_ = jumpAt(end);
     if (jumped_) {

@@ -46,18 +46,19 @@ std::vector<results::Channel> assembleChannels(const Model& model, const Channel
     const double step = model.grid.step_s;
     for (std::size_t i = 0; i < channels.items().size(); ++i) {
         const auto& item = channels.items()[i];
-        results::Channel channel{item.measure,           item.place,
-                                 atRest[i],              atEnd[i],
-                                 watch.least(i, step),   watch.greatest(i, step),
+        results::Channel channel{item.measure,   item.place,           atRest[i],
+                                 atEnd[i],       watch.least(i, step), watch.greatest(i, step),
                                  record.trace(i)};
-        const bool head = item.measure == Measure::head && item.place.thing == results::Thing::point;
+        const bool head =
+            item.measure == Measure::head && item.place.thing == results::Thing::point;
         const bool flow =
             item.measure == Measure::discharge && item.place.thing == results::Thing::conduit;
         if (head) {
             const double elevation = model.nodes[at(model.pointNode(item.place.index))].elevation_m;
             out.push_back(derived(channel, Measure::pressureHead, 1.0, -elevation));
         } else if (flow) {
-            out.push_back(derived(channel, Measure::velocity, 1.0 / endArea(model, item.place), 0.0));
+            out.push_back(
+                derived(channel, Measure::velocity, 1.0 / endArea(model, item.place), 0.0));
         }
         out.push_back(std::move(channel));
     }

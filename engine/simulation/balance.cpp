@@ -5,9 +5,7 @@
 #include <cmath>
 
 namespace headroom::simulation {
-namespace {
-
-} // namespace
+namespace {} // namespace
 
 BalanceKeeper::BalanceKeeper(const Model& model) : model_(model) {
     const std::size_t units = model.units.size();
@@ -76,9 +74,8 @@ void BalanceKeeper::takeEnergy(const State& state) {
             continue;
         }
         const double trip = state.controls[i].tripFraction;
-        const double braked = trip >= 0.0 && onGrid_[i]
-                                  ? 2.0 * trip * electrical_[i]
-                                  : electrical_[i] + machine.electrical;
+        const double braked = trip >= 0.0 && onGrid_[i] ? 2.0 * trip * electrical_[i]
+                                                        : electrical_[i] + machine.electrical;
         const double mean = 0.5 * (speed_[i] + machine.speed);
         const double driven = torque_[i] + machine.torque;
         if (!(unit.rotor.locked && machine.onGrid)) {

@@ -131,8 +131,7 @@ double Channels::pointHead(const State& state, int index) const {
 
 double* Channels::fillPoints(const State& state, double* out) {
     const std::size_t count = model_.pointNode_.size();
-    const double span =
-        static_cast<double>(windowRows_ * windowEvery_) * model_.grid.step_s;
+    const double span = static_cast<double>(windowRows_ * windowEvery_) * model_.grid.step_s;
     const bool due = windowCount_ == 0;
     double* const row = window_.data() + windowRow_ * count;
     for (std::size_t i = 0; i < count; ++i) {
@@ -166,8 +165,8 @@ double* Channels::fillUnits(const State& state, double* out) const {
         const double outlet = state.head_m[at(unit.outlet)];
         const double exit = unit.exitLoss_s2m5 * square;
         // Upstream of the draft tube's inertia: what moves the water in it stands there too.
-        const double driven = unit.draftInertia_s2m2 *
-                              (machine.flow_m3s - machine.flowBefore_m3s) / model_.grid.step_s;
+        const double driven = unit.draftInertia_s2m2 * (machine.flow_m3s - machine.flowBefore_m3s)
+                              / model_.grid.step_s;
         *out++ = machine.flow_m3s;
         *out++ = machine.speed;
         *out++ = control.opening;
@@ -178,8 +177,8 @@ double* Channels::fillUnits(const State& state, double* out) const {
         *out++ = machine.terminalPower_W;
         *out++ = state.head_m[at(unit.inlet)] - outlet - exit;
         *out++ = pointHead(state, unit.inlet);
-        *out++ = outlet + exit + driven - unit.recovery_s2m5 * std::fabs(square) -
-                 unit.centreline_m;
+        *out++ =
+            outlet + exit + driven - unit.recovery_s2m5 * std::fabs(square) - unit.centreline_m;
     }
     return out;
 }
@@ -205,11 +204,11 @@ void Channels::fill(const State& state, double* row) {
     for (const Station& station : stations_) {
         const auto conduit = at(station.conduit);
         if (station.cell >= 0) {
-            *out++ = head[model_.rows.firstNode(at(model_.conduits[conduit].row)) +
-                          at(station.cell)];
+            *out++ =
+                head[model_.rows.firstNode(at(model_.conduits[conduit].row)) + at(station.cell)];
         } else {
-            *out++ = state.startHead_m[conduit] +
-                     station.share * (state.endHead_m[conduit] - state.startHead_m[conduit]);
+            *out++ = state.startHead_m[conduit]
+                     + station.share * (state.endHead_m[conduit] - state.startHead_m[conduit]);
         }
     }
 }

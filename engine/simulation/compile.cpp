@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "simulation/compile_parts.h"
-
 #include "simulation/messages.h"
 
 #include <algorithm>
@@ -71,8 +70,8 @@ double stepCap(const Model& model, const Settings& settings) {
             cap = std::min(cap, shareOfTimeConstant * unit.servo->lag_s);
         }
         if (unit.freeShaft() && !unit.rotor.locked) {
-            const auto swing = grid::swing(
-                unit.rotor, unit.accelerationTime_s() / unit.electricalScale);
+            const auto swing =
+                grid::swing(unit.rotor, unit.accelerationTime_s() / unit.electricalScale);
             if (swing.frequency_rads > 0.0) {
                 cap = std::min(cap, shareOfTimeConstant / swing.frequency_rads);
             }
@@ -90,10 +89,9 @@ StepRequest stepRequest(const Model& model, const plant::Plant& plant, const Set
     for (int i = 0; i < plant.conduits.size(); ++i) {
         const auto wanted = plant.conduits[i].model;
         const double time = model.conduits[static_cast<std::size_t>(i)].geometry.travelTime_s();
-        request.conduits.push_back({time,
-                                    wanted == plant::ConduitModel::rigid ? ConduitKind::rigid
-                                                                         : ConduitKind::elastic,
-                                    wanted == plant::ConduitModel::automatic});
+        request.conduits.push_back(
+            {time, wanted == plant::ConduitModel::rigid ? ConduitKind::rigid : ConduitKind::elastic,
+             wanted == plant::ConduitModel::automatic});
         if (wanted == plant::ConduitModel::elastic) {
             request.cap_s = std::min(request.cap_s, time / leastCells);
         }
@@ -126,8 +124,7 @@ void noteChoice(Model& model, const plant::Plant& plant, const StepChoice& choic
         } else if (choice.kinds[i] == ConduitKind::rigid) {
             notes.push_back(about(rigidChosen, path, {}));
         } else {
-            notes.push_back(about(elasticChosen, path,
-                                  {{"cells", std::int64_t{choice.cells[i]}}}));
+            notes.push_back(about(elasticChosen, path, {{"cells", std::int64_t{choice.cells[i]}}}));
         }
         const double stretch = std::fabs(choice.stretch[i]);
         if (stretch > stretchNoted) {
@@ -156,8 +153,7 @@ void setInstructions(Model& model) {
     model.instructions = hydraulics::bestInstructionSet();
     for (const auto set :
          {InstructionSet::baseline, InstructionSet::avx2, InstructionSet::avx512}) {
-        if (hydraulics::nameOf(set) == model.settings.instructions &&
-            hydraulics::available(set)) {
+        if (hydraulics::nameOf(set) == model.settings.instructions && hydraulics::available(set)) {
             model.instructions = set;
         }
     }

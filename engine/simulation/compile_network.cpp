@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "simulation/compile_parts.h"
-
 #include "simulation/messages.h"
 
 #include <algorithm>
@@ -42,16 +41,16 @@ std::vector<hydraulics::ElasticCell> cellsOf(const ConduitGeometry& geometry, in
         constexpr double sliver = 1e-9; // of a cell; rounding, not a piece
         int first = static_cast<int>(std::floor(time / cellTime + sliver));
         for (int i = first; i < count && i * cellTime < until - sliver * cellTime; ++i) {
-            const bool whole = i * cellTime >= time - sliver * cellTime &&
-                               (i + 1) * cellTime <= until + sliver * cellTime;
-            const double share = whole ? cellTime
-                                       : std::min(until, (i + 1) * cellTime) -
-                                             std::max(time, i * cellTime);
+            const bool whole = i * cellTime >= time - sliver * cellTime
+                               && (i + 1) * cellTime <= until + sliver * cellTime;
+            const double share =
+                whole ? cellTime
+                      : std::min(until, (i + 1) * cellTime) - std::max(time, i * cellTime);
             const double length = share * piece.waveSpeed_mps;
             inertia[at(i)] += length / (gravity * piece.area_m2);
             cells[at(i)].friction.push_back({piece.friction, length});
-            end[at(i)] = piece.from_m + (std::min(until, (i + 1) * cellTime) - time) *
-                                            piece.waveSpeed_mps;
+            end[at(i)] =
+                piece.from_m + (std::min(until, (i + 1) * cellTime) - time) * piece.waveSpeed_mps;
         }
         time = until;
     }
@@ -111,9 +110,9 @@ double ConduitRow::restLoss_m(double flow) const {
     for (const ConduitPiece& piece : geometry.pieces) {
         sum += piece.friction.lossPerMetre(flow) * piece.length_m;
     }
-    const double singular = flow >= 0.0
-                                ? forward_s2m5 + geometry.from.leaving_s2m5 + geometry.to.arriving_s2m5
-                                : reverse_s2m5 + geometry.from.arriving_s2m5 + geometry.to.leaving_s2m5;
+    const double singular =
+        flow >= 0.0 ? forward_s2m5 + geometry.from.leaving_s2m5 + geometry.to.arriving_s2m5
+                    : reverse_s2m5 + geometry.from.arriving_s2m5 + geometry.to.leaving_s2m5;
     return sum + singular * flow * std::fabs(flow);
 }
 
@@ -122,9 +121,9 @@ double ConduitRow::restSlope_sm2(double flow) const {
     for (const ConduitPiece& piece : geometry.pieces) {
         sum += piece.friction.slope_sm3(flow) * piece.length_m;
     }
-    const double singular = flow >= 0.0
-                                ? forward_s2m5 + geometry.from.leaving_s2m5 + geometry.to.arriving_s2m5
-                                : reverse_s2m5 + geometry.from.arriving_s2m5 + geometry.to.leaving_s2m5;
+    const double singular =
+        flow >= 0.0 ? forward_s2m5 + geometry.from.leaving_s2m5 + geometry.to.arriving_s2m5
+                    : reverse_s2m5 + geometry.from.arriving_s2m5 + geometry.to.leaving_s2m5;
     return sum + 2.0 * singular * std::fabs(flow);
 }
 
@@ -170,7 +169,8 @@ void fillConduits(Model& model, const plant::Plant& plant, Findings& findings) {
         const ConduitEnds ends{model.nodes[at(row.from)].known(), model.nodes[at(row.to)].known()};
         row.geometry = conduitGeometry(plant, i, model.medium, ends, findings);
         if (row.geometry.pieces.empty() || !(row.geometry.length_m > 0.0)) {
-            findings.push_back({&conduitWithoutLength, model.conduitPath.back(), {}, {}, {}, {}, {}});
+            findings.push_back(
+                {&conduitWithoutLength, model.conduitPath.back(), {}, {}, {}, {}, {}});
             model.conduits.push_back(row);
             continue;
         }
@@ -233,8 +233,8 @@ void fillChambers(Model& model, const plant::Plant& plant, Findings& findings) {
             const ConduitRow& tunnel = model.conduits[at(end / 2)];
             const double area = model.startEnd(end) ? tunnel.fromArea_m2 : tunnel.toArea_m2;
             row.tunnelEnd = end;
-            row.velocityShare_s2m5 = chamber.velocityShare.value_or(1.0) /
-                                     (2.0 * model.medium.gravity_mps2 * area * area);
+            row.velocityShare_s2m5 = chamber.velocityShare.value_or(1.0)
+                                     / (2.0 * model.medium.gravity_mps2 * area * area);
         }
         model.chambers.push_back(std::move(row));
     }

@@ -20,7 +20,7 @@ void fillUnits(Model& model, const plant::Plant& plant, const plant::Study& stud
 void fillClusters(Model& model, Findings& findings);
 
 /// The chart of a rating; calibrated once for a process and shared between runs and threads.
-Result<std::shared_ptr<const machines::FrancisChart>>
-sharedChart(const machines::FrancisRating& rating, const std::string& subject);
+Result<std::shared_ptr<const machines::FrancisChart>> sharedChart(
+    const machines::FrancisRating& rating, const std::string& subject);
 
 } // namespace headroom::simulation

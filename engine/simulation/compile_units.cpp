@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "simulation/compile_parts.h"
-
 #include "base/constants.h"
 #include "base/overloaded.h"
+#include "simulation/compile_parts.h"
 #include "simulation/messages.h"
 
 #include <algorithm>
@@ -19,9 +18,9 @@ using plant::Unit;
 std::vector<double> keyOf(const machines::FrancisRating& r) {
     std::vector<double> key{r.ratedHead_m,  r.ratedFlow_m3s, r.ratedSpeed_rads,
                             r.ratedPower_W, r.gravity_mps2,  r.density_kgm3};
-    for (const auto& value : {r.runnerDiameter_m, r.runaway_pu, r.noLoadFlow_pu,
-                              r.standstillFlow_pu, r.bestPower_pu, r.bestEfficiency_pu,
-                              r.halfPowerEfficiency_pu}) {
+    for (const auto& value :
+         {r.runnerDiameter_m, r.runaway_pu, r.noLoadFlow_pu, r.standstillFlow_pu, r.bestPower_pu,
+          r.bestEfficiency_pu, r.halfPowerEfficiency_pu}) {
         key.push_back(value ? 1.0 : 0.0);
         key.push_back(value.value_or(0.0));
     }
@@ -72,8 +71,8 @@ void setTurbine(UnitRow& row, const plant::OrificeUnit& turbine, const Medium& m
     row.headScale_m = turbine.ratedHead_m;
     row.flowScale_m3s = turbine.ratedFlow_m3s;
     row.speedScale_rads = turbine.ratedSpeed_rads.value_or(0.0);
-    row.powerScale_W = turbine.efficiency * medium.density_kgm3 * medium.gravity_mps2 *
-                       turbine.ratedFlow_m3s * turbine.ratedHead_m;
+    row.powerScale_W = turbine.efficiency * medium.density_kgm3 * medium.gravity_mps2
+                       * turbine.ratedFlow_m3s * turbine.ratedHead_m;
 }
 
 void setTurbine(UnitRow& row, const plant::FlowUnit& turbine, const Medium&, const std::string&,
@@ -108,8 +107,8 @@ void setPassages(UnitRow& row, const Unit& unit, const Medium& medium, bool into
     row.exitLoss_s2m5 = intoReservoir ? outlet : 0.0;
     const auto* francis = std::get_if<plant::FrancisTurbine>(&unit.turbine);
     if (francis != nullptr && francis->runnerDiameter_m) {
-        const double runner = 0.25 * constants::pi * *francis->runnerDiameter_m *
-                              *francis->runnerDiameter_m;
+        const double runner =
+            0.25 * constants::pi * *francis->runnerDiameter_m * *francis->runnerDiameter_m;
         row.recovery_s2m5 = 1.0 / (2.0 * g * runner * runner);
     } else {
         row.recovery_s2m5 = outlet;
@@ -212,8 +211,8 @@ void setStart(UnitRow& row, int index, const plant::Study& study, const std::str
 
 } // namespace
 
-Result<std::shared_ptr<const machines::FrancisChart>>
-sharedChart(const machines::FrancisRating& rating, const std::string& subject) {
+Result<std::shared_ptr<const machines::FrancisChart>> sharedChart(
+    const machines::FrancisRating& rating, const std::string& subject) {
     using Shared = std::shared_ptr<const machines::FrancisChart>;
     static std::mutex mutex;
     static std::map<std::vector<double>, Shared> charts;
@@ -249,11 +248,10 @@ void fillUnits(Model& model, const plant::Plant& plant, const plant::Study& stud
         UnitRow row;
         row.inlet = model.pointNode(unit.from.index);
         row.outlet = outletNode(model, unit);
-        row.centreline_m =
-            unit.centreline_m.value_or(plant.points[unit.from.index].elevation_m);
-        std::visit([&](const auto& turbine) {
-            setTurbine(row, turbine, model.medium, path, findings);
-        }, unit.turbine);
+        row.centreline_m = unit.centreline_m.value_or(plant.points[unit.from.index].elevation_m);
+        std::visit(
+            [&](const auto& turbine) { setTurbine(row, turbine, model.medium, path, findings); },
+            unit.turbine);
         setPassages(row, unit, model.medium,
                     model.nodes[static_cast<std::size_t>(row.outlet)].known());
         setShaft(row, unit, model.nominal_Hz);

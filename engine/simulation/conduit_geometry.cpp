@@ -37,15 +37,15 @@ void setAxis(ConduitGeometry& out, const plant::Plant& plant, const Conduit& con
     out.elevation_m.push_back(to.elevation_m);
     out.along_m.push_back(0.0);
     for (std::size_t i = 1; i < out.chainage_m.size(); ++i) {
-        out.along_m.push_back(out.along_m.back() +
-                              std::hypot(out.chainage_m[i] - out.chainage_m[i - 1],
-                                         out.elevation_m[i] - out.elevation_m[i - 1]));
+        out.along_m.push_back(out.along_m.back()
+                              + std::hypot(out.chainage_m[i] - out.chainage_m[i - 1],
+                                           out.elevation_m[i] - out.elevation_m[i - 1]));
     }
     const double drawn = out.along_m.back();
     out.length_m = conduit.length_m.value_or(drawn);
     for (std::size_t i = 0; i < out.along_m.size(); ++i) {
-        out.along_m[i] = drawn > 0.0 ? out.along_m[i] * (out.length_m / drawn)
-                                     : (i == 0 ? 0.0 : out.length_m);
+        out.along_m[i] =
+            drawn > 0.0 ? out.along_m[i] * (out.length_m / drawn) : (i == 0 ? 0.0 : out.length_m);
     }
 }
 
@@ -58,7 +58,8 @@ hydraulics::FrictionLaw frictionOf(const plant::Reach& reach, const Medium& medi
         overloaded{
             [&](const plant::Roughness& r) {
                 return FrictionLaw::make(
-                    bore, FrictionLaw::ColebrookWhite{r.height_m, medium.viscosity_m2s, g}, subject);
+                    bore, FrictionLaw::ColebrookWhite{r.height_m, medium.viscosity_m2s, g},
+                    subject);
             },
             [&](const plant::Strickler& s) {
                 return FrictionLaw::make(bore, FrictionLaw::Strickler{s.number}, subject);
@@ -97,8 +98,8 @@ void setLosses(ConduitGeometry& out, const Conduit& conduit, const Medium& mediu
         const double at = out.alongAt(loss.chainage_m);
         const double area = out.area_m2(at);
         const double perFlow = 1.0 / (2.0 * medium.gravity_mps2 * area * area);
-        out.losses.push_back({at, loss.coefficient * perFlow,
-                              loss.reverse.value_or(loss.coefficient) * perFlow});
+        out.losses.push_back(
+            {at, loss.coefficient * perFlow, loss.reverse.value_or(loss.coefficient) * perFlow});
     }
 }
 
@@ -135,14 +136,18 @@ double ConduitGeometry::inertia_s2m2(double gravity) const {
 double ConduitGeometry::storage_m2(double gravity) const {
     double sum = 0.0;
     for (const auto& piece : pieces) {
-        sum += gravity * piece.area_m2 * piece.length_m /
-               (piece.waveSpeed_mps * piece.waveSpeed_mps);
+        sum +=
+            gravity * piece.area_m2 * piece.length_m / (piece.waveSpeed_mps * piece.waveSpeed_mps);
     }
     return sum;
 }
 
-double ConduitGeometry::chainageAt(double s) const { return along(along_m, chainage_m, s); }
-double ConduitGeometry::elevationAt(double s) const { return along(along_m, elevation_m, s); }
+double ConduitGeometry::chainageAt(double s) const {
+    return along(along_m, chainage_m, s);
+}
+double ConduitGeometry::elevationAt(double s) const {
+    return along(along_m, elevation_m, s);
+}
 double ConduitGeometry::alongAt(double chainage) const {
     return along(chainage_m, along_m, chainage);
 }
@@ -171,8 +176,8 @@ ConduitGeometry conduitGeometry(const plant::Plant& plant, int index, const Medi
     const auto& leaving = conduit.leavingLoss;
     out.from = endLoss(out.pieces.front().area_m2, medium, entering,
                        ends.fromReservoir ? std::nullopt : entering, ends.fromReservoir);
-    out.to = endLoss(out.pieces.back().area_m2, medium,
-                     ends.toReservoir ? std::nullopt : leaving, leaving, ends.toReservoir);
+    out.to = endLoss(out.pieces.back().area_m2, medium, ends.toReservoir ? std::nullopt : leaving,
+                     leaving, ends.toReservoir);
     return out;
 }
 

@@ -35,7 +35,7 @@ double wallSpeed_mps(const plant::Reach& reach, const Medium& medium, const std:
                      Findings& findings);
 
 struct ConduitPiece {
-    double from_m = 0.0;   ///< along the axis
+    double from_m = 0.0; ///< along the axis
     double length_m = 0.0;
     double area_m2 = 0.0;
     double waveSpeed_mps = 0.0;
@@ -60,7 +60,7 @@ struct ConduitGeometry {
     EndLoss from, to;
     std::vector<double> along_m, chainage_m, elevation_m; ///< corners of the axis
 
-    double travelTime_s() const;              ///< ΣL/a
+    double travelTime_s() const;               ///< ΣL/a
     double inertia_s2m2(double gravity) const; ///< ΣL/(gA)
     double storage_m2(double gravity) const;   ///< ΣgAL/a²
     double chainageAt(double along) const;

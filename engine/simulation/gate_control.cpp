@@ -50,10 +50,10 @@ std::vector<control::LoadOrder> GateControl::loadOrders(State& state, const Rest
             why.time_s = move.time_s;
             state.incidents.push_back(std::move(why));
         }
-        orders.push_back({move.time_s,
-                          {target ? target->opening[at(unit)] : row.openingLimit,
-                           move.to_W / row.powerScale_W},
-                          move.over_s});
+        orders.push_back(
+            {move.time_s,
+             {target ? target->opening[at(unit)] : row.openingLimit, move.to_W / row.powerScale_W},
+             move.over_s});
     }
     return orders;
 }
@@ -98,8 +98,9 @@ control::Measured GateControl::measured(const State& state, int unit, double tim
     out.time_s = time_s;
     out.step_s = step_s;
     out.speed_pu = machine.speed + ahead * (machine.speed - machine.speedBefore);
-    out.frequency_pu = (state.frequency_Hz + ahead * (state.frequency_Hz - state.frequencyBefore_Hz)) /
-                       model_.nominal_Hz;
+    out.frequency_pu =
+        (state.frequency_Hz + ahead * (state.frequency_Hz - state.frequencyBefore_Hz))
+        / model_.nominal_Hz;
     out.opening_pu = control.opening;
     out.power_pu = control.power + ahead * (control.power - control.powerBefore);
     const Node& inlet = model_.nodes[at(model_.units[at(unit)].inlet)];
@@ -115,8 +116,7 @@ control::Measured GateControl::measured(const State& state, int unit, double tim
 double GateControl::governed(State& state, int unit, double time_s, double step_s) {
     ControlState& control = state.controls[at(unit)];
     const control::Measured seen = measured(state, unit, time_s, step_s);
-    const auto answer =
-        control.load->at(time_s, step_s, seen.speed_pu, seen.frequency_pu);
+    const auto answer = control.load->at(time_s, step_s, seen.speed_pu, seen.frequency_pu);
     control.joining = control.joining || answer.closeBreaker;
     if (answer.heldBack != control.heldBack && !control.lockedOut) {
         control.heldBack = answer.heldBack;
@@ -189,8 +189,7 @@ void GateControl::advanceUnit(State& state, int unit, double start_s, double ste
             moveGate(state, unit, start_s, share * step_s);
             done = share;
             control.stuck = control.servo.stuck = true;
-            state.incidents.push_back(
-                incident(gateStuck, model_.unitPath[at(unit)], jam.time_s));
+            state.incidents.push_back(incident(gateStuck, model_.unitPath[at(unit)], jam.time_s));
         }
     }
     for (const Trip& event : state.schedule.trips) {
@@ -200,8 +199,8 @@ void GateControl::advanceUnit(State& state, int unit, double start_s, double ste
             done = share;
             control.tripFraction = share;
             trip(state, unit, event.time_s);
-            if (control.load && !control.lockedOut &&
-                !state.schedule.openings[at(unit)].givenAt(event.time_s)) {
+            if (control.load && !control.lockedOut
+                && !state.schedule.openings[at(unit)].givenAt(event.time_s)) {
                 control.order = governed(state, unit, event.time_s, 0.0);
             }
         }
@@ -270,8 +269,7 @@ void GateControl::afterWater(State& state) {
             machine.rotor =
                 grid::rotorAtClosing(machine.speed, state.frequency_Hz / model_.nominal_Hz);
             machine.electrical = grid::torque_pu(row.rotor, machine.rotor) * row.electricalScale;
-            state.incidents.push_back(
-                incident(unitJoined, model_.unitPath[at(i)], state.time_s));
+            state.incidents.push_back(incident(unitJoined, model_.unitPath[at(i)], state.time_s));
         }
         control.joining = false;
         protect(state, i);

@@ -1,10 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "simulation/conduit_geometry.h"
-
 #include "base/constants.h"
 #include "base/overloaded.h"
 #include "hydraulics/water.h"
 #include "hydraulics/wave_speed.h"
+#include "simulation/conduit_geometry.h"
 
 #include <cmath>
 
@@ -37,31 +36,35 @@ double wallSpeed_mps(const plant::Reach& reach, const Medium& medium, const std:
     const double diameter =
         reach.diameter_m.value_or(std::sqrt(4.0 * reach.area_m2 / constants::pi));
     const hydraulics::Wall wall = std::visit(
-        overloaded{
-            [](const plant::GivenWaveSpeed&) -> hydraulics::Wall { return hydraulics::RigidWall{}; },
-            [&](const plant::SteelWall& w) -> hydraulics::Wall {
-                return hydraulics::SteelWall{
-                    diameter, w.thickness_m, w.modulus_Pa, w.poisson,
-                    w.restraint == plant::Restraint::upstreamOnly
-                        ? hydraulics::AxialRestraint::upstreamOnly
-                        : (w.restraint == plant::Restraint::joints
-                               ? hydraulics::AxialRestraint::joints
-                               : hydraulics::AxialRestraint::throughout),
-                    hydraulics::WallTheory::thin};
-            },
-            [](const plant::RockWall& w) -> hydraulics::Wall {
-                return hydraulics::RockWall{w.modulus_Pa, w.poisson};
-            },
-            [&](const plant::LinedRockWall& w) -> hydraulics::Wall {
-                return hydraulics::LinedRockWall{diameter, w.thickness_m, w.modulus_Pa, w.poisson,
-                                                 w.rockModulus_Pa, w.rockPoisson};
-            }},
+        overloaded{[](const plant::GivenWaveSpeed&) -> hydraulics::Wall {
+                       return hydraulics::RigidWall{};
+                   },
+                   [&](const plant::SteelWall& w) -> hydraulics::Wall {
+                       return hydraulics::SteelWall{
+                           diameter,
+                           w.thickness_m,
+                           w.modulus_Pa,
+                           w.poisson,
+                           w.restraint == plant::Restraint::upstreamOnly
+                               ? hydraulics::AxialRestraint::upstreamOnly
+                               : (w.restraint == plant::Restraint::joints
+                                      ? hydraulics::AxialRestraint::joints
+                                      : hydraulics::AxialRestraint::throughout),
+                           hydraulics::WallTheory::thin};
+                   },
+                   [](const plant::RockWall& w) -> hydraulics::Wall {
+                       return hydraulics::RockWall{w.modulus_Pa, w.poisson};
+                   },
+                   [&](const plant::LinedRockWall& w) -> hydraulics::Wall {
+                       return hydraulics::LinedRockWall{diameter,  w.thickness_m,    w.modulus_Pa,
+                                                        w.poisson, w.rockModulus_Pa, w.rockPoisson};
+                   }},
         reach.wall);
-    const auto speed = hydraulics::waveSpeed(
-        wall,
-        {medium.density_kgm3, medium.bulkModulus_Pa, reach.gasShare, medium.airPressure_Pa,
-         medium.temperature_degC + constants::celsiusZero_K},
-        subject);
+    const auto speed = hydraulics::waveSpeed(wall,
+                                             {medium.density_kgm3, medium.bulkModulus_Pa,
+                                              reach.gasShare, medium.airPressure_Pa,
+                                              medium.temperature_degC + constants::celsiusZero_K},
+                                             subject);
     findings.insert(findings.end(), speed.findings().begin(), speed.findings().end());
     return speed ? speed->speed_mps : 1000.0; // any speed: the findings end the compilation
 }

@@ -28,18 +28,20 @@
 namespace headroom::simulation {
 
 /// Position of a counted thing in its array.
-inline std::size_t at(int index) { return static_cast<std::size_t>(index); }
+inline std::size_t at(int index) {
+    return static_cast<std::size_t>(index);
+}
 
 /// A place with one energy level: a declared point, or a reservoir that stands at no point.
 struct Node {
     results::Thing thing = results::Thing::point;
-    int index = -1;         ///< in its collection
+    int index = -1; ///< in its collection
     double elevation_m = 0.0;
-    int reservoir = -1;     ///< ≥ 0: its level is the node's head
+    int reservoir = -1;      ///< ≥ 0: its level is the node's head
     double storage_m2 = 0.0; ///< elastic storage of short elements, per head
-    int cluster = -1;       ///< of an unknown node
-    int slot = -1;          ///< position in its cluster
-    int headEnd = -1;       ///< the conduit end whose piezometric head is the point's, or -1
+    int cluster = -1;        ///< of an unknown node
+    int slot = -1;           ///< position in its cluster
+    int headEnd = -1;        ///< the conduit end whose piezometric head is the point's, or -1
     bool known() const { return reservoir >= 0; }
 };
 
@@ -66,7 +68,7 @@ struct ChamberRow {
     int node = -1, slot = -1;
     hydraulics::ChamberTable table;
     hydraulics::Throttle throttle;
-    int tunnelEnd = -1;         ///< conduit end whose velocity head it does not see, or -1
+    int tunnelEnd = -1;              ///< conduit end whose velocity head it does not see, or -1
     double velocityShare_s2m5 = 0.0; ///< χ/(2gA²) of that end
 };
 
@@ -77,16 +79,17 @@ struct UnitRow {
     int inlet = -1, outlet = -1; ///< nodes
     int inletSlot = -1, outletSlot = -1;
     double centreline_m = 0.0;
-    double inertia_s2m2 = 0.0;      ///< spiral and draft tube
+    double inertia_s2m2 = 0.0; ///< spiral and draft tube
     double draftInertia_s2m2 = 0.0;
-    double exitLoss_s2m5 = 0.0;     ///< of the draft tube's outlet into a reservoir
-    double recovery_s2m5 = 0.0;     ///< velocity head at the runner outlet less that at the draft tube's
+    double exitLoss_s2m5 = 0.0; ///< of the draft tube's outlet into a reservoir
+    double recovery_s2m5 =
+        0.0; ///< velocity head at the runner outlet less that at the draft tube's
     double headScale_m = 1.0, flowScale_m3s = 1.0; ///< rated
-    double speedScale_rads = 0.0;   ///< rated; 0: nothing turns
-    double powerScale_W = 1.0;      ///< rated shaft power
-    double inertia_kgm2 = 0.0;      ///< 0: the speed follows the grid
+    double speedScale_rads = 0.0;                  ///< rated; 0: nothing turns
+    double powerScale_W = 1.0;                     ///< rated shaft power
+    double inertia_kgm2 = 0.0;                     ///< 0: the speed follows the grid
     double generatorEfficiency = 1.0;
-    double electricalScale = 1.0;   ///< rated apparent power over rated shaft power
+    double electricalScale = 1.0; ///< rated apparent power over rated shaft power
     std::shared_ptr<const machines::FrancisChart> chart;
     machines::OrificeUnit orifice;
     grid::RotorSpec rotor;
@@ -97,8 +100,8 @@ struct UnitRow {
     double overspeedDelay_s = 0.0;
     std::optional<double> output_W, opening; ///< asked at rest
     double openingLimit = 1.0;
-    double restFlow_m3s = 0.0;  ///< of a `flow` unit
-    double power_W = 0.0;       ///< of a `power` unit
+    double restFlow_m3s = 0.0; ///< of a `flow` unit
+    double power_W = 0.0;      ///< of a `power` unit
 
     double torqueScale_Nm() const { return powerScale_W / speedScale_rads; }
     bool turns() const { return speedScale_rads > 0.0; }
@@ -152,7 +155,7 @@ public:
     std::optional<grid::AreaSpec> area;
     double nominal_Hz = 50.0;
     Schedule schedule;
-    double headScale_m = 1.0, flowScale_m3s = 1.0;     ///< for tolerances
+    double headScale_m = 1.0, flowScale_m3s = 1.0; ///< for tolerances
     double duration_s = 0.0;
     results::Resolution resolution;
 

@@ -74,7 +74,9 @@ void Record::flush() {
     inBlock_ = 0;
 }
 
-void Record::finish() { flush(); }
+void Record::finish() {
+    flush();
+}
 
 results::Trace Record::trace(std::size_t channel) {
     return plan_.traces ? std::move(traces_[channel]) : results::Trace{};

@@ -34,11 +34,11 @@ private:
 
     Plan plan_;
     const hydraulics::SweepLoops& loops_;
-    std::vector<double> low_, high_;         // within the present interval
+    std::vector<double> low_, high_; // within the present interval
     std::vector<float> blockLow_, blockHigh_, blockLast_;
     std::size_t inBlock_ = 0;
     std::vector<results::Trace> traces_;
-    std::vector<float> lines_;               // instants × stations
+    std::vector<float> lines_; // instants × stations
     std::size_t lineCount_ = 0;
 };
 

@@ -1,9 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "simulation/run.h"
-
 #include "simulation/advance.h"
 #include "simulation/channels.h"
 #include "simulation/messages.h"
+#include "simulation/run.h"
 #include "units/text.h"
 
 #include <algorithm>
@@ -54,8 +53,8 @@ Drift drift(const Model& model, Channels& channels, const std::vector<double>& r
         }
         channels.fill(advance.state(), row.data());
         for (std::size_t i = 0; i < channels.items().size(); ++i) {
-            const double share = std::fabs(row[i] - rest[i]) /
-                                 allowed(model, channels.items()[i].measure);
+            const double share =
+                std::fabs(row[i] - rest[i]) / allowed(model, channels.items()[i].measure);
             if (!(share <= worst.share)) {
                 worst = {share, i};
             }
@@ -96,10 +95,9 @@ Result<Rest> rest(const Model& model) {
     channels.fill(advance.state(), row.data());
     for (std::size_t i = 0; i < channels.items().size(); ++i) {
         const auto& item = channels.items()[i];
-        const bool moving = item.measure == Measure::pressureRate ||
-                            item.measure == Measure::openingRate ||
-                            item.measure == Measure::openingTravel ||
-                            item.measure == Measure::frequencyRate;
+        const bool moving =
+            item.measure == Measure::pressureRate || item.measure == Measure::openingRate
+            || item.measure == Measure::openingTravel || item.measure == Measure::frequencyRate;
         if (!moving) {
             out.rows.push_back({item.measure, item.place, row[i]});
         }

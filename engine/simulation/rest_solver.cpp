@@ -17,10 +17,10 @@ namespace {
 using numerics::signedSquare;
 
 constexpr int mostIterations = 60;
-constexpr double tolerance = 1e-13;     // of the plant's head and flow
+constexpr double tolerance = 1e-13; // of the plant's head and flow
 constexpr double acceptable = 1e-9;
 constexpr double firstShare = 0.1, shareStep = 0.1, leastShareStep = 1e-4;
-constexpr double leastOpening = 1e-5;   // stroke below which a search for an output does not go
+constexpr double leastOpening = 1e-5; // stroke below which a search for an output does not go
 
 /// Newton's method on [heads of unknown nodes, conduit flows, unit flows, searched openings].
 class Steady {
@@ -104,8 +104,8 @@ private:
         const double flow = point.conduitFlow_m3s[at(index)];
         const double scale = 1.0 / model_.headScale_m;
         through(row.from, row.to, column, flow);
-        right_(column) = scale * (point.head_m[at(row.from)] - point.head_m[at(row.to)] -
-                                  row.restLoss_m(flow));
+        right_(column) =
+            scale * (point.head_m[at(row.from)] - point.head_m[at(row.to)] - row.restLoss_m(flow));
         put(column, node(row.from), scale);
         put(column, node(row.to), -scale);
         // A loss without slope (no flow) would leave a loop of conduits without an answer.
@@ -166,18 +166,19 @@ private:
         right_(column) = scale * (tau * tau * net - row.headScale_m * signedSquare(flow / rated));
         put(column, node(row.inlet), scale * tau * tau);
         put(column, node(row.outlet), -scale * tau * tau);
-        const double slope = tau * tau * 2.0 * row.exitLoss_s2m5 * std::fabs(flow) +
-                             2.0 * row.headScale_m * std::fabs(flow) / (rated * rated);
+        const double slope = tau * tau * 2.0 * row.exitLoss_s2m5 * std::fabs(flow)
+                             + 2.0 * row.headScale_m * std::fabs(flow) / (rated * rated);
         put(column, column, -scale * std::max(slope, 1e-9 * row.headScale_m / rated));
-        const double power = row.orifice.power_W(flow, net, model_.medium.density_kgm3,
-                                                 model_.medium.gravity_mps2);
+        const double power =
+            row.orifice.power_W(flow, net, model_.medium.density_kgm3, model_.medium.gravity_mps2);
         point.torque_pu[at(index)] = power / row.powerScale_W;
         if (const int opening = openingColumn_[at(index)]; opening >= 0) {
             put(column, opening, scale * 2.0 * tau * net);
-            const double weight = row.orifice.efficiency * model_.medium.density_kgm3 *
-                                  model_.medium.gravity_mps2 * row.generatorEfficiency /
-                                  row.powerScale_W;
-            right_(opening) = weight * flow * net - share * *asked_.output_W[at(index)] / row.powerScale_W;
+            const double weight = row.orifice.efficiency * model_.medium.density_kgm3
+                                  * model_.medium.gravity_mps2 * row.generatorEfficiency
+                                  / row.powerScale_W;
+            right_(opening) =
+                weight * flow * net - share * *asked_.output_W[at(index)] / row.powerScale_W;
             put(opening, column, weight * (net - 2.0 * row.exitLoss_s2m5 * std::fabs(flow) * flow));
             put(opening, node(row.inlet), weight * flow);
             put(opening, node(row.outlet), -weight * flow);
@@ -233,8 +234,8 @@ private:
         for (std::size_t i = 0; i < model_.units.size(); ++i) {
             point.unitFlow_m3s[i] += share * move(unitColumn_ + static_cast<int>(i));
             if (openingColumn_[i] >= 0) {
-                point.opening[i] = std::max(point.opening[i] + share * move(openingColumn_[i]),
-                                            leastOpening);
+                point.opening[i] =
+                    std::max(point.opening[i] + share * move(openingColumn_[i]), leastOpening);
             }
         }
     }
@@ -250,6 +251,40 @@ private:
 
 double largest(const std::vector<double>& values) {
     return values.empty() ? 0.0 : *std::max_element(values.begin(), values.end());
+}
+
+/// Opening and flow of a unit that stands alone under a head, at a share of its output.
+void guessUnit(const Model& model, const RestAsked& asked, double share, std::size_t i, double head,
+               RestPoint& point) {
+    const UnitRow& unit = model.units[i];
+    const double h = head / unit.headScale_m;
+    const double power = share * asked.output_W[i].value_or(0.0) / unit.powerScale_W;
+    double& opening = point.opening[i];
+    double& flow = point.unitFlow_m3s[i];
+    switch (unit.kind) {
+    case UnitKind::flow:
+        flow = unit.restFlow_m3s;
+        return;
+    case UnitKind::power:
+        flow = unit.power_W / (model.medium.density_kgm3 * model.medium.gravity_mps2 * head);
+        return;
+    case UnitKind::orifice:
+        opening = asked.output_W[i] ? std::max(power / (h * std::sqrt(h)), 0.01) : opening;
+        flow = unit.orifice.flow_m3s(head, opening);
+        return;
+    case UnitKind::francis:
+        if (asked.output_W[i]) {
+            double low = unit.chart->noLoadOpening(h, 1.0);
+            double top = unit.chart->gate().largestOpening();
+            for (int k = 0; k < 30 && top - low > 1e-4; ++k) {
+                const double middle = 0.5 * (low + top);
+                (unit.chart->netPower(h, 1.0, middle) < power ? low : top) = middle;
+            }
+            opening = unit.chart->gate().stroke(0.5 * (low + top));
+        }
+        flow = unit.flowScale_m3s * unit.chart->flow(h, 1.0, unit.relativeOpening(opening));
+        return;
+    }
 }
 
 /// Heads at the levels; each unit as if it stood alone between the highest and its own tailwater.
@@ -269,33 +304,7 @@ RestPoint firstGuess(const Model& model, const RestAsked& asked, double share) {
     for (std::size_t i = 0; i < model.units.size(); ++i) {
         const UnitRow& unit = model.units[i];
         const double drop = point.head_m[at(unit.inlet)] - point.head_m[at(unit.outlet)];
-        const double head = std::max(drop, 0.1 * unit.headScale_m);
-        const double h = head / unit.headScale_m;
-        if (unit.kind == UnitKind::flow) {
-            point.unitFlow_m3s[i] = unit.restFlow_m3s;
-        } else if (unit.kind == UnitKind::power) {
-            point.unitFlow_m3s[i] =
-                unit.power_W / (model.medium.density_kgm3 * model.medium.gravity_mps2 * head);
-        } else if (unit.kind == UnitKind::orifice) {
-            if (asked.output_W[i]) {
-                point.opening[i] = std::max(
-                    share * *asked.output_W[i] / (unit.powerScale_W * h * std::sqrt(h)), 0.01);
-            }
-            point.unitFlow_m3s[i] = unit.orifice.flow_m3s(head, point.opening[i]);
-        } else {
-            if (asked.output_W[i]) {
-                const double power = share * *asked.output_W[i] / unit.powerScale_W;
-                double low = unit.chart->noLoadOpening(h, 1.0);
-                double top = unit.chart->gate().largestOpening();
-                for (int k = 0; k < 30 && top - low > 1e-4; ++k) {
-                    const double middle = 0.5 * (low + top);
-                    (unit.chart->netPower(h, 1.0, middle) < power ? low : top) = middle;
-                }
-                point.opening[i] = unit.chart->gate().stroke(0.5 * (low + top));
-            }
-            point.unitFlow_m3s[i] = unit.flowScale_m3s *
-                                    unit.chart->flow(h, 1.0, unit.relativeOpening(point.opening[i]));
-        }
+        guessUnit(model, asked, share, i, std::max(drop, 0.1 * unit.headScale_m), point);
     }
     return point;
 }
@@ -310,7 +319,9 @@ int unitAtLimit(const Model& model, const RestAsked& asked, const RestPoint& poi
     return -1;
 }
 
-Amount watts(double value) { return {static_cast<int>(Quantity::power), value}; }
+Amount watts(double value) {
+    return {static_cast<int>(Quantity::power), value};
+}
 
 /// The gate stops it if it is nearly open as far as it may; else power turned over opening.
 Finding notReached(const Model& model, const RestAsked& asked, const RestPoint& best) {
@@ -350,8 +361,8 @@ double restOutput_W(const Model& model, const RestPoint& rest, int index) {
 Result<RestPoint> solveRest(const Model& model, const RestAsked& asked) {
     RestAsked trial = asked;
     for (std::size_t i = 0; i < model.units.size(); ++i) {
-        if (model.units[i].kind == UnitKind::orifice && trial.output_W[i] &&
-            *trial.output_W[i] == 0.0) { // an ideal unit gives nothing only when shut
+        if (model.units[i].kind == UnitKind::orifice && trial.output_W[i]
+            && *trial.output_W[i] == 0.0) { // an ideal unit gives nothing only when shut
             trial.output_W[i].reset();
             trial.opening[i] = 0.0;
         }

@@ -17,12 +17,12 @@ struct RestAsked {
 };
 
 struct RestPoint {
-    std::vector<double> head_m;         ///< by node
+    std::vector<double> head_m; ///< by node
     std::vector<double> conduitFlow_m3s;
     std::vector<double> unitFlow_m3s;
-    std::vector<double> opening;        ///< servo stroke by unit
-    std::vector<double> torque_pu;      ///< turbine, of rated
-    double residual = 0.0;              ///< largest, scaled
+    std::vector<double> opening;   ///< servo stroke by unit
+    std::vector<double> torque_pu; ///< turbine, of rated
+    double residual = 0.0;         ///< largest, scaled
 };
 
 /// What the study's start asks, unit by unit.

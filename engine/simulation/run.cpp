@@ -116,13 +116,13 @@ void loop(const Model& model, Advance& advance, Observers& observers, const std:
         }
         const State& state = advance.state();
         if (!advance.finite()) {
-            return fail(out, {.message = &valueNotFinite, .subject = "plant",
-                              .time_s = state.time_s});
+            return fail(out,
+                        {.message = &valueNotFinite, .subject = "plant", .time_s = state.time_s});
         }
         observers.take(state, advance.jumped());
         if (state.step % stepsBetweenPolls == 0) {
-            reporter.report(static_cast<double>(state.step) /
-                            static_cast<double>(model.grid.steps));
+            reporter.report(static_cast<double>(state.step)
+                            / static_cast<double>(model.grid.steps));
             if (stop.stop_requested()) {
                 out.status.reason = results::EndReason::cancelled;
                 return;

@@ -38,10 +38,10 @@ struct RestRow {
     double value = 0.0; ///< [SI]
 };
 struct Rest {
-    std::vector<RestRow> rows;            ///< every head, flow, loss by place
-    double residual = 0.0;                ///< largest scaled residual, < 1e-9
-    bool standsStill = true;              ///< linearised rest is stable
-    Findings findings;                    ///< if unstable: mode, growth, what swings
+    std::vector<RestRow> rows; ///< every head, flow, loss by place
+    double residual = 0.0;     ///< largest scaled residual, < 1e-9
+    bool standsStill = true;   ///< within 1e-6 m and 1e-6 of rated flow over 100 s undisturbed
+    Findings findings;         ///< if it moves: what, and how far
 };
 /// The starting state of the study by Newton with continuation from 10 % output; where the
 /// power–gate curve turns, the finding says what can be reached and what stops it.

@@ -103,9 +103,9 @@ void sortByTime(std::vector<Item>& items) {
 } // namespace
 
 void Prescription::add(double time_s, numerics::Table rows) {
-    const auto after = std::upper_bound(
-        parts_.begin(), parts_.end(), time_s,
-        [](double time, const Part& part) { return time < part.time_s; });
+    const auto after =
+        std::upper_bound(parts_.begin(), parts_.end(), time_s,
+                         [](double time, const Part& part) { return time < part.time_s; });
     parts_.insert(after, Part{time_s, std::move(rows)});
 }
 
@@ -152,8 +152,7 @@ Schedule scheduleOf(const plant::Plant& plant, const plant::Study& study, double
             findings.push_back({&eventWithoutTime, eventPath(study, i), {}, {}, {}, {}, {}});
             continue;
         }
-        std::visit(Reader{plant, out, findings, eventPath(study, i), *time},
-                   study.events[i].kind);
+        std::visit(Reader{plant, out, findings, eventPath(study, i), *time}, study.events[i].kind);
     }
     sortByTime(out.trips);
     sortByTime(out.loads);

@@ -42,10 +42,23 @@ private:
     std::vector<Part> parts_; // in rising time
 };
 
-struct Trip { double time_s = 0.0; int unit = -1; };
-struct LoadMove { double time_s = 0.0; int unit = -1; double to_W = 0.0, over_s = 0.0; };
-struct Jam { double time_s = 0.0; int unit = -1; };
-struct Loss { double time_s = 0.0; double power_W = 0.0; };
+struct Trip {
+    double time_s = 0.0;
+    int unit = -1;
+};
+struct LoadMove {
+    double time_s = 0.0;
+    int unit = -1;
+    double to_W = 0.0, over_s = 0.0;
+};
+struct Jam {
+    double time_s = 0.0;
+    int unit = -1;
+};
+struct Loss {
+    double time_s = 0.0;
+    double power_W = 0.0;
+};
 
 struct Schedule {
     std::vector<Trip> trips;
@@ -56,7 +69,7 @@ struct Schedule {
     std::vector<Prescription> flows;    ///< by unit
     std::vector<Prescription> levels;   ///< by reservoir
     Prescription frequency_Hz;
-    std::vector<double> jumps_s;        ///< instants at which a prescription jumps, rising
+    std::vector<double> jumps_s; ///< instants at which a prescription jumps, rising
 };
 
 /// Resolves `of`/`after_s` chains and sorts by time. Findings: a chain that ends nowhere, tables

@@ -14,8 +14,7 @@ ConduitKind kindAt(const StepRequest::Conduit& conduit, double step) {
         return conduit.kind;
     }
     const double fewest = leastCells * (1.0 - stretchAllowed - rounding);
-    return conduit.travelTime_s >= fewest * step ? ConduitKind::elastic
-                                                 : ConduitKind::shortElement;
+    return conduit.travelTime_s >= fewest * step ? ConduitKind::elastic : ConduitKind::shortElement;
 }
 
 int cellsAt(const StepRequest::Conduit& conduit, double step) {

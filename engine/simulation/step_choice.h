@@ -15,15 +15,15 @@ struct StepRequest {
         bool automatic = true;                   ///< elastic only if two cells fit
     };
     std::vector<Conduit> conduits;
-    double cap_s = 0.01;                ///< the step is between half of this and this
+    double cap_s = 0.01;                 ///< the step is between half of this and this
     std::vector<double> samplePeriods_s; ///< of controllers; the step divides each
 };
 
 struct StepChoice {
     double step_s = 0.0;
     std::vector<ConduitKind> kinds;
-    std::vector<int> cells;        ///< 0 where not elastic
-    std::vector<double> stretch;   ///< relative change of the wave speed, 0 where not elastic
+    std::vector<int> cells;         ///< 0 where not elastic
+    std::vector<double> stretch;    ///< relative change of the wave speed, 0 where not elastic
     bool sampleTimesDivided = true; ///< false: no step in the range divides all sample times
 };
 

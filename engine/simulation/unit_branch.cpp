@@ -33,8 +33,7 @@ void prepareShaft(const UnitRow& unit, const MachineState& state, const UnitStep
     } else if (!opens) {
         electrical = 0.0;
     }
-    work.speedConstant =
-        state.speed + k * (state.torque - electrical - work.electricalConstant);
+    work.speedConstant = state.speed + k * (state.torque - electrical - work.electricalConstant);
     work.n = step.guess ? 2.0 * state.speed - state.speedBefore : state.speed;
 }
 
@@ -48,16 +47,15 @@ void lineariseFrancis(const UnitRow& unit, double drop, MachineWork& work) {
     work.torqueBySpeed = point.dm_dn;
     const double flow = work.q * unit.flowScale_m3s;
     const double exit = unit.exitLoss_s2m5;
-    const double gap = work.w0_m + drop - (work.linear_sm2 + exit * std::fabs(flow)) * flow -
-                       unit.headScale_m * point.h;
-    const double own = (work.linear_sm2 + 2.0 * exit * std::fabs(flow)) * unit.flowScale_m3s +
-                       unit.headScale_m * point.dh_dq;
+    const double gap = work.w0_m + drop - (work.linear_sm2 + exit * std::fabs(flow)) * flow
+                       - unit.headScale_m * point.h;
+    const double own = (work.linear_sm2 + 2.0 * exit * std::fabs(flow)) * unit.flowScale_m3s
+                       + unit.headScale_m * point.dh_dq;
     work.speedGap = work.speedByFlow = 0.0;
     if (!work.speedKnown) {
-        const double bySpeed =
-            1.0 - work.speedShare * (point.dm_dn - work.electricalSlope);
-        const double residual = work.n - work.speedShare * (point.m - work.electricalSlope * work.n) -
-                                work.speedConstant;
+        const double bySpeed = 1.0 - work.speedShare * (point.dm_dn - work.electricalSlope);
+        const double residual = work.n - work.speedShare * (point.m - work.electricalSlope * work.n)
+                                - work.speedConstant;
         work.speedGap = -residual / bySpeed;
         work.speedByFlow = work.speedShare * point.dm_dq / bySpeed;
     }
@@ -78,9 +76,8 @@ void solveShutSpeed(const UnitRow& unit, MachineWork& work) {
         if (work.speedKnown) {
             return;
         }
-        const double residual = work.n -
-                                work.speedShare * (point.m - work.electricalSlope * work.n) -
-                                work.speedConstant;
+        const double residual = work.n - work.speedShare * (point.m - work.electricalSlope * work.n)
+                                - work.speedConstant;
         const double move =
             residual / (1.0 - work.speedShare * (point.dm_dn - work.electricalSlope));
         work.n -= move;
@@ -98,8 +95,8 @@ void solvePowerSpeed(const UnitRow& unit, double power, MachineWork& work) {
     }
     for (int count = 0; count < 50 && !work.speedKnown; ++count) {
         const double n = work.n;
-        const double residual = n - work.speedShare * (power / n - work.electricalSlope * n) -
-                                work.speedConstant;
+        const double residual =
+            n - work.speedShare * (power / n - work.electricalSlope * n) - work.speedConstant;
         const double move =
             residual / (1.0 + work.speedShare * (power / (n * n) + work.electricalSlope));
         work.n = std::max(n - move, 0.5 * n);
@@ -127,8 +124,8 @@ void acceptTurbine(const Model& model, const UnitRow& unit, double drop, Machine
     const bool orifice = unit.kind == UnitKind::orifice;
     const double inertial = orifice ? work.w0_m - work.linear_sm2 * flow : 0.0;
     state.runnerHead_m = drop - unit.exitLoss_s2m5 * numerics::signedSquare(flow) + inertial;
-    const double water = model.medium.density_kgm3 * model.medium.gravity_mps2 * flow *
-                         state.runnerHead_m;
+    const double water =
+        model.medium.density_kgm3 * model.medium.gravity_mps2 * flow * state.runnerHead_m;
     state.shaftPower_W = flow > 0.0 ? (orifice ? unit.orifice.efficiency : 1.0) * water : 0.0;
     solvePowerSpeed(unit, state.shaftPower_W / unit.powerScale_W, work);
 }
@@ -147,8 +144,8 @@ void acceptGenerator(const UnitRow& unit, const UnitStep& step, double speedBefo
     }
     double power = state.shaftPower_W;
     if (unit.freeShaft() && unit.rotor.locked) {
-        state.electrical = work.torque - (work.n - speedBefore) / step.step_s *
-                                             unit.accelerationTime_s();
+        state.electrical =
+            work.torque - (work.n - speedBefore) / step.step_s * unit.accelerationTime_s();
         power = state.electrical * work.n * unit.powerScale_W;
     } else if (unit.freeShaft()) {
         state.electrical = work.electricalConstant + work.electricalSlope * work.n;
@@ -201,8 +198,7 @@ bool linearise(const Model& model, const UnitRow& unit, double drop, MachineWork
             return true;
         }
         const double quadratic = unit.orifice.resistance_s2m5(work.tau) + unit.exitLoss_s2m5;
-        const auto solved =
-            hydraulics::solveBranch(work.linear_sm2, quadratic, work.w0_m + drop);
+        const auto solved = hydraulics::solveBranch(work.linear_sm2, quadratic, work.w0_m + drop);
         work.flow_m3s = solved.flow_m3s;
         work.slope_m2s = solved.slope_m2s;
         return true;
@@ -250,7 +246,8 @@ bool solveAlone(const Model& model, const UnitRow& unit, double drop, MachineWor
         }
         return numerics::ValueAndSlope{work.gap_m, -work.stiffness_m * work.tau};
     };
-    const double reach = 3.0 * std::sqrt(std::fabs(drop) / unit.headScale_m + work.n * work.n + 1.0);
+    const double reach =
+        3.0 * std::sqrt(std::fabs(drop) / unit.headScale_m + work.n * work.n + 1.0);
     const auto root = numerics::bracketedNewton(balance, -reach, reach, work.q * work.c,
                                                 {1e-13 * reach, 0.0, 200});
     if (!root) {

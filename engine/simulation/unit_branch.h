@@ -10,11 +10,11 @@ namespace headroom::simulation {
 struct UnitStep {
     double step_s = 0.0;
     bool backwardEuler = false;
-    double stroke = 0.0;         ///< servo stroke at the new time
-    double prescribed = 0.0;     ///< `flow` unit: discharge; `power` unit: share of its power
-    double frequency_pu = 1.0;   ///< of the grid at the new time
-    double tripFraction = -1.0;  ///< of the step; < 0: the breaker does not move
-    bool guess = true;           ///< extrapolate the first iterate
+    double stroke = 0.0;        ///< servo stroke at the new time
+    double prescribed = 0.0;    ///< `flow` unit: discharge; `power` unit: share of its power
+    double frequency_pu = 1.0;  ///< of the grid at the new time
+    double tripFraction = -1.0; ///< of the step; < 0: the breaker does not move
+    bool guess = true;          ///< extrapolate the first iterate
 };
 
 /// Constants of the step and the first guess of flow and speed.

@@ -70,10 +70,10 @@ void Validity::takeRunners(const State& state) {
         }
         const MachineState& machine = state.machines[i];
         const double square = numerics::signedSquare(machine.flow_m3s);
-        const double driven = unit.draftInertia_s2m2 *
-                              (machine.flow_m3s - machine.flowBefore_m3s) / model_.grid.step_s;
-        const double head = state.head_m[at(unit.outlet)] + unit.exitLoss_s2m5 * square + driven -
-                            unit.recovery_s2m5 * std::fabs(square) - unit.centreline_m;
+        const double driven = unit.draftInertia_s2m2 * (machine.flow_m3s - machine.flowBefore_m3s)
+                              / model_.grid.step_s;
+        const double head = state.head_m[at(unit.outlet)] + unit.exitLoss_s2m5 * square + driven
+                            - unit.recovery_s2m5 * std::fabs(square) - unit.centreline_m;
         if (head < boiling) {
             runnerDone_[i] = true;
             add(state.time_s,
@@ -105,13 +105,13 @@ void Validity::takeRows(const State& state) {
             if (node < first || node > first + at(conduit.cells)) {
                 continue;
             }
-            const double along = conduit.geometry.length_m * static_cast<double>(node - first) /
-                                 conduit.cells;
+            const double along =
+                conduit.geometry.length_m * static_cast<double>(node - first) / conduit.cells;
             add(watchedSince_s_,
                 {.message = &boilsInConduit,
                  .subject = model_.conduitPath[i],
-                 .arguments = {{"chainage", amount(Quantity::chainage,
-                                                   conduit.geometry.chainageAt(along))},
+                 .arguments = {{"chainage",
+                                amount(Quantity::chainage, conduit.geometry.chainageAt(along))},
                                {"head", amount(Quantity::head, model_.medium.vapourHead_m())}}},
                 {Thing::chamber, Thing::reservoir, Thing::unit, Thing::grid});
         }

@@ -23,8 +23,8 @@ private:
     void add(double from_s, Finding why, std::vector<results::Thing> stillValid);
 
     const Model& model_;
-    std::vector<double> lowest_m_, highest_m_;  // by node of the rows, within the present watch
-    std::vector<double> boiling_m_;             // head at which the water there boils
+    std::vector<double> lowest_m_, highest_m_; // by node of the rows, within the present watch
+    std::vector<double> boiling_m_;            // head at which the water there boils
     std::vector<bool> chamberDone_, runnerDone_;
     bool rowsDone_ = false;
     double watchedSince_s_ = 0.0;

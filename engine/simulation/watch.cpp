@@ -35,8 +35,8 @@ void Watch::capture(std::int64_t centre, std::int64_t last, std::size_t index, A
 
 void Watch::take(std::int64_t n) {
     const auto now = static_cast<double>(n);
-    if (!loops_.track(row(n), highest_.data(), highestAt_.data(), lowest_.data(),
-                      lowestAt_.data(), now, width_)) {
+    if (!loops_.track(row(n), highest_.data(), highestAt_.data(), lowest_.data(), lowestAt_.data(),
+                      now, width_)) {
         return;
     }
     for (std::size_t i = 0; i < width_; ++i) {

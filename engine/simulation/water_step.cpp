@@ -11,11 +11,11 @@ namespace {
 
 constexpr int mostIterations = 12;
 constexpr int mostRobust = 200, mostHalvings = 12;
-constexpr double headTolerance = 1e-12;   // of the plant's head
+constexpr double headTolerance = 1e-12; // of the plant's head
 // Where laws are gently curved the next error is the square of a move times the curvature over the
 // slope: below 1e-4 1/m for ends of conduits and rigid water, of the order of 1 for a runner.
-constexpr double smoothTolerance = 1e-6;  // of the plant's head
-constexpr double unitTolerance = 3e-6;    // per unit
+constexpr double smoothTolerance = 1e-6; // of the plant's head
+constexpr double unitTolerance = 3e-6;   // per unit
 
 /// Solves the symmetric positive definite system in place (lower triangle of `matrix`, row by
 /// row); false if a pivot is not positive.
@@ -92,8 +92,8 @@ void WaterStep::prepareEnd(State& state, const BranchRow& row, BranchState& bran
     hydraulics::EndLaw law;
     if (mode_ == Mode::jump) { // the wave that arrives at this very instant
         const auto i = at(row.conduit);
-        law.linear_sm2 = start ? model_.rows.startImpedance_sm2(elastic)
-                               : model_.rows.endImpedance_sm2(elastic);
+        law.linear_sm2 =
+            start ? model_.rows.startImpedance_sm2(elastic) : model_.rows.endImpedance_sm2(elastic);
         law.arriving_m = start ? state.startHead_m[i] - law.linear_sm2 * state.startFlow_m3s[i]
                                : state.endHead_m[i] + law.linear_sm2 * state.endFlow_m3s[i];
     } else {
@@ -186,8 +186,8 @@ bool WaterStep::evaluate(State& state, const Cluster& cluster, bool alone) {
         const double storage = model_.nodes[at(node)].storage_m2;
         if (storage > 0.0) { // elastic storage of short elements, trapezoid
             const double slope = 2.0 * storage / step_;
-            const double flow = slope * (state.head_m[at(node)] - state.headBefore_m[at(node)]) -
-                                state.storageFlow_m3s[at(node)];
+            const double flow = slope * (state.head_m[at(node)] - state.headBefore_m[at(node)])
+                                - state.storageFlow_m3s[at(node)];
             addFlow(model_.nodes[at(node)].slot, -1, flow, slope);
         }
     }
@@ -196,8 +196,9 @@ bool WaterStep::evaluate(State& state, const Cluster& cluster, bool alone) {
         const UnitRow& row = model_.units[at(unit)];
         MachineWork& work = state.work[at(unit)];
         const double head = drop(state, row);
-        answered = (alone ? solveAlone(model_, row, head, work)
-                          : linearise(model_, row, head, work)) && answered;
+        answered =
+            (alone ? solveAlone(model_, row, head, work) : linearise(model_, row, head, work))
+            && answered;
         addFlow(row.inletSlot, row.outletSlot, work.flow_m3s, work.slope_m2s);
     }
     return answered;
@@ -320,9 +321,9 @@ void WaterStep::setFailure(State& state, std::size_t index) {
     for (std::size_t i = 0; i < cluster.nodes.size(); ++i) {
         failure_.residuals.emplace_back(model_.nodePath[at(cluster.nodes[i])], residual_[i]);
     }
-    std::sort(failure_.residuals.begin(), failure_.residuals.end(), [](const auto& a, const auto& b) {
-        return std::fabs(a.second) > std::fabs(b.second);
-    });
+    std::sort(
+        failure_.residuals.begin(), failure_.residuals.end(),
+        [](const auto& a, const auto& b) { return std::fabs(a.second) > std::fabs(b.second); });
     constexpr std::size_t named = 3;
     failure_.residuals.resize(std::min(failure_.residuals.size(), named));
     failure_.where = cluster.nodes.empty() ? std::string("plant/units")
@@ -333,8 +334,8 @@ void WaterStep::setFailure(State& state, std::size_t index) {
 /// a head and never in water.
 void WaterStep::closeBalance(State& state, const Cluster& cluster) {
     for (const int node : cluster.nodes) {
-        double sum = 0.0;       // into the node
-        int closing = -1;       // an elastic end
+        double sum = 0.0; // into the node
+        int closing = -1; // an elastic end
         for (const int index : cluster.branches) {
             const BranchRow& row = model_.branches[at(index)];
             const double flow = state.branches[at(index)].flow_m3s;
@@ -357,9 +358,8 @@ void WaterStep::closeBalance(State& state, const Cluster& cluster) {
         }
         const double storage = model_.nodes[at(node)].storage_m2;
         if (storage > 0.0) {
-            sum -= 2.0 * storage / step_ *
-                       (state.head_m[at(node)] - state.headBefore_m[at(node)]) -
-                   state.storageFlow_m3s[at(node)];
+            sum -= 2.0 * storage / step_ * (state.head_m[at(node)] - state.headBefore_m[at(node)])
+                   - state.storageFlow_m3s[at(node)];
         }
         if (chamber >= 0) {
             state.chambers[at(chamber)].next_m3s += sum;
@@ -370,8 +370,7 @@ void WaterStep::closeBalance(State& state, const Cluster& cluster) {
     }
 }
 
-bool WaterStep::solve(State& state, const std::vector<UnitStep>& units, double step_s,
-                      Mode mode) {
+bool WaterStep::solve(State& state, const std::vector<UnitStep>& units, double step_s, Mode mode) {
     step_ = step_s;
     mode_ = mode;
     for (std::size_t i = 0; i < model_.branches.size(); ++i) {
@@ -404,10 +403,10 @@ void WaterStep::handBackRigid(State& state, std::size_t i) {
     const EndLoss& to = conduit.geometry.to;
     const double flow = state.startFlow_m3s[i];
     const double square = flow * std::fabs(flow);
-    state.startHead_m[i] = state.head_m[at(conduit.from)] -
-                           (flow >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
-    state.endHead_m[i] = state.head_m[at(conduit.to)] +
-                         (flow >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
+    state.startHead_m[i] = state.head_m[at(conduit.from)]
+                           - (flow >= 0.0 ? from.leaving_s2m5 : from.arriving_s2m5) * square;
+    state.endHead_m[i] =
+        state.head_m[at(conduit.to)] + (flow >= 0.0 ? to.arriving_s2m5 : to.leaving_s2m5) * square;
 }
 
 void WaterStep::handBackElastic(State& state, std::size_t i) {
@@ -451,9 +450,9 @@ void WaterStep::accept(State& state, const std::vector<UnitStep>& units, double 
     for (std::size_t i = 0; i < model_.nodes.size(); ++i) {
         const double storage = model_.nodes[i].storage_m2;
         if (storage > 0.0 && !model_.nodes[i].known()) {
-            state.storageFlow_m3s[i] = 2.0 * storage / step_s *
-                                           (state.head_m[i] - state.headBefore_m[i]) -
-                                       state.storageFlow_m3s[i];
+            state.storageFlow_m3s[i] =
+                2.0 * storage / step_s * (state.head_m[i] - state.headBefore_m[i])
+                - state.storageFlow_m3s[i];
         }
     }
     for (BranchState& branch : state.branches) {
@@ -476,9 +475,9 @@ void WaterStep::accept(State& state, const std::vector<UnitStep>& units, double 
 void WaterStep::acceptJump(State& state, const std::vector<UnitStep>& units) {
     for (std::size_t i = 0; i < model_.nodes.size(); ++i) {
         if (model_.nodes[i].storage_m2 > 0.0 && !model_.nodes[i].known()) {
-            state.storageFlow_m3s[i] = 2.0 * model_.nodes[i].storage_m2 / step_ *
-                                           (state.head_m[i] - state.headBefore_m[i]) -
-                                       state.storageFlow_m3s[i];
+            state.storageFlow_m3s[i] =
+                2.0 * model_.nodes[i].storage_m2 / step_ * (state.head_m[i] - state.headBefore_m[i])
+                - state.storageFlow_m3s[i];
         }
         state.headBefore_m[i] = state.head_m[i];
     }

@@ -120,8 +120,9 @@ void addLoss(Case& made, const std::string& conduit, double head_m, double flow_
     const double area = target.reaches[0].area_m2;
     const double velocity = flow_m3s / area;
     plant::StationLoss loss;
-    loss.chainage_m = 0.5 * (made.plant.points[target.from.index].chainage_m +
-                             made.plant.points[target.to.index].chainage_m);
+    loss.chainage_m = 0.5
+                      * (made.plant.points[target.from.index].chainage_m
+                         + made.plant.points[target.to.index].chainage_m);
     loss.coefficient = head_m * 2.0 * made.site.gravity_mps2 / (velocity * velocity);
     target.losses.add("all", loss);
 }
@@ -145,9 +146,15 @@ double valueAt(const results::Run& run, Measure measure, const results::Place& p
     return share < 1e-9 ? here : here + share * (next - here);
 }
 
-results::Place pointPlace(int index) { return {results::Thing::point, index, 0.0}; }
-results::Place chamberPlace(int index) { return {results::Thing::chamber, index, 0.0}; }
-results::Place unitPlace(int index) { return {results::Thing::unit, index, 0.0}; }
+results::Place pointPlace(int index) {
+    return {results::Thing::point, index, 0.0};
+}
+results::Place chamberPlace(int index) {
+    return {results::Thing::chamber, index, 0.0};
+}
+results::Place unitPlace(int index) {
+    return {results::Thing::unit, index, 0.0};
+}
 
 Case surgeCase(double lossAt50_m, double area_m2) {
     Case made;
@@ -172,8 +179,8 @@ Case dorvane(double level_m, double output_W) {
     const auto inlet = made.point("Unit inlet", 5579.0, 262.0);
     made.reservoir("Upper Dorvane", intake, level_m);
     const auto tail = made.reservoir("Tailwater", {}, 270.0);
-    auto& tunnel = made.conduit("Tunnel", intake, foot, 5000.0, 32.0, 1100.0,
-                                plant::ConduitModel::elastic);
+    auto& tunnel =
+        made.conduit("Tunnel", intake, foot, 5000.0, 32.0, 1100.0, plant::ConduitModel::elastic);
     tunnel.reaches[0].hydraulicRadius_m = 1.497;
     tunnel.reaches[0].friction = plant::Strickler{34.0};
     tunnel.enteringLoss = 0.25;
@@ -189,8 +196,8 @@ Case dorvane(double level_m, double output_W) {
     plant::StationLoss bends;
     bends.chainage_m = 5300.0;
     bends.coefficient = 0.25;
-    auto& rest = made.conduit("Penstock", bend, inlet, 620.0, bore, 1200.0,
-                              plant::ConduitModel::automatic);
+    auto& rest =
+        made.conduit("Penstock", bend, inlet, 620.0, bore, 1200.0, plant::ConduitModel::automatic);
     rest.axis = {{5250.0, 262.0}};
     rest.reaches[0].friction = plant::DarcyFactor{0.011};
     rest.reaches[0].hydraulicRadius_m = 3.9 / 4.0;
@@ -211,7 +218,7 @@ Case dorvane(double level_m, double output_W) {
     francis.bestPower_pu = 0.88;
     francis.bestEfficiency_pu = 0.939;
     francis.halfPowerEfficiency_pu = 0.880;
-    francis.flowByStroke = {{0.0, 0.0}, {0.10, 0.12}, {0.25, 0.29},
+    francis.flowByStroke = {{0.0, 0.0},   {0.10, 0.12}, {0.25, 0.29},
                             {0.50, 0.55}, {0.75, 0.79}, {1.0, 1.0}};
     auto& unit = made.unit("Unit 1", inlet, tail, francis);
     unit.centreline_m = 262.0;

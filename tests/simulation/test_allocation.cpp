@@ -1,11 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Nothing is allocated while a run steps. The counting operators live in this source alone.
-#include "plants.h"
 #include "support/catch.h"
 
 #include <atomic>
 #include <cstdlib>
 #include <new>
+
+#include "plants.h"
 
 namespace {
 std::atomic<long> allocations{0};
@@ -21,8 +22,12 @@ void* operator new(std::size_t size) {
     }
     throw std::bad_alloc();
 }
-void operator delete(void* memory) noexcept { std::free(memory); }
-void operator delete(void* memory, std::size_t) noexcept { std::free(memory); }
+void operator delete(void* memory) noexcept {
+    std::free(memory);
+}
+void operator delete(void* memory, std::size_t) noexcept {
+    std::free(memory);
+}
 
 using namespace headroom;
 using namespace headroom::tests;

@@ -1,9 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Water hammer: one elastic pipe with an ideal unit at its end, velocity heads off.
-#include "plants.h"
 #include "support/catch.h"
 
 #include <cmath>
+
+#include "plants.h"
 
 using namespace headroom;
 using namespace headroom::tests;
@@ -12,8 +13,8 @@ namespace {
 
 struct Pipe {
     double length = 0.0, area = 0.0, waveSpeed = 0.0;
-    double head = 0.0;      ///< reservoir over tailwater
-    double velocity = 0.0;  ///< at the start
+    double head = 0.0;     ///< reservoir over tailwater
+    double velocity = 0.0; ///< at the start
 };
 
 /// Reservoir at `head`, tailwater at 0, pipe between, orifice unit open as for `velocity`.
@@ -63,8 +64,8 @@ TEST_CASE("hammer: instantaneous closure without friction is exact", "[hammer][a
     const auto middle = made.point("Middle", 600.0);
     made.plant.conduits[0].to = middle;
     made.plant.conduits[0].length_m = 600.0;
-    made.conduit("Second", middle, made.ref(plant::Collection::points, "Inlet"), 600.0, 3.0,
-                 1200.0, plant::ConduitModel::elastic);
+    made.conduit("Second", middle, made.ref(plant::Collection::points, "Inlet"), 600.0, 3.0, 1200.0,
+                 plant::ConduitModel::elastic);
     openings(made, {{0.0, 0.0}, {1.0, 0.0}});
     made.study.until_s = 20.0;
     const auto run = made.run();
@@ -121,8 +122,7 @@ TEST_CASE("hammer: linear reduction of discharge makes a triangular wave", "[ham
     const auto run = made.run();
     const double theta = 4.0 / 3.0;
     for (int i = 1; i <= 6; ++i) {
-        CHECK_THAT(headAt(run, i * theta) - 100.0,
-                   WithinAbs(i % 2 == 1 ? 40.774720 : 0.0, 1e-4));
+        CHECK_THAT(headAt(run, i * theta) - 100.0, WithinAbs(i % 2 == 1 ? 40.774720 : 0.0, 1e-4));
     }
 }
 
@@ -182,8 +182,7 @@ TEST_CASE("hammer: opening and its negative surge", "[hammer][analytic]") {
     for (int i = 0; i < 8; ++i) {
         CHECK_THAT(headAt(run, (i + 1) * theta) / 100.0, WithinAbs(zeta[i], 2e-7));
     }
-    CHECK_THAT(channel(run, Measure::head, pointPlace(1)).least.value,
-               WithinAbs(54.745892, 2e-5));
+    CHECK_THAT(channel(run, Measure::head, pointPlace(1)).least.value, WithinAbs(54.745892, 2e-5));
     Case half = pipeCase(low, 2.0 / 300.0);
     half.study.start.opening[0].second = 0.5;
     openings(half, {{0.0, 0.5}, {2.0 * theta, 1.0}});
@@ -198,9 +197,12 @@ TEST_CASE("hammer: opening and its negative surge", "[hammer][analytic]") {
 TEST_CASE("hammer: rigid column with linear closure reaches its limit", "[hammer][analytic]") {
     // √ζ = K/2 + √(1 + K²/4), K = LV₀/(gH₀T): case A, 8 s: 1.225712320; case B, 8 s 1.107264673,
     // 16 s 1.052283836. Derived here.
-    struct Row { Pipe pipe; double time, zeta; };
-    for (const Row& row : {Row{low, 8.0, 1.225712320}, Row{high, 8.0, 1.107264673},
-                           Row{high, 16.0, 1.052283836}}) {
+    struct Row {
+        Pipe pipe;
+        double time, zeta;
+    };
+    for (const Row& row :
+         {Row{low, 8.0, 1.225712320}, Row{high, 8.0, 1.107264673}, Row{high, 16.0, 1.052283836}}) {
         Case made = pipeCase(row.pipe, 0.01);
         made.plant.conduits[0].model = plant::ConduitModel::rigid;
         openings(made, {{0.0, 1.0}, {row.time, 0.0}});
@@ -240,14 +242,12 @@ TEST_CASE("hammer: pipe with friction and a curved valve law", "[hammer][referen
     const results::Place end{results::Thing::conduit, 0, 600.0};
     CHECK_THAT(channel(run, Measure::discharge, unitPlace()).atRest, WithinAbs(0.4774321635, 1e-8));
     CHECK_THAT(channel(run, Measure::head, pointPlace(1)).atRest, WithinAbs(143.4882843, 1e-6));
-    const double rows[][3] = {{0.2, 165.8383, 0.441720}, {0.4, 191.2259, 0.401441},
-                              {0.6, 219.6509, 0.356597}, {0.8, 250.9135, 0.307505},
-                              {1.0, 284.5509, 0.254885}, {1.2, 283.8865, 0.188413},
-                              {1.4, 274.0729, 0.126986}, {1.6, 253.0494, 0.073660},
-                              {1.8, 218.9374, 0.031843}, {2.0, 170.1338, 0.005402},
-                              {2.2, 133.2927, 0.0},      {2.6, 93.0220, 0.0},
-                              {3.0, 133.2787, 0.0},      {3.6, 206.7983, 0.0},
-                              {4.2, 133.3836, 0.0}};
+    const double rows[][3] = {
+        {0.2, 165.8383, 0.441720}, {0.4, 191.2259, 0.401441}, {0.6, 219.6509, 0.356597},
+        {0.8, 250.9135, 0.307505}, {1.0, 284.5509, 0.254885}, {1.2, 283.8865, 0.188413},
+        {1.4, 274.0729, 0.126986}, {1.6, 253.0494, 0.073660}, {1.8, 218.9374, 0.031843},
+        {2.0, 170.1338, 0.005402}, {2.2, 133.2927, 0.0},      {2.6, 93.0220, 0.0},
+        {3.0, 133.2787, 0.0},      {3.6, 206.7983, 0.0},      {4.2, 133.3836, 0.0}};
     for (const auto& row : rows) {
         CHECK_THAT(headAt(run, row[0]), WithinAbs(row[1], 0.03));
         CHECK_THAT(valueAt(run, Measure::discharge, end, row[0]), WithinAbs(row[2], 1e-4));
@@ -284,16 +284,16 @@ TEST_CASE("hammer: linear friction follows the telegraph equation", "[hammer][an
     made.plant.conduits[0].reaches[0].friction = plant::LinearFriction{0.2};
     made.plant.units[0].turbine = plant::FlowUnit{2.0};
     made.study.start.opening.clear();
-    made.at(0.0, plant::FlowOrder{made.ref(plant::Collection::units, "Unit"),
-                                  {{0.0, 0.0}, {1.0, 0.0}}});
+    made.at(0.0,
+            plant::FlowOrder{made.ref(plant::Collection::units, "Unit"), {{0.0, 0.0}, {1.0, 0.0}}});
     made.study.until_s = 10.0;
     const auto run = made.run();
     CHECK_THAT(channel(run, Measure::head, pointPlace(1)).atRest, WithinAbs(237.767584, 1e-5));
     CHECK_THAT(headAt(run, 0.0), WithinAbs(360.091743, 1e-4));
-    const double rows[][2] = {{0.25, 363.13089}, {0.5, 366.13275},  {0.75, 369.09824},
-                              {1.25, 147.77998}, {1.5, 144.93223},  {1.75, 142.11723},
-                              {2.5, 345.05674},  {3.5, 164.00069},  {4.5, 327.80467},
-                              {5.5, 179.60935},  {8.5, 302.12364},  {9.5, 202.84382}};
+    const double rows[][2] = {{0.25, 363.13089}, {0.5, 366.13275}, {0.75, 369.09824},
+                              {1.25, 147.77998}, {1.5, 144.93223}, {1.75, 142.11723},
+                              {2.5, 345.05674},  {3.5, 164.00069}, {4.5, 327.80467},
+                              {5.5, 179.60935},  {8.5, 302.12364}, {9.5, 202.84382}};
     for (const auto& row : rows) {
         CHECK_THAT(headAt(run, row[0]), WithinAbs(row[1], 0.05));
     }

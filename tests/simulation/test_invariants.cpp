@@ -1,12 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // What must hold without any reference: rest, balance, symmetry, limits of the chamber, order.
-#include "plants.h"
 #include "support/catch.h"
 #include "units/text.h"
 
 #include <cmath>
 #include <cstdio>
 #include <random>
+
+#include "plants.h"
 
 using namespace headroom;
 using namespace headroom::tests;
@@ -32,7 +33,8 @@ TEST_CASE("invariants: the rest does not depend on the step", "[simulation][inva
     const auto b = coarse.rest();
     REQUIRE(a.rows.size() == b.rows.size());
     for (std::size_t i = 0; i < a.rows.size(); ++i) {
-        CHECK_THAT(a.rows[i].value, WithinAbs(b.rows[i].value, 1e-9 * (1.0 + std::fabs(b.rows[i].value))));
+        CHECK_THAT(a.rows[i].value,
+                   WithinAbs(b.rows[i].value, 1e-9 * (1.0 + std::fabs(b.rows[i].value))));
     }
     CHECK(a.residual < 1e-9);
     CHECK(b.residual < 1e-9);
@@ -126,9 +128,9 @@ TEST_CASE("invariants: limits of the chamber element", "[simulation][invariant]"
         return made.run();
     };
     const auto none = closing(0.0, 0.0);
-    const auto tiny = closing(1e-7, 0.0);    // next to no water: the wave passes through
-    const auto vast = closing(1e9, 0.0);     // never moves: the wave is thrown back
-    const auto shut = closing(50.0, 1e9);    // throttle without passage: as if it were not there
+    const auto tiny = closing(1e-7, 0.0); // next to no water: the wave passes through
+    const auto vast = closing(1e9, 0.0);  // never moves: the wave is thrown back
+    const auto shut = closing(50.0, 1e9); // throttle without passage: as if it were not there
     for (double t = 0.1; t < 10.0; t += 0.31) {
         const double head = valueAt(none, Measure::head, pointPlace(2), t);
         CHECK_THAT(valueAt(tiny, Measure::head, pointPlace(2), t), WithinAbs(head, 0.05));
@@ -187,8 +189,10 @@ TEST_CASE("invariants: order two on a smooth run with governor", "[simulation][o
     made.at(0.0, plant::ImposedFrequency{dip});
     made.study.until_s = 40.0;
     const std::vector<std::pair<Measure, results::Place>> watched{
-        {Measure::opening, unitPlace()},       {Measure::discharge, unitPlace()},
-        {Measure::level, chamberPlace()},      {Measure::head, pointPlace(3)},
+        {Measure::opening, unitPlace()},
+        {Measure::discharge, unitPlace()},
+        {Measure::level, chamberPlace()},
+        {Measure::head, pointPlace(3)},
         {Measure::shaftPower, unitPlace()}};
     const double order = orderOf(made, 0.04, {16.0, 40.0}, watched);
     std::printf("    order with governor %.3f\n", order);
@@ -196,6 +200,12 @@ TEST_CASE("invariants: order two on a smooth run with governor", "[simulation][o
 }
 
 namespace {
+
+std::string named(char kind, int number) {
+    std::string name(1, kind);
+    name += std::to_string(number);
+    return name;
+}
 
 /// A random tree of conduits with chambers and flow units whose discharge moves smoothly.
 Case randomNetwork(unsigned seed) {
@@ -209,20 +219,18 @@ Case randomNetwork(unsigned seed) {
     const auto tail = made.reservoir("Tail", {}, 0.0);
     const int count = 3 + static_cast<int>(random() % 4);
     for (int i = 1; i <= count; ++i) {
-        const std::string name = "P" + std::to_string(i);
+        const std::string name = named('P', i);
         points.push_back(made.point(name, 1000.0 * i));
         const auto& from = points[random() % static_cast<unsigned>(i)];
         const bool elastic = random() % 3 != 0;
         const double area = between(4.0, 30.0);
-        auto& conduit = made.conduit("C" + std::to_string(i), from, points.back(),
-                                     elastic ? 120.0 * (2 + static_cast<int>(random() % 8))
-                                             : between(200.0, 4000.0),
-                                     area, 1200.0,
-                                     elastic ? plant::ConduitModel::elastic
-                                             : plant::ConduitModel::rigid);
+        auto& conduit = made.conduit(
+            named('C', i), from, points.back(),
+            elastic ? 120.0 * (2 + static_cast<int>(random() % 8)) : between(200.0, 4000.0), area,
+            1200.0, elastic ? plant::ConduitModel::elastic : plant::ConduitModel::rigid);
         conduit.reaches[0].friction = plant::DarcyFactor{between(0.01, 0.03)};
         if (random() % 2 == 0 || i == count) {
-            auto& chamber = made.chamber("S" + std::to_string(i), points.back(),
+            auto& chamber = made.chamber(named('S', i), points.back(),
                                          between(20.0, 200.0), 100.0, 500.0);
             chamber.shape.throttled = true;
             chamber.shape.lossIn_s2m5 = between(0.001, 0.02);
@@ -232,7 +240,7 @@ Case randomNetwork(unsigned seed) {
     for (int i = 1; i <= count; ++i) {
         if (i == count || random() % 3 == 0) {
             const double flow = between(2.0, 20.0);
-            const std::string name = "U" + std::to_string(i);
+            const std::string name = named('U', i);
             made.unit(name, points[static_cast<std::size_t>(i)], tail, plant::FlowUnit{flow});
             plant::Rows rows;
             const double swing = between(-0.5, 0.5) * flow, period = between(30.0, 60.0);

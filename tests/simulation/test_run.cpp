@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // How a run behaves: cancelling, same bits, what it keeps, events, what it says when it leaves its
 // range.
-#include "plants.h"
 #include "simulation/messages.h"
 #include "support/catch.h"
 #include "units/text.h"
@@ -12,6 +11,8 @@
 #include <cstring>
 #include <set>
 #include <thread>
+
+#include "plants.h"
 
 using namespace headroom;
 using namespace headroom::tests;
@@ -32,24 +33,27 @@ std::shared_ptr<const simulation::Model> compiled(const Case& made) {
     return *model;
 }
 
-bool sameBits(double a, double b) { return std::memcmp(&a, &b, sizeof a) == 0; }
+bool sameBits(double a, double b) {
+    return std::memcmp(&a, &b, sizeof a) == 0;
+}
 
 bool sameRun(const results::Run& a, const results::Run& b) {
     bool same = a.channels.size() == b.channels.size();
     for (std::size_t i = 0; same && i < a.channels.size(); ++i) {
         const auto& x = a.channels[i];
         const auto& y = b.channels[i];
-        same = sameBits(x.atEnd, y.atEnd) && sameBits(x.least.value, y.least.value) &&
-               sameBits(x.greatest.value, y.greatest.value) &&
-               sameBits(x.greatest.time_s, y.greatest.time_s) &&
-               x.trace.last.size() == y.trace.last.size() &&
-               std::memcmp(x.trace.last.data(), y.trace.last.data(),
-                           x.trace.last.size() * sizeof(float)) == 0;
+        same = sameBits(x.atEnd, y.atEnd) && sameBits(x.least.value, y.least.value)
+               && sameBits(x.greatest.value, y.greatest.value)
+               && sameBits(x.greatest.time_s, y.greatest.time_s)
+               && x.trace.last.size() == y.trace.last.size()
+               && std::memcmp(x.trace.last.data(), y.trace.last.data(),
+                              x.trace.last.size() * sizeof(float))
+                      == 0;
     }
     for (std::size_t i = 0; same && i < a.envelopes.size(); ++i) {
         for (std::size_t k = 0; same && k < a.envelopes[i].least_m.size(); ++k) {
-            same = sameBits(a.envelopes[i].least_m[k], b.envelopes[i].least_m[k]) &&
-                   sameBits(a.envelopes[i].greatest_m[k], b.envelopes[i].greatest_m[k]);
+            same = sameBits(a.envelopes[i].least_m[k], b.envelopes[i].least_m[k])
+                   && sameBits(a.envelopes[i].greatest_m[k], b.envelopes[i].greatest_m[k]);
         }
     }
     return same;
@@ -172,8 +176,8 @@ TEST_CASE("run: loss of generation moves the area and the governor answers", "[s
     const auto run = made.run();
     CHECK_THAT(channel(run, Measure::frequencyRate, {results::Thing::grid, -1, 0.0}).least.value,
                WithinRel(-0.36, 0.03));
-    CHECK(channel(run, Measure::opening, unitPlace()).greatest.value >
-          channel(run, Measure::opening, unitPlace()).atRest + 0.02);
+    CHECK(channel(run, Measure::opening, unitPlace()).greatest.value
+          > channel(run, Measure::opening, unitPlace()).atRest + 0.02);
     CHECK(channel(run, Measure::frequency, {results::Thing::grid, -1, 0.0}).least.value < 49.8);
 }
 
@@ -217,9 +221,11 @@ TEST_CASE("run: overspeed protection shuts the unit down", "[simulation][run]") 
 TEST_CASE("run: chambers that fill or empty end what is valid", "[simulation][run]") {
     for (const bool full : {true, false}) {
         Case made = surgeCase(5.0);
-        made.plant.chambers[0].shape.areaByLevel = full ? plant::Rows{{-35.0, 100.0}, {10.0, 100.0}}
-                                                        : plant::Rows{{-10.0, 100.0}, {60.0, 100.0}};
-        made.at(0.0, plant::FlowOrder{made.ref(Collection::units, "Unit"), {{0.0, 0.0}, {1.0, 0.0}}});
+        made.plant.chambers[0].shape.areaByLevel = full
+                                                       ? plant::Rows{{-35.0, 100.0}, {10.0, 100.0}}
+                                                       : plant::Rows{{-10.0, 100.0}, {60.0, 100.0}};
+        made.at(0.0,
+                plant::FlowOrder{made.ref(Collection::units, "Unit"), {{0.0, 0.0}, {1.0, 0.0}}});
         made.study.until_s = 250.0;
         const auto run = made.run();
         REQUIRE(run.status.invalid.size() == 1);
@@ -277,8 +283,7 @@ TEST_CASE("run: short conduits keep their storage and a long one is not stretche
     CHECK_THAT(repeat.resolution.step_s, WithinRel(run.resolution.step_s / 3.0, 1e-12));
 }
 
-TEST_CASE("run: a plant without an answer ends with the place and the time",
-          "[simulation][run]") {
+TEST_CASE("run: a plant without an answer ends with the place and the time", "[simulation][run]") {
     // Constant power while the reservoir runs dry: the less head, the more water it asks for.
     Case made;
     const auto intake = made.point("Intake", 0.0, 0.0);

@@ -1,10 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Surge chambers against exact extremes. Data of all cases: L 5000 m, A 25 m², F 100 m², 50 m³/s,
 // g 9.81, reservoir at 0, velocity heads off, tunnel rigid.
-#include "plants.h"
 #include "support/catch.h"
 
 #include <cmath>
+
+#include "plants.h"
 
 using namespace headroom;
 using namespace headroom::tests;
@@ -83,7 +84,9 @@ TEST_CASE("surge: energy of the frictionless swing stays, with friction it falls
 
 TEST_CASE("surge: total rejection with quadratic friction", "[surge][analytic]") {
     // First integral: Forchheimer 1913, Prášil 1908, from memory; recomputed two ways.
-    struct Row { double loss, z1, t1, z2, t2; };
+    struct Row {
+        double loss, z1, t1, z2, t2;
+    };
     for (const Row& row : {Row{2.0, 21.263005113, 73.68711, -19.132211915, 215.68578},
                            Row{5.0, 19.373329386, 78.21141, -15.440548944, 220.74752},
                            Row{10.0, 16.461977931, 86.89986, -11.461730432, 230.50059},
@@ -104,7 +107,9 @@ TEST_CASE("surge: total rejection with quadratic friction", "[surge][analytic]")
 
 TEST_CASE("surge: rejection without dimensions", "[surge][analytic]") {
     // x = z/Z*, K = h_f0/Z*; derived here, recomputed.
-    struct Row { double k, x1, x2; };
+    struct Row {
+        double k, x1, x2;
+    };
     for (const Row& row : {Row{0.05, 0.96694817, -0.90836893}, Row{0.1, 0.93447442, -0.83081473},
                            Row{0.3, 0.81082410, -0.61105954}, Row{0.5, 0.69829044, -0.47423764},
                            Row{1.0, 0.47376545, -0.28761172}}) {
@@ -124,7 +129,9 @@ TEST_CASE("surge: sudden acceptance", "[surge][analytic]") {
     const auto half = acceptance(5.0, 25.0).run();
     CHECK_THAT(level(half).least.value, WithinAbs(-13.258608695, 5e-4 * zStar));
     CHECK_THAT(level(half).least.time_s, WithinAbs(78.66331, 0.1));
-    struct Row { double k, none, halfway; };
+    struct Row {
+        double k, none, halfway;
+    };
     for (const Row& row : {Row{0.05, -1.00486547, -0.51919562}, Row{0.3, -1.03166164, -0.61984207},
                            Row{0.7, -1.08700786, -0.80691641}}) {
         CHECK_THAT(level(acceptance(row.k * zStar, 0.0).run()).least.value / zStar,
@@ -136,7 +143,9 @@ TEST_CASE("surge: sudden acceptance", "[surge][analytic]") {
 
 TEST_CASE("surge: finite closing time", "[surge][reference]") {
     // Constructed case, recomputed by an independent integrator.
-    struct Row { double time, z1, t1, z2; };
+    struct Row {
+        double time, z1, t1, z2;
+    };
     for (const Row& row : {Row{10.0, 19.340010109, 83.23605, -15.419426293},
                            Row{20.0, 19.240194021, 88.30998, -15.356057608}}) {
         Case made = surgeCase(5.0);
@@ -151,7 +160,9 @@ TEST_CASE("surge: finite closing time", "[surge][reference]") {
 
 TEST_CASE("surge: throttled chamber, rejection", "[surge][analytic]") {
     // Derived here, recomputed two ways. Head under the throttle just after the stop: R₀ − h_f0.
-    struct Row { double r0, z1, t1, z2, head; };
+    struct Row {
+        double r0, z1, t1, z2, head;
+    };
     for (const Row& row : {Row{5.0, 16.764101578, 76.50053, -11.605935581, 0.0},
                            Row{10.0, 14.811730605, 75.29564, -9.293870041, 5.0},
                            Row{15.0, 13.279950065, 74.42694, -7.744601661, 10.0},
@@ -171,9 +182,12 @@ TEST_CASE("surge: optimum throttle makes the two maxima equal", "[surge][analyti
     for (const double t : {0.0, 10.0, 30.0, 50.0, 62.0}) {
         CHECK_THAT(valueAt(run, Measure::head, pointPlace(1), t), WithinAbs(15.963771420, 1e-4));
     }
-    struct Row { double loss, r0, z1; };
-    for (const Row& row : {Row{2.0, 16.573270392, 14.573270392}, Row{5.0, 17.602854186, 12.602854186},
-                           Row{10.0, 19.699964254, 9.699964254}}) {
+    struct Row {
+        double loss, r0, z1;
+    };
+    for (const Row& row :
+         {Row{2.0, 16.573270392, 14.573270392}, Row{5.0, 17.602854186, 12.602854186},
+          Row{10.0, 19.699964254, 9.699964254}}) {
         const auto damped = rejection(row.loss, row.r0).run();
         CHECK_THAT(level(damped).greatest.value, WithinAbs(row.z1, 5e-4 * zStar));
         CHECK_THAT(valueAt(damped, Measure::head, pointPlace(1), 0.0), WithinAbs(row.z1, 1e-4));
@@ -182,7 +196,9 @@ TEST_CASE("surge: optimum throttle makes the two maxima equal", "[surge][analyti
 
 TEST_CASE("surge: throttled chamber, acceptance", "[surge][reference]") {
     // Constructed case, recomputed.
-    struct Row { double from, r0, least, time, head; };
+    struct Row {
+        double from, r0, least, time, head;
+    };
     for (const Row& row : {Row{0.0, 10.0, -18.469770990, 71.42549, -10.0},
                            Row{0.0, 17.602854186, -16.327485754, 70.14575, -17.602854},
                            Row{25.0, 10.0, -11.967387131, 77.44625, -3.75},
@@ -196,7 +212,9 @@ TEST_CASE("surge: throttled chamber, acceptance", "[surge][reference]") {
 
 TEST_CASE("surge: chamber with upper expansion", "[surge][analytic]") {
     // Energy integral, derived here, recomputed two ways: 50 m² below z = 10 m, 400 m² above.
-    struct Row { double loss, greatest, time; };
+    struct Row {
+        double loss, greatest, time;
+    };
     for (const Row& row : {Row{0.0, 14.660184139, 84.23359}, Row{5.0, 13.648197090, 81.50751}}) {
         Case made = rejection(row.loss);
         made.plant.chambers[0].shape.areaByLevel = {
@@ -251,12 +269,14 @@ double ratioBetween(const results::Run& run, int first, int cycles, double perio
 TEST_CASE("surge: amplitude ratio per cycle around the Thoma area", "[surge][analytic]") {
     // Thoma 1910, from memory; roots of the linearised equation recomputed, and the non-linear
     // constant-power system agrees to 1e-4.
-    struct Row { double share, period, ratio; };
-    for (const Row& row : {Row{0.8, 158.6568, 1.214768}, Row{0.9, 168.2182, 1.096013},
-                           Row{1.0, 177.2987, 1.000000}, Row{1.1, 185.9687, 0.920420},
-                           Row{1.2, 194.2831, 0.853144}, Row{1.5, 217.4932, 0.700752},
-                           Row{1.65, 228.3050, 0.643298}, Row{1.8, 238.6855, 0.594322},
-                           Row{2.0, 251.9478, 0.539074}}) {
+    struct Row {
+        double share, period, ratio;
+    };
+    for (const Row& row :
+         {Row{0.8, 158.6568, 1.214768}, Row{0.9, 168.2182, 1.096013}, Row{1.0, 177.2987, 1.000000},
+          Row{1.1, 185.9687, 0.920420}, Row{1.2, 194.2831, 0.853144}, Row{1.5, 217.4932, 0.700752},
+          Row{1.65, 228.3050, 0.643298}, Row{1.8, 238.6855, 0.594322},
+          Row{2.0, 251.9478, 0.539074}}) {
         Case made = thoma(row.share * 36.276440991, plant::ConduitModel::rigid, 1300.0);
         made.settings.longestStep_s = 0.05;
         made.study.until_s = 4.0 * row.period;
@@ -277,8 +297,8 @@ TEST_CASE("surge: an elastic tunnel damps a little more than a rigid one", "[sur
     Case made = thoma(36.276440991, plant::ConduitModel::elastic, 1300.0);
     auto& tunnel = made.plant.conduits[0];
     tunnel.losses = {}; // along the tunnel, as in the impedance, instead of at one station
-    tunnel.reaches[0].friction = plant::DarcyFactor{
-        5.0 * 4.0 * tunnel.reaches[0].hydraulicRadius_m * 2.0 * 9.81 / (5000.0 * 4.0)};
+    tunnel.reaches[0].friction = plant::DarcyFactor{5.0 * 4.0 * tunnel.reaches[0].hydraulicRadius_m
+                                                    * 2.0 * 9.81 / (5000.0 * 4.0)};
     made.settings.longestStep_s = 0.1;
     made.study.until_s = 14.0 * 177.8895;
     const auto run = made.run();

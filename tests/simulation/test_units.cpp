@@ -1,11 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Units: rejection of an ideal turbine, and the demo plant's studies against their windows.
-#include "plants.h"
 #include "support/catch.h"
 #include "units/text.h"
 
 #include <cmath>
 #include <cstdio>
+
+#include "plants.h"
 
 using namespace headroom;
 using namespace headroom::tests;
@@ -22,8 +23,9 @@ Case idealRejection(plant::ConduitModel model, double closing_s, double step) {
     made.reservoir("Upper", intake, 250.0);
     const auto tail = made.reservoir("Tail", {}, 0.0);
     made.conduit("Penstock", intake, inlet, 600.0, 7.0, 1200.0, model);
-    auto& unit = made.unit("Unit", inlet, tail,
-                           plant::OrificeUnit{250.0, 30.0, 0.92, 333.333 * 3.14159265358979 / 30.0});
+    auto& unit =
+        made.unit("Unit", inlet, tail,
+                  plant::OrificeUnit{250.0, 30.0, 0.92, 333.333 * 3.14159265358979 / 30.0});
     unit.inertia_kgm2 = 444419.758;
     const auto reference = made.ref(Collection::units, "Unit");
     made.study.start.opening = {{reference, 1.0}};
@@ -68,7 +70,9 @@ TEST_CASE("units: rejection of an ideal unit below an elastic column", "[units][
                WithinRel(1.479995466, 1e-5));
     CHECK(run.balance.worstEnergyResidual_share < 1e-10);
     CHECK(run.balance.worstResidual_share < 1e-10);
-    struct Row { double closing, head, speed; };
+    struct Row {
+        double closing, head, speed;
+    };
     for (const Row& row : {Row{6.0, 299.134731, 464.085235}, Row{12.0, 273.015061, 546.952651}}) {
         const auto other = idealRejection(plant::ConduitModel::elastic, row.closing, 0.005).run();
         CHECK_THAT(channel(other, Measure::head, pointPlace(1)).greatest.value,
@@ -94,7 +98,9 @@ Case reject(double level, double output_W) {
     return made;
 }
 
-void say(const char* what, double value) { std::printf("    %-46s %10.3f\n", what, value); }
+void say(const char* what, double value) {
+    std::printf("    %-46s %10.3f\n", what, value);
+}
 
 constexpr int inletPoint = 3;
 /// 121.5 MW at the shaft.
@@ -139,10 +145,14 @@ TEST_CASE("units: Dorvane, rejection of part loads peaks at 20 to 30 %", "[units
 }
 
 TEST_CASE("units: Dorvane, loading at the lowest reservoir", "[units][reference]") {
-    struct Row { double over_s, least; };
-    for (const Row& row : {Row{10.0, 463.7}, Row{20.0, 463.7}, Row{60.0, 465.5}, Row{120.0, 473.3}}) {
+    struct Row {
+        double over_s, least;
+    };
+    for (const Row& row :
+         {Row{10.0, 463.7}, Row{20.0, 463.7}, Row{60.0, 465.5}, Row{120.0, 473.3}}) {
         Case made = dorvane(488.0, 0.0);
-        made.at(10.0, plant::LoadOrder{made.ref(Collection::units, "Unit 1"), fullAtLowest_W, row.over_s});
+        made.at(10.0, plant::LoadOrder{made.ref(Collection::units, "Unit 1"), fullAtLowest_W,
+                                       row.over_s});
         made.study.until_s = 400.0;
         const auto run = made.run();
         const double level = lowest(run, Measure::level, chamberPlace());
@@ -192,8 +202,7 @@ results::Run reload(double delay_s, double ramp_s, std::optional<double> notBefo
 TEST_CASE("units: Dorvane, reject then reload", "[units][reference]") {
     double worst = 1e9, at = 0.0;
     for (double delay = 80.0; delay <= 120.0; delay += 4.0) {
-        const double level =
-            lowest(reload(delay, 20.0, {}), Measure::level, chamberPlace());
+        const double level = lowest(reload(delay, 20.0, {}), Measure::level, chamberPlace());
         if (level < worst) {
             worst = level;
             at = delay;
@@ -254,7 +263,8 @@ TEST_CASE("units: Dorvane, a fast rise of the set-point goes the wrong way first
     const auto run = made.run();
     const double first = valueAt(run, Measure::gridPower, unitPlace(), 11.0) - 87.7e6;
     say("power after 1 s, below zero [MW]", first * 1e-6);
-    say("power after 7.5 s [MW]", (valueAt(run, Measure::gridPower, unitPlace(), 17.5) - 87.7e6) * 1e-6);
+    say("power after 7.5 s [MW]",
+        (valueAt(run, Measure::gridPower, unitPlace(), 17.5) - 87.7e6) * 1e-6);
     CHECK(first < 0.0);
     CHECK(valueAt(run, Measure::gridPower, unitPlace(), 17.5) > 87.7e6);
 }
