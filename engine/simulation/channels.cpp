@@ -104,7 +104,8 @@ void Channels::addStations() {
         if (conduit.kind == ConduitKind::elastic) {
             for (const int cell : stationCells(conduit)) {
                 const double along = alongCell(conduit, cell);
-                stations_.push_back({i, cell, along / conduit.geometry.length_m, along});
+                stations_.push_back({i, cell, model_.rows.firstNode(at(conduit.row)) + at(cell),
+                                     along / conduit.geometry.length_m, along});
             }
             continue;
         }
@@ -115,7 +116,7 @@ void Channels::addStations() {
         std::sort(places.begin(), places.end());
         places.erase(std::unique(places.begin(), places.end()), places.end());
         for (const double along : places) {
-            stations_.push_back({i, -1, along / conduit.geometry.length_m, along});
+            stations_.push_back({i, -1, 0, along / conduit.geometry.length_m, along});
         }
     }
 }
@@ -202,11 +203,10 @@ void Channels::fill(const State& state, double* row) {
     out = fillPoints(state, out);
     const double* head = state.elastic.head_m().data();
     for (const Station& station : stations_) {
-        const auto conduit = at(station.conduit);
         if (station.cell >= 0) {
-            *out++ =
-                head[model_.rows.firstNode(at(model_.conduits[conduit].row)) + at(station.cell)];
+            *out++ = head[station.node];
         } else {
+            const auto conduit = at(station.conduit);
             *out++ = state.startHead_m[conduit]
                      + station.share * (state.endHead_m[conduit] - state.startHead_m[conduit]);
         }

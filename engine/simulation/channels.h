@@ -12,8 +12,9 @@ namespace headroom::simulation {
 /// Where a head along a conduit is taken.
 struct Station {
     int conduit = -1;
-    int cell = -1;      ///< node of the row of cells; −1: between the ends of a conduit without
-    double share = 0.0; ///< of the length
+    int cell = -1;        ///< node of the row of cells; −1: between the ends of a conduit without
+    std::size_t node = 0; ///< of the rows' arrays, where there is a cell
+    double share = 0.0;   ///< of the length
     double along_m = 0.0;
 };
 
