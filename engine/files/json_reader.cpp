@@ -214,8 +214,8 @@ private:
         frame.isObject = isObject;
         if (within(offset)) {
             // The rows of a list have a place, the numbers inside a row share it.
-            const bool inRow = frames_.size() > 1 && !frames_.back().isObject &&
-                               !frames_[frames_.size() - 2].isObject;
+            const bool inRow = frames_.size() > 1 && !frames_.back().isObject
+                               && !frames_[frames_.size() - 2].isObject;
             frame.place = inRow ? nullptr : placeFor(offset);
         }
         frames_.push_back(std::move(frame));
@@ -297,8 +297,8 @@ private:
     std::string wordAround(std::size_t offset) const {
         const auto inWord = [&](std::size_t i) {
             const char letter = text_[i];
-            return (letter >= 'a' && letter <= 'z') || (letter >= 'A' && letter <= 'Z') ||
-                   letter == '-' || letter == '_';
+            return (letter >= 'a' && letter <= 'z') || (letter >= 'A' && letter <= 'Z')
+                   || letter == '-' || letter == '_';
         };
         std::size_t from = offset, to = offset + 1;
         while (inWord(offset) && from > 0 && inWord(from - 1)) {

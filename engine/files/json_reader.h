@@ -15,8 +15,8 @@ inline constexpr std::size_t largestFile_bytes = 64U * 1024U * 1024U;
 
 /// What a JSON text says, and where it says it.
 struct Parsed {
-    plant::Tree tree;      ///< null if nothing could be made of the text
-    plant::Places places;  ///< line and column of keys and of the rows of lists
+    plant::Tree tree;     ///< null if nothing could be made of the text
+    plant::Places places; ///< line and column of keys and of the rows of lists
     Findings findings;
     bool complete = false; ///< the text was read to its end
 };

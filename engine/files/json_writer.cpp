@@ -29,8 +29,8 @@ bool shortArray(const Tree& value) {
     const bool nested = std::any_of(items.begin(), items.end(), [](const Tree& item) {
         return item.isArray() || item.isObject();
     });
-    return !nested || (items.size() <= shortTable &&
-                       std::none_of(items.begin(), items.end(), isThing));
+    return !nested
+           || (items.size() <= shortTable && std::none_of(items.begin(), items.end(), isThing));
 }
 
 class Writer {
@@ -82,9 +82,9 @@ private:
             if (isThing(member)) {
                 ++inner;
                 const bool alone = value.members().size() == 1;
-                if (inner > 1 || value.members().size() > shortObject ||
-                    !onOneLine(member, memberRow, holdsNames(memberRow)) ||
-                    (!alone && holdsThings(member))) {
+                if (inner > 1 || value.members().size() > shortObject
+                    || !onOneLine(member, memberRow, holdsNames(memberRow))
+                    || (!alone && holdsThings(member))) {
                     return false;
                 }
             }
@@ -131,12 +131,22 @@ private:
 
     void writeLine(const Tree& value) {
         switch (value.type()) {
-        case Tree::Type::null: out_ += "null"; return;
-        case Tree::Type::boolean: out_ += value.asBoolean() ? "true" : "false"; return;
-        case Tree::Type::number: out_ += shortest(value.asNumber()); return;
-        case Tree::Type::text: out_ += quoted(value.asText()); return;
-        case Tree::Type::array: return writeList(value);
-        case Tree::Type::object: break;
+        case Tree::Type::null:
+            out_ += "null";
+            return;
+        case Tree::Type::boolean:
+            out_ += value.asBoolean() ? "true" : "false";
+            return;
+        case Tree::Type::number:
+            out_ += shortest(value.asNumber());
+            return;
+        case Tree::Type::text:
+            out_ += quoted(value.asText());
+            return;
+        case Tree::Type::array:
+            return writeList(value);
+        case Tree::Type::object:
+            break;
         }
         out_ += '{';
         bool first = true;

@@ -8,10 +8,11 @@ namespace headroom::files {
 std::span<const Message* const> messages() {
     using namespace say;
     static constexpr std::array all{
-        &notFound, &notReadable, &tooLarge, &truncated, &notJson, &notUtf8, &byteOrderMark,
-        &notANumber, &numberTooLarge, &duplicateKey, &tooDeep, &tableTooLong, &notAProject,
-        &newerFormat, &migrated, &tableOutside, &tableNotFound, &tableNotReadable, &tableRow,
-        &tableHuge, &notWritten, &notReplaced,
+        &notFound,     &notReadable,   &tooLarge,         &truncated,      &notJson,
+        &notUtf8,      &byteOrderMark, &notANumber,       &numberTooLarge, &duplicateKey,
+        &tooDeep,      &tableTooLong,  &notAProject,      &newerFormat,    &migrated,
+        &tableOutside, &tableNotFound, &tableNotReadable, &tableRow,       &tableHuge,
+        &notWritten,   &notReplaced,
     };
     return all;
 }

@@ -48,7 +48,8 @@ Migrated migrate(const plant::Tree& project, std::span<const Migration> chain, i
         Finding note;
         note.message = &say::migrated;
         note.subject = formatKey();
-        note.arguments = {{"from", std::int64_t{migration.from}}, {"to", std::int64_t{format}},
+        note.arguments = {{"from", std::int64_t{migration.from}},
+                          {"to", std::int64_t{format}},
                           {"what", migration.what}};
         out.findings.push_back(std::move(note));
     }

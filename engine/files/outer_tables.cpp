@@ -6,8 +6,8 @@
 
 #include <algorithm>
 #include <cctype>
-#include <charconv>
 #include <cerrno>
+#include <charconv>
 #include <cmath>
 #include <cstring>
 #include <fstream>
@@ -127,12 +127,17 @@ private:
             return inside(row, false, value);
         }
         switch (row.kind) {
-        case FieldKind::table: return loaded(row, value);
-        case FieldKind::keyed: return inside(row, true, value);
-        case FieldKind::patch: return inside(plant::varyingRow(), false, value);
+        case FieldKind::table:
+            return loaded(row, value);
+        case FieldKind::keyed:
+            return inside(row, true, value);
+        case FieldKind::patch:
+            return inside(plant::varyingRow(), false, value);
         case FieldKind::group:
-        case FieldKind::oneOf: return inside(row, false, value);
-        default: return value;
+        case FieldKind::oneOf:
+            return inside(row, false, value);
+        default:
+            return value;
         }
     }
 
@@ -176,7 +181,9 @@ CsvTable readCsvTable(const fs::path& file, const std::string& name, int columns
     }
     std::ifstream in(file, std::ios::binary);
     if (!in) {
-        return {nullptr, {fault(say::tableNotReadable, name, {{"reason", std::string(std::strerror(errno))}})}};
+        return {
+            nullptr,
+            {fault(say::tableNotReadable, name, {{"reason", std::string(std::strerror(errno))}})}};
     }
     auto table = std::make_shared<plant::OuterTable>();
     table->columns = columns;
@@ -190,8 +197,8 @@ CsvTable readCsvTable(const fs::path& file, const std::string& name, int columns
             if (number == 1) {
                 continue; // names of the columns
             }
-            Finding finding = fault(say::tableRow, name,
-                                    {{"line", number}, {"columns", std::int64_t{columns}}});
+            Finding finding =
+                fault(say::tableRow, name, {{"line", number}, {"columns", std::int64_t{columns}}});
             finding.place = FilePlace{name, static_cast<int>(number), 1};
             return {nullptr, {std::move(finding)}};
         }

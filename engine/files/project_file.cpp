@@ -7,6 +7,7 @@
 #include "files/migration.h"
 #include "files/outer_tables.h"
 #include "files/replace_file.h"
+#include "plant/messages.h"
 
 #include <algorithm>
 #include <cerrno>
@@ -46,6 +47,16 @@ void sortByPlace(Findings& findings) {
     };
     std::stable_sort(findings.begin(), findings.end(),
                      [&](const Finding& a, const Finding& b) { return key(a) < key(b); });
+}
+
+/// A table that could not be read is told by its file; that it is not attached says no more.
+void dropEchoes(Findings& findings, const Findings& early) {
+    std::erase_if(findings, [&](const Finding& finding) {
+        return finding.message == &plant::say::tableNotLoaded
+               && std::any_of(early.begin(), early.end(), [&](const Finding& other) {
+                      return other.subject == finding.subject;
+                  });
+    });
 }
 
 } // namespace
@@ -98,6 +109,7 @@ Opened openText(std::string text, const fs::path& folder, const std::string& nam
     opened.tree = withOuterTables(migrated.tree, folder, opened.places, early);
     opened.bound = plant::bind(opened.tree, opened.places);
     auto& all = opened.bound.findings;
+    dropEchoes(all, early);
     all.insert(all.begin(), early.begin(), early.end());
     sortByPlace(all);
     return opened;

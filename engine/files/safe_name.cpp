@@ -6,8 +6,8 @@ namespace headroom::files {
 namespace {
 
 bool isKept(unsigned char letter) {
-    return (letter >= '0' && letter <= '9') || (letter >= 'a' && letter <= 'z') ||
-           (letter >= 'A' && letter <= 'Z') || letter >= 0x80;
+    return (letter >= '0' && letter <= '9') || (letter >= 'a' && letter <= 'z')
+           || (letter >= 'A' && letter <= 'Z') || letter >= 0x80;
 }
 
 std::string small(std::string text) {

@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "plant/project.h"
-
 #include "base/near_miss.h"
 #include "plant/checks.h"
+#include "plant/project.h"
 #include "plant/reader.h"
 #include "plant/walk.h"
 
@@ -59,9 +58,9 @@ void checkPlant(const Plant& plant, const Keyed<Limit>& limits, Report& report) 
 }
 
 bool isAbsence(const Message* message) {
-    return message == &say::missing || message == &say::missingForm || message == &say::noKind ||
-           message == &say::noReach || message == &say::limitWithoutValue ||
-           message == &say::turningNeeds;
+    return message == &say::missing || message == &say::missingForm || message == &say::noKind
+           || message == &say::noReach || message == &say::limitWithoutValue
+           || message == &say::turningNeeds;
 }
 
 std::string argumentText(const Finding& finding, std::string_view name) {
@@ -125,8 +124,8 @@ private:
         const std::string subject = join(report_.subjectOf(path));
         std::vector<std::string> lacking;
         std::erase_if(report_.findings(), [&](const Finding& finding) {
-            const bool inside = finding.subject == subject ||
-                                finding.subject.starts_with(subject + "/");
+            const bool inside =
+                finding.subject == subject || finding.subject.starts_with(subject + "/");
             if (!inside || !isAbsence(finding.message)) {
                 return false;
             }
@@ -160,9 +159,9 @@ private:
             }
             std::vector<std::string> users;
             std::erase_if(report_.findings(), [&](const Finding& finding) {
-                const bool about = (finding.message == &say::undeclared ||
-                                    finding.message == &say::undeclaredNear) &&
-                                   argumentText(finding, "name") == name;
+                const bool about =
+                    (finding.message == &say::undeclared || finding.message == &say::undeclaredNear)
+                    && argumentText(finding, "name") == name;
                 if (about) {
                     users.push_back(finding.subject);
                 }
@@ -175,8 +174,8 @@ private:
                 for (const auto& user : users) {
                     related.push_back(split(user));
                 }
-                report_.add(say::removedButUsed, path,
-                            {{"name", name}, {"users", listed(users)}}, related);
+                report_.add(say::removedButUsed, path, {{"name", name}, {"users", listed(users)}},
+                            related);
             }
         }
     }
@@ -218,8 +217,14 @@ Variant optionVariant(const Tree& project, const std::string& name, const Tree& 
     return out;
 }
 
-/// What tells one finding from another: its text without the option it was found in.
-std::string essence(const Finding& finding) {
+/// What tells one finding from another: its text with the subject as the base would name it.
+std::string essence(Finding finding, const std::string& option) {
+    Path changes = pathOf(Collection::options);
+    changes.insert(changes.end(), {option, std::string(changesKey())});
+    const std::string prefix = join(changes) + "/";
+    if (!option.empty() && finding.subject.starts_with(prefix)) {
+        finding.subject.erase(0, prefix.size());
+    }
     return std::string(finding.message->code) + "\n" + text(finding);
 }
 
@@ -231,7 +236,8 @@ Bound bind(const Tree& tree, const Places& places) {
     Report report(places);
     if (!tree.isObject()) {
         report.add(say::mistyped, {},
-                   {{"key", std::string("project")}, {"found", std::string("no object")},
+                   {{"key", std::string("project")},
+                    {"found", std::string("no object")},
                     {"wanted", std::string("an object in braces")}});
         bound.findings = std::move(report.findings());
         return bound;
@@ -245,7 +251,7 @@ Bound bind(const Tree& tree, const Places& places) {
 
     std::set<std::string> told;
     for (const auto& finding : bound.findings) {
-        told.insert(essence(finding));
+        told.insert(essence(finding, ""));
     }
     for (const auto& [name, changes] : changesIn(tree)) {
         if (changes == nullptr) {
@@ -253,7 +259,7 @@ Bound bind(const Tree& tree, const Places& places) {
         }
         auto variant = optionVariant(tree, name, *changes, names, places);
         for (auto& finding : variant.findings) {
-            if (told.count(essence(finding)) == 0) {
+            if (told.count(essence(finding, name)) == 0) {
                 bound.findings.push_back(std::move(finding));
             }
         }

@@ -26,6 +26,12 @@ std::optional<Ends> endsOf(const Plant& plant, const Conduit& conduit) {
                 plant.points[conduit.to.index].chainage_m};
 }
 
+double distance_m(const std::pair<double, double>& a, const std::pair<double, double>& b) {
+    const double across_m = b.first - a.first;
+    const double up_m = b.second - a.second;
+    return std::sqrt(across_m * across_m + up_m * up_m);
+}
+
 void checkLength(const Plant& plant, const Conduit& conduit, const Path& at, Report& report) {
     const auto axis = axisOf(plant, conduit);
     if (!conduit.length_m || axis.empty()) {
@@ -33,11 +39,9 @@ void checkLength(const Plant& plant, const Conduit& conduit, const Path& at, Rep
     }
     double drawn_m = 0.0;
     for (std::size_t i = 1; i < axis.size(); ++i) {
-        drawn_m += std::hypot(axis[i].first - axis[i - 1].first,
-                              axis[i].second - axis[i - 1].second);
+        drawn_m += distance_m(axis[i - 1], axis[i]);
     }
-    const double straight_m = std::hypot(axis.back().first - axis.front().first,
-                                         axis.back().second - axis.front().second);
+    const double straight_m = distance_m(axis.front(), axis.back());
     const auto length = [](double value_m) { return amount(Quantity::length, value_m); };
     Path path = at;
     path.emplace_back("length_m");
@@ -67,8 +71,10 @@ void checkReaches(const Conduit& conduit, Ends ends, const Path& at, Report& rep
         }
         if (!(*reach.to_m > from_m) || *reach.to_m > ends.to_m) {
             report.add(say::reachEnd, path,
-                       {{"name", name}, {"value", chainage(*reach.to_m)},
-                        {"from", chainage(from_m)}, {"to", chainage(ends.to_m)}});
+                       {{"name", name},
+                        {"value", chainage(*reach.to_m)},
+                        {"from", chainage(from_m)},
+                        {"to", chainage(ends.to_m)}});
             return;
         }
         if (last && *reach.to_m < ends.to_m) {
@@ -102,7 +108,8 @@ void checkConduit(const Plant& plant, int index, Report& report) {
     for (const auto& corner : conduit.axis) {
         if (!(corner.first > ends->from_m) || !(corner.first < ends->to_m)) {
             report.add(say::cornerOutside, axis,
-                       {{"value", chainage(corner.first)}, {"from", chainage(ends->from_m)},
+                       {{"value", chainage(corner.first)},
+                        {"from", chainage(ends->from_m)},
                         {"to", chainage(ends->to_m)}});
         }
     }
@@ -113,8 +120,10 @@ void checkConduit(const Plant& plant, int index, Report& report) {
             Path path = at;
             path.insert(path.end(), {"losses", name, "chainage_m"});
             report.add(say::placeOutside, path,
-                       {{"value", chainage(loss.chainage_m)}, {"name", at.back()},
-                        {"from", chainage(ends->from_m)}, {"to", chainage(ends->to_m)}});
+                       {{"value", chainage(loss.chainage_m)},
+                        {"name", at.back()},
+                        {"from", chainage(ends->from_m)},
+                        {"to", chainage(ends->to_m)}});
         }
     }
 }

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "plant/checks.h"
-
 #include "plant/rows.h"
 
 #include <algorithm>
@@ -32,8 +31,10 @@ void checkOrder(const Limit& limit, const ClassValues& values, bool upper, const
             const double other = *values[static_cast<std::size_t>(milder)];
             if (upper ? *value < other : *value > other) {
                 report.add(say::classOrder, at,
-                           {{"class", className(i)}, {"value", amount(quantity, *value)},
-                            {"milder", className(milder)}, {"other", amount(quantity, other)}});
+                           {{"class", className(i)},
+                            {"value", amount(quantity, *value)},
+                            {"milder", className(milder)},
+                            {"other", amount(quantity, other)}});
             }
         }
         milder = i;
@@ -47,7 +48,8 @@ void checkSides(const Limit& limit, const Path& at, Report& report) {
         const auto& greatest = limit.greatest[static_cast<std::size_t>(i)];
         if (least && greatest && *least > *greatest) {
             report.add(say::leastAboveGreatest, at,
-                       {{"class", className(i)}, {"least", amount(quantity, *least)},
+                       {{"class", className(i)},
+                        {"least", amount(quantity, *least)},
                         {"greatest", amount(quantity, *greatest)}});
         }
     }
@@ -58,8 +60,9 @@ void checkPlace(const Plant& plant, const Limit& limit, const Path& at, Report& 
         return;
     }
     const auto axis = axisOf(plant, plant.conduits[limit.at.thing.index]);
-    if (axis.empty() || (limit.at.chainage_m >= axis.front().first &&
-                         limit.at.chainage_m <= axis.back().first)) {
+    if (axis.empty()
+        || (limit.at.chainage_m >= axis.front().first
+            && limit.at.chainage_m <= axis.back().first)) {
         return;
     }
     Path path = at;

@@ -12,8 +12,8 @@ namespace {
 class Islands {
 public:
     explicit Islands(const Plant& plant)
-        : points_(plant.points.size()), parent_(static_cast<std::size_t>(
-                                            plant.points.size() + plant.reservoirs.size())) {
+        : points_(plant.points.size()),
+          parent_(static_cast<std::size_t>(plant.points.size() + plant.reservoirs.size())) {
         std::iota(parent_.begin(), parent_.end(), 0);
         for (const auto& item : plant.conduits) {
             join(item.second.from, item.second.to);
@@ -88,8 +88,8 @@ void checkUnitEnds(const Plant& plant, const std::vector<int>& water, Report& re
         const std::pair<const char*, const Reference*> sides[] = {{"from", &unit.from},
                                                                   {"to", &unit.to}};
         for (const auto& [key, side] : sides) {
-            const bool dry = side->resolved() && side->collection == Collection::points &&
-                             water[static_cast<std::size_t>(side->index)] == 0;
+            const bool dry = side->resolved() && side->collection == Collection::points
+                             && water[static_cast<std::size_t>(side->index)] == 0;
             if (dry) {
                 report.add(say::unitNotConnected, {"plant", "units", plant.units.name(i), key},
                            {{"side", std::string(side == &unit.from ? "inlet" : "outlet")},

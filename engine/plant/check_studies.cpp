@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "plant/checks.h"
-
 #include "base/overloaded.h"
+#include "plant/checks.h"
 
 #include <algorithm>
 
@@ -88,10 +87,11 @@ void checkLevels(const Plant& plant, const Study& study, const Path& at, Report&
             report.add(say::levelBelowIntake, path,
                        {{"level", level(level_m)},
                         {"axis", level(plant.points[reservoir.at.index].elevation_m)}});
-        } else if (level_m < reservoir.lowest_m.value_or(level_m) ||
-                   level_m > reservoir.highest_m.value_or(level_m)) {
+        } else if (level_m < reservoir.lowest_m.value_or(level_m)
+                   || level_m > reservoir.highest_m.value_or(level_m)) {
             report.add(say::startOutside, path,
-                       {{"name", thing.name}, {"level", level(level_m)},
+                       {{"name", thing.name},
+                        {"level", level(level_m)},
                         {"low", level(reservoir.lowest_m.value_or(level_m))},
                         {"high", level(reservoir.highest_m.value_or(level_m))}});
         }
@@ -105,8 +105,10 @@ void checkLevels(const Plant& plant, const Study& study, const Path& at, Report&
             Path path = at;
             path.insert(path.end(), {"start", "chamberLevels_m", thing.name});
             report.add(say::chamberOutside, path,
-                       {{"name", thing.name}, {"level", level(level_m)},
-                        {"low", level(shape.floor_m())}, {"high", level(shape.rim_m())}});
+                       {{"name", thing.name},
+                        {"level", level(level_m)},
+                        {"low", level(shape.floor_m())},
+                        {"high", level(shape.rim_m())}});
         }
     }
 }
@@ -142,9 +144,9 @@ std::string unfit(const Plant& plant, const EventKind& kind) {
                    },
                    [&](const OpeningOrder& order) -> std::string {
                        const auto* kindOf = turbine(order.unit);
-                       const bool gate = kindOf == nullptr ||
-                                         std::holds_alternative<FrancisTurbine>(*kindOf) ||
-                                         std::holds_alternative<OrificeUnit>(*kindOf);
+                       const bool gate = kindOf == nullptr
+                                         || std::holds_alternative<FrancisTurbine>(*kindOf)
+                                         || std::holds_alternative<OrificeUnit>(*kindOf);
                        return gate ? "" : "this kind of unit has no gate.";
                    },
                    [](const auto&) -> std::string { return ""; }},

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "plant/checks.h"
-
 #include "base/constants.h"
+#include "plant/checks.h"
 
 #include <cmath>
 
@@ -27,14 +26,14 @@ void checkInertia(const Unit& unit, double speed_rads, const Path& at, Report& r
     path.insert(path.end(), {"inertia", "j_tm2"});
     const bool gd2 = ratio > leastGd2 && ratio < mostGd2;
     report.add(gd2 ? say::inertiaIsGd2 : say::inertiaUnusual, path,
-               {{"value", inertia(*unit.inertia_kgm2)}, {"trend", inertia(trend_kgm2)},
+               {{"value", inertia(*unit.inertia_kgm2)},
+                {"trend", inertia(trend_kgm2)},
                 {"quarter", inertia(*unit.inertia_kgm2 / 4.0)},
                 {"rating", amount(Quantity::apparentPower, unit.generator->rated_VA)},
                 {"speed", amount(Quantity::rotation, speed_rads)}});
 }
 
-void checkFrancis(const Unit& unit, const FrancisTurbine& turbine, const Path& at,
-                  Report& report) {
+void checkFrancis(const Unit& unit, const FrancisTurbine& turbine, const Path& at, Report& report) {
     const auto needs = [&](bool there, const char* key, const char* label) {
         if (!there) {
             report.add(say::turningNeeds, at,
@@ -45,8 +44,8 @@ void checkFrancis(const Unit& unit, const FrancisTurbine& turbine, const Path& a
     needs(unit.generator.has_value(), "generator", "rating of the generator");
     needs(unit.servo.has_value(), "servo", "rates of the gate");
     // The water's power with the standard gravity; 2 % for colder water and higher places.
-    const double water_W = 1000.0 * constants::gravity_mps2 * turbine.ratedHead_m *
-                           turbine.ratedFlow_m3s;
+    const double water_W =
+        1000.0 * constants::gravity_mps2 * turbine.ratedHead_m * turbine.ratedFlow_m3s;
     if (turbine.ratedPower_W > 1.02 * water_W) {
         Path path = at;
         path.insert(path.end(), {"turbine", "francis", "ratedPower_MW"});

@@ -47,9 +47,9 @@ void checkReservoir(const Plant& plant, int index, Report& report) {
     const double low_m = reservoir.lowest_m.value_or(reservoir.level_m);
     const double high_m = reservoir.highest_m.value_or(reservoir.level_m);
     if (reservoir.level_m < low_m || reservoir.level_m > high_m) {
-        report.add(say::levelOutside, below("level_m"),
-                   {{"level", level(reservoir.level_m)}, {"low", level(low_m)},
-                    {"high", level(high_m)}});
+        report.add(
+            say::levelOutside, below("level_m"),
+            {{"level", level(reservoir.level_m)}, {"low", level(low_m)}, {"high", level(high_m)}});
     }
 }
 

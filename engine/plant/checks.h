@@ -9,7 +9,7 @@
 namespace headroom::plant {
 
 void checkConduits(const Plant& plant, Report& report);
-void checkWaters(const Plant& plant, Report& report);  ///< reservoirs and chambers
+void checkWaters(const Plant& plant, Report& report); ///< reservoirs and chambers
 void checkUnits(const Plant& plant, Report& report);
 void checkNetwork(const Plant& plant, Report& report);
 void checkLimits(const Plant& plant, const Keyed<Limit>& limits, Report& report);

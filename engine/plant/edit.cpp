@@ -38,8 +38,9 @@ void forEachKey(const Path& path, Visit visit) {
     Path parent;
     for (const auto& key : path) {
         const Field* owner = ownerAt(parent);
-        const bool isName = owner != nullptr && owner->kind == FieldKind::keyed &&
-                            (parent.empty() || fieldAt(Path(parent.begin(), parent.end() - 1)) != owner);
+        const bool isName =
+            owner != nullptr && owner->kind == FieldKind::keyed
+            && (parent.empty() || fieldAt(Path(parent.begin(), parent.end() - 1)) != owner);
         if (owner != nullptr && !isName) {
             visit(parent, *owner, key);
         }
@@ -99,8 +100,8 @@ Tree editedChanges(const Tree& base, const Tree& before, const Path& path, const
 Path changesPath(const Tree& project, int option) {
     const Path owner = pathOf(Collection::options);
     const Tree* options = project.at(owner);
-    ensure(options != nullptr && option >= 0 &&
-               static_cast<std::size_t>(option) < options->members().size(),
+    ensure(options != nullptr && option >= 0
+               && static_cast<std::size_t>(option) < options->members().size(),
            "the option in the hand exists");
     Path path = below(owner, options->members()[static_cast<std::size_t>(option)].first);
     return below(path, changesKey());
@@ -134,13 +135,17 @@ Tree orderedMember(const Field& row, const Tree& value) {
         return value;
     }
     switch (row.kind) {
-    case FieldKind::keyed: return orderedNames(row, value);
-    case FieldKind::patch: return orderedBy(varyingRow(), value);
+    case FieldKind::keyed:
+        return orderedNames(row, value);
+    case FieldKind::patch:
+        return orderedBy(varyingRow(), value);
     case FieldKind::group:
     case FieldKind::oneOf:
     case FieldKind::location:
-    case FieldKind::number: return orderedBy(row, value);
-    default: return value;
+    case FieldKind::number:
+        return orderedBy(row, value);
+    default:
+        return value;
     }
 }
 

@@ -11,28 +11,41 @@ namespace {
 using namespace rows;
 
 RowsOf<Option> optionRows() {
-    auto changes = bound(FieldKind::patch, {"changes", "Changes",
-        "What the option changes in site, plant and limits, as a merge patch: null removes."}, access(&Option::changes));
+    auto changes = bound(
+        FieldKind::patch,
+        {"changes", "Changes",
+         "What the option changes in site, plant and limits, as a merge patch: null removes."},
+        access(&Option::changes));
     return {
         text(&Option::about, {"about", "About", "What the option is, in words."}),
-        number(&Option::cost_M, Quantity::money, {"cost_M", "Cost", "Cost in millions of the user's currency."}).range(-1e6, 1e6).uncounted(),
-        group(&Option::source, sourceRows(), {"source", "Source", "Where the option comes from."}).uncounted().withoutCommons(),
+        number(&Option::cost_M, Quantity::money,
+               {"cost_M", "Cost", "Cost in millions of the user's currency."})
+            .range(-1e6, 1e6)
+            .uncounted(),
+        group(&Option::source, sourceRows(), {"source", "Source", "Where the option comes from."})
+            .uncounted()
+            .withoutCommons(),
         std::move(changes).uncounted(),
     };
 }
 
 RowsOf<Numerics> numericsRows() {
-    return {number(&Numerics::longestStep_s, Quantity::time, {"longestStep_s", "Longest step",
-        "Cap of the plant's time step; the step is chosen from the waterway below it."}).range(1e-5, 1).usual(0.001, 0.05)};
+    return {number(&Numerics::longestStep_s, Quantity::time,
+                   {"longestStep_s", "Longest step",
+                    "Cap of the plant's time step; the step is chosen from the waterway below it."})
+                .range(1e-5, 1)
+                .usual(0.001, 0.05)};
 }
 
 /// The base's name stands in a group of its own but belongs to the project.
 RowsOf<Project> baseRows() {
-    return {text(&Project::baseName, {"name", "Name of the base", "Name of the plant without any option, the first column."})};
+    return {text(&Project::baseName, {"name", "Name of the base",
+                                      "Name of the plant without any option, the first column."})};
 }
 
 Row<Project> formatRow() {
-    auto row = bare<Project>(FieldKind::whole, {"headroom", "Format", "Number of this file format."});
+    auto row =
+        bare<Project>(FieldKind::whole, {"headroom", "Format", "Number of this file format."});
     row.field.hard = Range{1, 1e6};
     return std::move(row).needed().uncounted();
 }
@@ -47,12 +60,22 @@ RowsOf<Project> describedRows() {
     return {
         formatRow(),
         text(&Project::title, {"title", "Title", "What the project is called."}),
-        group(&Project::site, siteRows(), {"site", "Site", "What holds for the whole plant: datum, water, air."}).varies(),
+        group(&Project::site, siteRows(),
+              {"site", "Site", "What holds for the whole plant: datum, water, air."})
+            .varies(),
         identity(baseRows(), {"base", "Base", "The plant without any option."}).uncounted(),
-        group(&Project::plant, plantRows(), {"plant", "Plant", "The plant as it is."}).needed().varies(),
-        keyed(&Project::limits, Collection::limits, limitRows(), {"limits", "Limits", "Bounds that the plant's owner, makers and authorities set."}).uncounted().varies(),
-        keyed(&Project::options, Collection::options, optionRows(), {"options", "Options", "Named changes of the plant that are compared with the base."}).uncounted(),
-        keyed(&Project::studies, Collection::studies, studyRows(), {"studies", "Studies", "Starts and events that every option is run through."}),
+        group(&Project::plant, plantRows(), {"plant", "Plant", "The plant as it is."})
+            .needed()
+            .varies(),
+        keyed(&Project::limits, Collection::limits, limitRows(),
+              {"limits", "Limits", "Bounds that the plant's owner, makers and authorities set."})
+            .uncounted()
+            .varies(),
+        keyed(&Project::options, Collection::options, optionRows(),
+              {"options", "Options", "Named changes of the plant that are compared with the base."})
+            .uncounted(),
+        keyed(&Project::studies, Collection::studies, studyRows(),
+              {"studies", "Studies", "Starts and events that every option is run through."}),
     };
 }
 
@@ -62,13 +85,19 @@ RowsOf<Project> besideRows() {
         reserved<Project>({"products", "Products", "Reserved for reserve products."}),
         reserved<Project>({"ranges", "Ranges", "Reserved for ranges of uncertain inputs."}),
         reserved<Project>({"recordings", "Recordings", "Reserved for recordings of the plant."}),
-        reserved<Project>({"dispositions", "Dispositions", "Reserved for what was decided about a verdict."}),
+        reserved<Project>(
+            {"dispositions", "Dispositions", "Reserved for what was decided about a verdict."}),
         reserved<Project>({"prices", "Prices", "Reserved for prices."}),
-        group(&Project::numerics, numericsRows(), {"numerics", "Numerics", "Settings of the computation."}),
-        table(&Project::ground, {
-            risingColumn("chainage_m", "Chainage", Quantity::chainage, -longestChainage_m, longestChainage_m),
-            column("elevation_m", "Elevation", Quantity::elevation, lowestLevel_m, highestLevel_m)},
-            {"ground", "Ground line", "Surface of the ground above the waterway, for the drawing."}).uncounted(),
+        group(&Project::numerics, numericsRows(),
+              {"numerics", "Numerics", "Settings of the computation."}),
+        table(
+            &Project::ground,
+            {risingColumn("chainage_m", "Chainage", Quantity::chainage, -longestChainage_m,
+                          longestChainage_m),
+             column("elevation_m", "Elevation", Quantity::elevation, lowestLevel_m,
+                    highestLevel_m)},
+            {"ground", "Ground line", "Surface of the ground above the waterway, for the drawing."})
+            .uncounted(),
         reserved<Project>({"underlay", "Underlay", "Reserved for a drawing behind the section."}),
         reserved<Project>({"notes", "Notes", "Reserved for notes on the whole project."}),
     };
@@ -81,12 +110,15 @@ struct Unowned {
 
 Fields makeCommonFields() {
     auto note = bare<Unowned>(FieldKind::text, {"note", "Note", "A remark, in words."});
-    auto source = bare<Unowned>(FieldKind::group, {"source", "Source", "Document and author of these numbers."});
+    auto source = bare<Unowned>(FieldKind::group,
+                                {"source", "Source", "Document and author of these numbers."});
     source.field.fields = sourceRows().fields;
     for (auto& field : source.field.fields) {
         field.binding = {};
     }
-    return RowsOf<Unowned>{std::move(note).uncounted(), std::move(source).uncounted().withoutCommons()}.fields;
+    return RowsOf<Unowned>{std::move(note).uncounted(),
+                           std::move(source).uncounted().withoutCommons()}
+        .fields;
 }
 
 } // namespace
@@ -199,8 +231,8 @@ const Field* fieldAt(const Path& path) {
         if (here == nullptr || (nameNext && here->kind == FieldKind::numbers)) {
             return nullptr;
         }
-        nameNext = here != &owner && (here->kind == FieldKind::keyed ||
-                                      here->kind == FieldKind::numbers);
+        nameNext =
+            here != &owner && (here->kind == FieldKind::keyed || here->kind == FieldKind::numbers);
     }
     return here == &projectRow() ? nullptr : here;
 }

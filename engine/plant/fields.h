@@ -20,10 +20,10 @@
 namespace headroom::plant {
 
 enum class FieldKind {
-    number,     ///< with quantity, hard range, usual range; with `fields`, may instead be a group
-    whole,      ///< whole number
-    truth,      ///< true or false
-    choice,     ///< one of `choices`
+    number, ///< with quantity, hard range, usual range; with `fields`, may instead be a group
+    whole,  ///< whole number
+    truth,  ///< true or false
+    choice, ///< one of `choices`
     text,
     reference,  ///< a name out of `collections`
     references, ///< several names out of `collections`
@@ -47,9 +47,9 @@ struct Range {
 struct Column {
     std::string_view key, label;
     Quantity quantity;
-    Range hard;                ///< SI
-    bool rising = false;       ///< strictly
-    bool falling = false;      ///< strictly
+    Range hard;           ///< SI
+    bool rising = false;  ///< strictly
+    bool falling = false; ///< strictly
 };
 
 struct Field;
@@ -79,9 +79,9 @@ struct Binding {
 /// One row. Only the members that its kind uses are set.
 struct Field {
     FieldKind kind = FieldKind::number;
-    std::string_view key;       ///< in the file, ends in the unit
-    std::string_view label;     ///< for people
-    std::string_view help;      ///< what it is; never empty
+    std::string_view key;   ///< in the file, ends in the unit
+    std::string_view label; ///< for people
+    std::string_view help;  ///< what it is; never empty
     Quantity quantity = Quantity::factor;
     std::optional<Range> hard;  ///< outside: error
     std::optional<Range> usual; ///< outside: warning, with `usualSource`
@@ -96,9 +96,9 @@ struct Field {
     std::vector<Collection> collections;
     Collection declares = Collection::none; ///< of a keyed row whose names can be referred to
     std::vector<Column> columns;
-    int leastRows = 2;              ///< of a table
-    Fields fields;                  ///< of a group, oneOf, keyed, location, number with a group
-    std::vector<Fields> forms;      ///< of an eitherOf
+    int leastRows = 2;         ///< of a table
+    Fields fields;             ///< of a group, oneOf, keyed, location, number with a group
+    std::vector<Fields> forms; ///< of an eitherOf
     Binding binding;
 };
 

@@ -5,10 +5,10 @@
 #include "plant/project.h"
 #include "plant/walk.h"
 
+#include <fmt/format.h>
 #include <xxhash.h>
 
 #include <cstring>
-#include <fmt/format.h>
 
 namespace headroom::plant {
 
@@ -59,31 +59,30 @@ private:
             return;
         }
         addText(row.key);
-        std::visit(
-            overloaded{[&](double one) { addNumber(one); },
-                       [&](bool truth) { addNumber(truth ? 1.0 : 0.0); },
-                       [&](int choice) { addNumber(choice); },
-                       [&](const std::string& text) { addText(text); },
-                       [&](const Reference& thing) { addReference(thing); },
-                       [&](const std::vector<Reference>& things) {
-                           for (const auto& thing : things) {
-                               addReference(thing);
-                           }
-                       },
-                       [&](const Location& location) {
-                           addReference(location.thing);
-                           addNumber(location.alongConduit ? location.chainage_m : 0.0);
-                       },
-                       [&](const TableRows& rows) { addPairs(rows); },
-                       [&](const Interval& interval) { addPairs({interval}); },
-                       [&](const NamedNumbers& numbers) {
-                           for (const auto& [thing, one] : numbers) {
-                               addReference(thing);
-                               addNumber(one);
-                           }
-                       },
-                       [](const Tree&) {}},
-            *value);
+        std::visit(overloaded{[&](double one) { addNumber(one); },
+                              [&](bool truth) { addNumber(truth ? 1.0 : 0.0); },
+                              [&](int choice) { addNumber(choice); },
+                              [&](const std::string& text) { addText(text); },
+                              [&](const Reference& thing) { addReference(thing); },
+                              [&](const std::vector<Reference>& things) {
+                                  for (const auto& thing : things) {
+                                      addReference(thing);
+                                  }
+                              },
+                              [&](const Location& location) {
+                                  addReference(location.thing);
+                                  addNumber(location.alongConduit ? location.chainage_m : 0.0);
+                              },
+                              [&](const TableRows& rows) { addPairs(rows); },
+                              [&](const Interval& interval) { addPairs({interval}); },
+                              [&](const NamedNumbers& numbers) {
+                                  for (const auto& [thing, one] : numbers) {
+                                      addReference(thing);
+                                      addNumber(one);
+                                  }
+                              },
+                              [](const Tree&) {}},
+                   *value);
     }
     void addPairs(const TableRows& rows) {
         addNumber(static_cast<double>(rows.size()));

@@ -22,9 +22,13 @@ public:
     auto begin() { return items_.begin(); }
     auto end() { return items_.end(); }
 
-    const Value& operator[](int index) const { return items_[static_cast<std::size_t>(index)].second; }
+    const Value& operator[](int index) const {
+        return items_[static_cast<std::size_t>(index)].second;
+    }
     Value& operator[](int index) { return items_[static_cast<std::size_t>(index)].second; }
-    const std::string& name(int index) const { return items_[static_cast<std::size_t>(index)].first; }
+    const std::string& name(int index) const {
+        return items_[static_cast<std::size_t>(index)].first;
+    }
 
     /// Index of a name, or -1.
     int indexOf(std::string_view name) const {

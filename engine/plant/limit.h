@@ -33,16 +33,16 @@ struct Allowance {
 /// `"Shaft, lowest": {"level": {"at": "Surge shaft", "min_m": {"normal": 460}}, …}`.
 struct Limit {
     Measure measure = Measure::level;
-    Location at;                  ///< not given for grid measures
-    bool wholeConduit = false;    ///< `pressureHead` along a whole conduit (worst chainage)
-    ClassValues least, greatest;  ///< either or both sides
-    double reserve = 0.0;         ///< R ≥ 0 [SI of the measure]
-    double modelUncertainty = 0.0;///< U_mod ≥ 0 declared by the user [SI of the measure]
+    Location at;                   ///< not given for grid measures
+    bool wholeConduit = false;     ///< `pressureHead` along a whole conduit (worst chainage)
+    ClassValues least, greatest;   ///< either or both sides
+    double reserve = 0.0;          ///< R ≥ 0 [SI of the measure]
+    double modelUncertainty = 0.0; ///< U_mod ≥ 0 declared by the user [SI of the measure]
     Allowance allowance;
     TimeRule timeRule = TimeRule::momentary;
     double allowed_s = 0.0;
     std::string consequence;
-    Source source;                ///< a limit without author and document is unsigned
+    Source source; ///< a limit without author and document is unsigned
 };
 
 } // namespace headroom::plant

@@ -38,14 +38,14 @@ std::vector<char32_t> codePoints(const std::string& text) {
 bool printable(char32_t point) {
     const bool control = point < 0x20 || (point >= 0x7F && point < 0xA0);
     const bool separator = point == 0x2028 || point == 0x2029;
-    const bool direction = (point >= 0x200B && point <= 0x200F) ||
-                           (point >= 0x202A && point <= 0x202E) || point == 0xFEFF;
+    const bool direction = (point >= 0x200B && point <= 0x200F)
+                           || (point >= 0x202A && point <= 0x202E) || point == 0xFEFF;
     return !control && !separator && !direction;
 }
 
 bool blank(char32_t point) {
-    return point == 0x20 || point == 0xA0 || point == 0x3000 ||
-           (point >= 0x2000 && point <= 0x200A);
+    return point == 0x20 || point == 0xA0 || point == 0x3000
+           || (point >= 0x2000 && point <= 0x200A);
 }
 
 Path thingPath(Collection collection, const std::string& name) {
@@ -175,8 +175,8 @@ void checkUnique(const Names& names, Report& report) {
                            {{"name", name}, {"first", join(first.path)}, {"second", join(path)}},
                            {first.path});
             } else {
-                report.add(say::nameDiffersInCase, path,
-                           {{"name", name}, {"other", first.name}}, {first.path});
+                report.add(say::nameDiffersInCase, path, {{"name", name}, {"other", first.name}},
+                           {first.path});
             }
         }
     }

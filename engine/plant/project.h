@@ -34,7 +34,7 @@ struct Variant {
     Site site;
     Plant plant;
     Keyed<Limit> limits;
-    Tree tree;        ///< {site, plant, limits} after the patch
+    Tree tree; ///< {site, plant, limits} after the patch
     Findings findings;
     bool usable() const { return !anyError(findings); }
 };

@@ -3,6 +3,7 @@
 
 #include "base/near_miss.h"
 
+#include <algorithm>
 #include <cmath>
 
 namespace headroom::plant {
@@ -11,12 +12,18 @@ namespace {
 
 std::string foundText(const Tree& value) {
     switch (value.type()) {
-    case Tree::Type::null: return "null";
-    case Tree::Type::boolean: return "true or false";
-    case Tree::Type::number: return "a number";
-    case Tree::Type::text: return "a text";
-    case Tree::Type::array: return "a list";
-    case Tree::Type::object: return "an object";
+    case Tree::Type::null:
+        return "null";
+    case Tree::Type::boolean:
+        return "true or false";
+    case Tree::Type::number:
+        return "a number";
+    case Tree::Type::text:
+        return "a text";
+    case Tree::Type::array:
+        return "a list";
+    case Tree::Type::object:
+        return "an object";
     }
     throw Bug("a value has a type");
 }
@@ -28,17 +35,28 @@ std::string numberText(const Field& row) {
 
 std::string wantedText(const Field& row) {
     switch (row.kind) {
-    case FieldKind::number: return numberText(row);
-    case FieldKind::whole: return "a whole number";
-    case FieldKind::truth: return "true or false";
-    case FieldKind::choice: return "one of its choices in quotes";
-    case FieldKind::text: return "a text in quotes";
-    case FieldKind::reference: return "a name in quotes";
-    case FieldKind::references: return "a list of names in quotes";
-    case FieldKind::location: return "a name in quotes, or a conduit and a chainage in braces";
-    case FieldKind::table: return "a list of rows, or the name of a CSV file in braces";
-    case FieldKind::interval: return "a list of two numbers";
-    default: return "an object in braces";
+    case FieldKind::number:
+        return numberText(row);
+    case FieldKind::whole:
+        return "a whole number";
+    case FieldKind::truth:
+        return "true or false";
+    case FieldKind::choice:
+        return "one of its choices in quotes";
+    case FieldKind::text:
+        return "a text in quotes";
+    case FieldKind::reference:
+        return "a name in quotes";
+    case FieldKind::references:
+        return "a list of names in quotes";
+    case FieldKind::location:
+        return "a name in quotes, or a conduit and a chainage in braces";
+    case FieldKind::table:
+        return "a list of rows, or the name of a CSV file in braces";
+    case FieldKind::interval:
+        return "a list of two numbers";
+    default:
+        return "an object in braces";
     }
 }
 
@@ -92,18 +110,30 @@ void Reader::readGroup(const Field& owner, const Tree& tree, void* object) {
 
 void Reader::readMember(const Field& row, const Tree& value, void* object) {
     switch (row.kind) {
-    case FieldKind::number: return readNumber(row, value, object);
-    case FieldKind::whole: return readWhole(row, value, object);
-    case FieldKind::choice: return readChoice(row, value, object);
-    case FieldKind::references: return readReferences(row, value, object);
-    case FieldKind::location: return readLocation(row, value, object);
-    case FieldKind::table: return readTable(row, value, object);
-    case FieldKind::interval: return readInterval(row, value, object);
-    case FieldKind::keyed: return readKeyed(row, value, object);
-    case FieldKind::numbers: return readNumbers(row, value, object);
-    case FieldKind::free: return;
-    case FieldKind::eitherOf: throw Bug("an either-of is not a key");
-    default: return readInner(row, value, object);
+    case FieldKind::number:
+        return readNumber(row, value, object);
+    case FieldKind::whole:
+        return readWhole(row, value, object);
+    case FieldKind::choice:
+        return readChoice(row, value, object);
+    case FieldKind::references:
+        return readReferences(row, value, object);
+    case FieldKind::location:
+        return readLocation(row, value, object);
+    case FieldKind::table:
+        return readTable(row, value, object);
+    case FieldKind::interval:
+        return readInterval(row, value, object);
+    case FieldKind::keyed:
+        return readKeyed(row, value, object);
+    case FieldKind::numbers:
+        return readNumbers(row, value, object);
+    case FieldKind::free:
+        return;
+    case FieldKind::eitherOf:
+        throw Bug("an either-of is not a key");
+    default:
+        return readInner(row, value, object);
     }
 }
 
@@ -124,10 +154,14 @@ void Reader::readInner(const Field& row, const Tree& value, void* object) {
         return;
     }
     switch (row.kind) {
-    case FieldKind::truth: return row.binding.set(object, value.asBoolean());
-    case FieldKind::text: return row.binding.set(object, value.asText());
-    case FieldKind::reference: return row.binding.set(object, resolve(row, value.asText()));
-    default: return row.binding.set(object, value);
+    case FieldKind::truth:
+        return row.binding.set(object, value.asBoolean());
+    case FieldKind::text:
+        return row.binding.set(object, value.asText());
+    case FieldKind::reference:
+        return row.binding.set(object, resolve(row, value.asText()));
+    default:
+        return row.binding.set(object, value);
     }
 }
 
@@ -136,13 +170,16 @@ void Reader::readKeyed(const Field& row, const Tree& value, void* object) {
         return tellMistyped(row, value);
     }
     const bool lackedBefore = mayLack_;
-    mayLack_ = mayLack_ || row.declares == Collection::limits ||
-               row.declares == Collection::studies;
+    mayLack_ =
+        mayLack_ || row.declares == Collection::limits || row.declares == Collection::studies;
     const auto names = namesIn(value);
     if (row.declares == Collection::events) {
         names_.declare(Collection::events, names);
     }
-    checkCase(names, path_, report_);
+    const auto& shared = plantCollections(); // looked at together, see checkUnique
+    if (std::find(shared.begin(), shared.end(), row.declares) == shared.end()) {
+        checkCase(names, path_, report_);
+    }
     for (const auto& [name, thing] : value.members()) {
         const Deeper deeper(path_, name);
         checkName(name, path_, report_);
@@ -151,7 +188,8 @@ void Reader::readKeyed(const Field& row, const Tree& value, void* object) {
             report_.add(say::nullValue, path_, {{"key", name}});
         } else if (!thing.isObject()) {
             report_.add(say::mistyped, path_,
-                        {{"key", name}, {"found", foundText(thing)},
+                        {{"key", name},
+                         {"found", foundText(thing)},
                          {"wanted", std::string("an object in braces")}});
         } else {
             readGroup(row, thing, inner);
@@ -169,7 +207,8 @@ void Reader::checkPresence(const Field& owner, const Fields& rows, const Tree& t
         } else if (row.required && tree.find(row.key) == nullptr) {
             const Deeper deeper(path_, row.key);
             report_.add(say::missing, path_,
-                        {{"key", std::string(row.key)}, {"label", std::string(row.label)},
+                        {{"key", std::string(row.key)},
+                         {"label", std::string(row.label)},
                          {"help", std::string(row.help)}});
         }
     }
@@ -191,8 +230,7 @@ void Reader::checkForms(const Field& owner, const Field& either, const Tree& tre
     }
     if (either.required) {
         report_.add(say::missingForm, path_,
-                    {{"label", std::string(either.label)},
-                     {"keys", listed(keysOf({either}), 20)}});
+                    {{"label", std::string(either.label)}, {"keys", listed(keysOf({either}), 20)}});
     }
 }
 
@@ -209,7 +247,8 @@ void Reader::checkKinds(const Field& oneOf, const Tree& tree) {
     }
     if (first.empty()) {
         report_.add(say::noKind, path_,
-                    {{"key", std::string(oneOf.key)}, {"label", std::string(oneOf.label)},
+                    {{"key", std::string(oneOf.key)},
+                     {"label", std::string(oneOf.label)},
                      {"keys", listed(keysOf(oneOf.fields))}});
     }
 }
@@ -234,7 +273,8 @@ void Reader::tellRivals(std::string_view first, std::string_view second, std::st
     other.emplace_back(first);
     const Deeper deeper(path_, second);
     report_.add(*message, path_,
-                {{"first", std::string(first)}, {"second", std::string(second)},
+                {{"first", std::string(first)},
+                 {"second", std::string(second)},
                  {"label", std::string(label)}},
                 {other});
 }
@@ -267,14 +307,19 @@ std::optional<double> Reader::numberOf(const Field& row, const Tree& value) {
     if (!std::isfinite(si) || (row.hard && !row.hard->holds(si))) {
         const Range range = row.hard.value_or(Range{-1e300, 1e300});
         report_.add(say::outOfRange, path_,
-                    {{"key", path_.back()}, {"label", std::string(row.label)},
-                     {"value", print(si)}, {"low", print(range.low)}, {"high", print(range.high)}});
+                    {{"key", path_.back()},
+                     {"label", std::string(row.label)},
+                     {"value", print(si)},
+                     {"low", print(range.low)},
+                     {"high", print(range.high)}});
         return std::nullopt;
     }
     if (row.usual && !row.usual->holds(si)) {
         report_.add(say::unusual, path_,
-                    {{"label", std::string(row.label)}, {"value", print(si)},
-                     {"low", print(row.usual->low)}, {"high", print(row.usual->high)},
+                    {{"label", std::string(row.label)},
+                     {"value", print(si)},
+                     {"low", print(row.usual->low)},
+                     {"high", print(row.usual->high)},
                      {"source", std::string(row.usualSource)}});
     }
     return si;
@@ -298,8 +343,8 @@ void Reader::checkSearch(const Tree& value) {
     for (const auto& member : value.members()) {
         (member.second.isArray() ? search : now) = &member.second;
     }
-    if (now == nullptr || search == nullptr || !now->isNumber() || search->items().size() != 2 ||
-        !search->items()[0].isNumber() || !search->items()[1].isNumber()) {
+    if (now == nullptr || search == nullptr || !now->isNumber() || search->items().size() != 2
+        || !search->items()[0].isNumber() || !search->items()[1].isNumber()) {
         return;
     }
     const double at_s = now->asNumber();
@@ -307,7 +352,8 @@ void Reader::checkSearch(const Tree& value) {
     const double high_s = search->items()[1].asNumber();
     if (at_s < low_s || at_s > high_s) {
         report_.add(say::nowOutsideSearch, path_,
-                    {{"value", amount(Quantity::time, at_s)}, {"low", amount(Quantity::time, low_s)},
+                    {{"value", amount(Quantity::time, at_s)},
+                     {"low", amount(Quantity::time, low_s)},
                      {"high", amount(Quantity::time, high_s)}});
     }
 }
@@ -340,7 +386,8 @@ void Reader::readInterval(const Field& row, const Tree& value, void* object) {
     }
     if (!(*low < *high)) {
         report_.add(say::intervalReversed, path_,
-                    {{"key", path_.back()}, {"low", amount(row.quantity, *low)},
+                    {{"key", path_.back()},
+                     {"low", amount(row.quantity, *low)},
                      {"high", amount(row.quantity, *high)}});
         return;
     }

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "plant/reader.h"
-
 #include "base/near_miss.h"
+#include "plant/reader.h"
 
 #include <cmath>
 
@@ -52,7 +51,9 @@ void Reader::tellUndeclared(const Field& row, const std::string& name) {
     for (const auto collection : plantCollections()) {
         if (names_.indexOf(collection, name) >= 0) {
             report_.add(say::wrongCollection, path_,
-                        {{"key", key}, {"name", name}, {"wanted", wanted},
+                        {{"key", key},
+                         {"name", name},
+                         {"wanted", wanted},
                          {"found", std::string(nameOf(collection))}});
             return;
         }
@@ -179,7 +180,8 @@ bool Reader::checkRow(const Field& row, std::size_t index, const std::vector<dou
     const Deeper deeper(path_, std::to_string(index));
     if (file.size() != row.columns.size()) {
         report_.add(say::tableRow, path_,
-                    {{"row", number}, {"columns", static_cast<std::int64_t>(row.columns.size())},
+                    {{"row", number},
+                     {"columns", static_cast<std::int64_t>(row.columns.size())},
                      {"names", columnNames(row)}});
         return false;
     }
@@ -189,16 +191,21 @@ bool Reader::checkRow(const Field& row, std::size_t index, const std::vector<dou
         const auto print = [&](double value) { return Argument(amount(column.quantity, value)); };
         if (!column.hard.holds(si)) {
             report_.add(say::tableRange, path_,
-                        {{"row", number}, {"label", std::string(column.label)},
-                         {"value", print(si)}, {"low", print(column.hard.low)},
+                        {{"row", number},
+                         {"label", std::string(column.label)},
+                         {"value", print(si)},
+                         {"low", print(column.hard.low)},
                          {"high", print(column.hard.high)}});
             return false;
         }
-        if (before != nullptr && ((column.rising && !(file[i] > (*before)[i])) ||
-                                  (column.falling && !(file[i] < (*before)[i])))) {
+        if (before != nullptr
+            && ((column.rising && !(file[i] > (*before)[i]))
+                || (column.falling && !(file[i] < (*before)[i])))) {
             report_.add(say::tableOrder, path_,
-                        {{"row", number}, {"label", std::string(column.label)},
-                         {"value", print(si)}, {"before", print(toSi(column.quantity, (*before)[i]))},
+                        {{"row", number},
+                         {"label", std::string(column.label)},
+                         {"value", print(si)},
+                         {"before", print(toSi(column.quantity, (*before)[i]))},
                          {"rule", std::string(column.rising ? "be greater" : "be less")}});
             return false;
         }

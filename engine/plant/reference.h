@@ -6,7 +6,18 @@
 namespace headroom::plant {
 
 /// The collections whose things can be referred to by name.
-enum class Collection { none, points, reservoirs, conduits, chambers, units, limits, options, studies, events };
+enum class Collection {
+    none,
+    points,
+    reservoirs,
+    conduits,
+    chambers,
+    units,
+    limits,
+    options,
+    studies,
+    events
+};
 
 /// A thing referred to by its name; `index` is its position in its collection once resolved.
 struct Reference {

@@ -21,7 +21,8 @@ struct Renaming {
 
 Tree rewrittenIn(const Renaming& job, const Field& owner, const Tree& tree);
 
-Tree mapMembers(const Tree& tree, const std::function<Tree(const std::string&, const Tree&)>& next) {
+Tree mapMembers(const Tree& tree,
+                const std::function<Tree(const std::string&, const Tree&)>& next) {
     std::vector<Tree::Member> members = tree.members();
     bool same = true;
     for (auto& member : members) {
@@ -49,16 +50,15 @@ Tree renamedNames(const Renaming& job, const Tree& list) {
 /// A path written as a list of keys, in the parts that are kept as they are.
 Tree renamedPaths(const Renaming& job, const Tree& tree) {
     if (tree.isObject()) {
-        return mapMembers(tree, [&](const std::string&, const Tree& value) {
-            return renamedPaths(job, value);
-        });
+        return mapMembers(
+            tree, [&](const std::string&, const Tree& value) { return renamedPaths(job, value); });
     }
     const auto& items = tree.items();
-    const bool names = items.size() >= job.thing.size() &&
-                       std::equal(job.thing.begin(), job.thing.end(), items.begin(),
-                                  [](const std::string& key, const Tree& item) {
-                                      return item.isText() && item.asText() == key;
-                                  });
+    const bool names = items.size() >= job.thing.size()
+                       && std::equal(job.thing.begin(), job.thing.end(), items.begin(),
+                                     [](const std::string& key, const Tree& item) {
+                                         return item.isText() && item.asText() == key;
+                                     });
     if (!names) {
         return tree;
     }
@@ -68,32 +68,37 @@ Tree renamedPaths(const Renaming& job, const Tree& tree) {
 }
 
 bool about(const Renaming& job, const Field& row) {
-    return std::find(row.collections.begin(), row.collections.end(), job.collection) !=
-           row.collections.end();
+    return std::find(row.collections.begin(), row.collections.end(), job.collection)
+           != row.collections.end();
 }
 
 Tree rewrittenMember(const Renaming& job, const Field& row, const Tree& value) {
     switch (row.kind) {
-    case FieldKind::reference: return about(job, row) ? renamedName(job, value) : value;
-    case FieldKind::references: return about(job, row) ? renamedNames(job, value) : value;
+    case FieldKind::reference:
+        return about(job, row) ? renamedName(job, value) : value;
+    case FieldKind::references:
+        return about(job, row) ? renamedNames(job, value) : value;
     case FieldKind::location:
         return value.isObject()  ? rewrittenIn(job, row, value)
                : about(job, row) ? renamedName(job, value)
                                  : value;
     case FieldKind::numbers:
-        return about(job, row) && value.find(job.from) != nullptr &&
-                       value.find(job.to) == nullptr
+        return about(job, row) && value.find(job.from) != nullptr && value.find(job.to) == nullptr
                    ? value.renamed({}, job.from, job.to)
                    : value;
     case FieldKind::keyed:
         return mapMembers(value, [&](const std::string&, const Tree& thing) {
             return rewrittenIn(job, row, thing);
         });
-    case FieldKind::patch: return rewrittenIn(job, varyingRow(), value);
-    case FieldKind::free: return renamedPaths(job, value);
+    case FieldKind::patch:
+        return rewrittenIn(job, varyingRow(), value);
+    case FieldKind::free:
+        return renamedPaths(job, value);
     case FieldKind::group:
-    case FieldKind::oneOf: return rewrittenIn(job, row, value);
-    default: return value;
+    case FieldKind::oneOf:
+        return rewrittenIn(job, row, value);
+    default:
+        return value;
     }
 }
 

@@ -87,16 +87,26 @@ std::string listed(const std::vector<std::string>& names, std::size_t most) {
 
 std::string_view nameOf(Collection collection) {
     switch (collection) {
-    case Collection::none: return "things";
-    case Collection::points: return "points";
-    case Collection::reservoirs: return "reservoirs";
-    case Collection::conduits: return "conduits";
-    case Collection::chambers: return "chambers";
-    case Collection::units: return "units";
-    case Collection::limits: return "limits";
-    case Collection::options: return "options";
-    case Collection::studies: return "studies";
-    case Collection::events: return "events";
+    case Collection::none:
+        return "things";
+    case Collection::points:
+        return "points";
+    case Collection::reservoirs:
+        return "reservoirs";
+    case Collection::conduits:
+        return "conduits";
+    case Collection::chambers:
+        return "chambers";
+    case Collection::units:
+        return "units";
+    case Collection::limits:
+        return "limits";
+    case Collection::options:
+        return "options";
+    case Collection::studies:
+        return "studies";
+    case Collection::events:
+        return "events";
     }
     throw Bug("a collection has a name");
 }

@@ -67,11 +67,27 @@ template <class Owner>
 struct Row {
     Field field;
 
-    Row needed() && { field.required = true; field.fallback.reset(); return std::move(*this); }
-    Row optional() && { field.required = false; return std::move(*this); }
-    Row varies() && { field.varies = true; return std::move(*this); }
-    Row withoutCommons() && { field.commons = false; return std::move(*this); }
-    Row uncounted() && { field.counts = false; return std::move(*this); }
+    Row needed() && {
+        field.required = true;
+        field.fallback.reset();
+        return std::move(*this);
+    }
+    Row optional() && {
+        field.required = false;
+        return std::move(*this);
+    }
+    Row varies() && {
+        field.varies = true;
+        return std::move(*this);
+    }
+    Row withoutCommons() && {
+        field.commons = false;
+        return std::move(*this);
+    }
+    Row uncounted() && {
+        field.counts = false;
+        return std::move(*this);
+    }
     Row range(double low, double high) && {
         field.hard = Range{toSi(field.quantity, low), toSi(field.quantity, high)};
         return std::move(*this);
@@ -81,8 +97,14 @@ struct Row {
         field.usualSource = source;
         return std::move(*this);
     }
-    Row moves(std::string_view effect) && { field.effect = effect; return std::move(*this); }
-    Row leastRows(int count) && { field.leastRows = count; return std::move(*this); }
+    Row moves(std::string_view effect) && {
+        field.effect = effect;
+        return std::move(*this);
+    }
+    Row leastRows(int count) && {
+        field.leastRows = count;
+        return std::move(*this);
+    }
 };
 
 /// The rows of one struct.
@@ -237,9 +259,9 @@ Row<Owner> kind(std::variant<Kinds...> Owner::*choice, RowsOf<Kind> inner, Words
 /// An object with exactly one of the kinds, which belong to the owner itself.
 template <class Owner>
 Row<Owner> oneOf(RowsOf<Owner> kinds, Words words) {
-    auto row = groupBy<Owner, Owner>([](Owner& owner) { return &owner; },
-                                     [](const Owner& owner) { return &owner; }, std::move(kinds),
-                                     words);
+    auto row =
+        groupBy<Owner, Owner>([](Owner& owner) { return &owner; },
+                              [](const Owner& owner) { return &owner; }, std::move(kinds), words);
     row.field.kind = FieldKind::oneOf;
     return row;
 }

@@ -33,8 +33,10 @@ struct LoadClassWords {
     std::string_view key, label, help;
 };
 constexpr std::array<LoadClassWords, loadClassCount> loadClasses{{
-    {"normal", "Normal", "Value for what staff or automatics may do to a healthy plant in any order."},
-    {"exceptional", "Exceptional", "Value for one independent failure on top, or the worst phase of normal events."},
+    {"normal", "Normal",
+     "Value for what staff or automatics may do to a healthy plant in any order."},
+    {"exceptional", "Exceptional",
+     "Value for one independent failure on top, or the worst phase of normal events."},
     {"extreme", "Extreme", "Value for two failures, or one failure at its worst phase."},
     {"catastrophic", "Catastrophic", "Value for rupture or complete loss of control."},
 }};
@@ -45,11 +47,16 @@ struct Span {
 };
 Span spanOf(Quantity quantity) {
     switch (quantity) {
-    case Quantity::elevation: return {lowestLevel_m, highestLevel_m};
-    case Quantity::percent: return {-100, 200};
-    case Quantity::speedRatio: return {-3, 4};
-    case Quantity::frequency: return {0, 200};
-    default: return {-1e6, 1e6};
+    case Quantity::elevation:
+        return {lowestLevel_m, highestLevel_m};
+    case Quantity::percent:
+        return {-100, 200};
+    case Quantity::speedRatio:
+        return {-3, 4};
+    case Quantity::frequency:
+        return {0, 200};
+    default:
+        return {-1e6, 1e6};
     }
 }
 
@@ -62,23 +69,36 @@ RowsOf<ClassValues> classRows(Quantity quantity) {
             [i](const ClassValues& values) { return values[i]; }};
         const auto span = spanOf(quantity);
         rows = rows.with({number(through, quantity, {words.key, words.label, words.help})
-                              .range(span.low, span.high).uncounted()});
+                              .range(span.low, span.high)
+                              .uncounted()});
     }
     return rows;
 }
 
 RowsOf<Allowance> allowanceRows() {
     return {
-        number(&Allowance::shareOfHead, Quantity::percent, {"pctOfHead", "Of the static head",
-            "Per cent of the static head added to the computed value, for example for pulsation."}).range(0, 100).usual(0, 10).uncounted(),
-        number(&Allowance::shareOfRise, Quantity::percent, {"pctOfRise", "Of the change from rest",
-            "Per cent of the computed change from rest added to the computed value."}).range(0, 100).usual(0, 20).uncounted(),
+        number(
+            &Allowance::shareOfHead, Quantity::percent,
+            {"pctOfHead", "Of the static head",
+             "Per cent of the static head added to the computed value, for example for pulsation."})
+            .range(0, 100)
+            .usual(0, 10)
+            .uncounted(),
+        number(&Allowance::shareOfRise, Quantity::percent,
+               {"pctOfRise", "Of the change from rest",
+                "Per cent of the computed change from rest added to the computed value."})
+            .range(0, 100)
+            .usual(0, 20)
+            .uncounted(),
     };
 }
 
 Row<Limit> placeRow(std::vector<Collection> named, bool alongToo) {
-    auto row = bound(FieldKind::location, {"at", "Place", "The thing that is limited, by its name, or a chainage along a conduit."},
-                     access(&Limit::at)).uncounted();
+    auto row = bound(FieldKind::location,
+                     {"at", "Place",
+                      "The thing that is limited, by its name, or a chainage along a conduit."},
+                     access(&Limit::at))
+                   .uncounted();
     row.field.collections = std::move(named);
     if (alongToo) {
         row.field.fields = alongConduitRows().fields;
@@ -88,15 +108,18 @@ Row<Limit> placeRow(std::vector<Collection> named, bool alongToo) {
 }
 
 Row<Limit> wholeConduitRow() {
-    const Access<Limit, Reference> whole{
-        [](Limit& limit, Reference conduit) {
-            limit.at.thing = std::move(conduit);
-            limit.wholeConduit = true;
-        },
-        [](const Limit& limit) {
-            return limit.wholeConduit ? std::optional(limit.at.thing) : std::nullopt;
-        }};
-    auto row = bound(FieldKind::reference, {"along", "Along", "A conduit that is limited at every chainage."}, whole).uncounted();
+    const Access<Limit, Reference> whole{[](Limit& limit, Reference conduit) {
+                                             limit.at.thing = std::move(conduit);
+                                             limit.wholeConduit = true;
+                                         },
+                                         [](const Limit& limit) {
+                                             return limit.wholeConduit
+                                                        ? std::optional(limit.at.thing)
+                                                        : std::nullopt;
+                                         }};
+    auto row = bound(FieldKind::reference,
+                     {"along", "Along", "A conduit that is limited at every chainage."}, whole)
+                   .uncounted();
     row.field.collections = {Collection::conduits};
     return std::move(row).needed();
 }
@@ -104,45 +127,67 @@ Row<Limit> wholeConduitRow() {
 /// Where each measure can be limited.
 RowsOf<Limit> placeRows(Measure measure) {
     switch (measure) {
-    case Measure::level: return {placeRow({Collection::chambers, Collection::reservoirs}, false)};
+    case Measure::level:
+        return {placeRow({Collection::chambers, Collection::reservoirs}, false)};
     case Measure::head:
-    case Measure::pressureRate: return {placeRow({Collection::points}, true)};
+    case Measure::pressureRate:
+        return {placeRow({Collection::points}, true)};
     case Measure::pressureHead:
         return {eitherOf<Limit>({{placeRow({Collection::points}, true)}, {wholeConduitRow()}},
                                 "Where", "A place, or a whole conduit.")};
     case Measure::discharge:
         return {placeRow({Collection::conduits, Collection::units, Collection::chambers}, true)};
-    case Measure::velocity: return {placeRow({Collection::conduits}, true)};
+    case Measure::velocity:
+        return {placeRow({Collection::conduits}, true)};
     case Measure::frequency:
-    case Measure::frequencyRate: return {};
-    default: return {placeRow({Collection::units}, false)};
+    case Measure::frequencyRate:
+        return {};
+    default:
+        return {placeRow({Collection::units}, false)};
     }
 }
 
 RowsOf<Limit> boundRows(Quantity quantity) {
     return {
-        group(&Limit::least, classRows(quantity), {keyFor("min", quantity), "Not below", "Least value allowed, for each load class."}).uncounted(),
-        group(&Limit::greatest, classRows(quantity), {keyFor("max", quantity), "Not above", "Greatest value allowed, for each load class."}).uncounted(),
-        number(&Limit::reserve, quantity, {keyFor("reserve", quantity), "Reserve",
-            "Distance to the bound that is wanted beyond the uncertainty; with less the limit is tight."}).range(0, spanOf(quantity).high).uncounted(),
-        number(&Limit::modelUncertainty, quantity, {keyFor("modelUncertainty", quantity), "Model uncertainty",
-            "How far the computed value may be wrong for other reasons than the numerical step; declared by the user."}).range(0, spanOf(quantity).high).uncounted(),
-        group(&Limit::allowance, allowanceRows(), {"allowance", "Allowance",
-            "What is added to the computed value before it is compared, because it is not computed."}).uncounted(),
+        group(&Limit::least, classRows(quantity),
+              {keyFor("min", quantity), "Not below", "Least value allowed, for each load class."})
+            .uncounted(),
+        group(
+            &Limit::greatest, classRows(quantity),
+            {keyFor("max", quantity), "Not above", "Greatest value allowed, for each load class."})
+            .uncounted(),
+        number(&Limit::reserve, quantity,
+               {keyFor("reserve", quantity), "Reserve",
+                "Distance to the bound that is wanted beyond the uncertainty; with less the limit "
+                "is tight."})
+            .range(0, spanOf(quantity).high)
+            .uncounted(),
+        number(&Limit::modelUncertainty, quantity,
+               {keyFor("modelUncertainty", quantity), "Model uncertainty",
+                "How far the computed value may be wrong for other reasons than the numerical "
+                "step; declared by the user."})
+            .range(0, spanOf(quantity).high)
+            .uncounted(),
+        group(&Limit::allowance, allowanceRows(),
+              {"allowance", "Allowance",
+               "What is added to the computed value before it is compared, because it is not "
+               "computed."})
+            .uncounted(),
     };
 }
 
 Row<Limit> measureRow(const MeasureInfo& measure) {
     return groupBy<Limit, Limit>(
-        [kind = measure.measure](Limit& limit) {
-            limit.measure = kind;
-            return &limit;
-        },
-        [kind = measure.measure](const Limit& limit) {
-            return limit.measure == kind ? &limit : nullptr;
-        },
-        placeRows(measure.measure).with(boundRows(measure.quantity)),
-        {measure.key, measure.label, measure.help}).needed();
+               [kind = measure.measure](Limit& limit) {
+                   limit.measure = kind;
+                   return &limit;
+               },
+               [kind = measure.measure](const Limit& limit) {
+                   return limit.measure == kind ? &limit : nullptr;
+               },
+               placeRows(measure.measure).with(boundRows(measure.quantity)),
+               {measure.key, measure.label, measure.help})
+        .needed();
 }
 
 Row<Limit> timeKind(TimeRule rule, RowsOf<Limit> inner, Words words) {
@@ -156,7 +201,10 @@ Row<Limit> timeKind(TimeRule rule, RowsOf<Limit> inner, Words words) {
 }
 
 Row<Limit> allowedRow(std::string_view help) {
-    return number(&Limit::allowed_s, Quantity::time, {"allowed_s", "Allowed time", help}).needed().range(0, 1e6).uncounted();
+    return number(&Limit::allowed_s, Quantity::time, {"allowed_s", "Allowed time", help})
+        .needed()
+        .range(0, 1e6)
+        .uncounted();
 }
 
 } // namespace
@@ -175,14 +223,28 @@ RowsOf<Limit> limitRows() {
         forms.push_back({measureRow(measure)});
     }
     return {
-        eitherOf<Limit>(std::move(forms), "Measure", "What is limited, where, and by which values."),
-        oneOf<Limit>({
-            timeKind(TimeRule::momentary, {}, {"momentary", "Momentary", "No excursion is allowed."}),
-            timeKind(TimeRule::continuous, {allowedRow("How long one excursion may last.")}, {"continuous", "Continuous", "One excursion may last for a time."}),
-            timeKind(TimeRule::cumulative, {allowedRow("How long all excursions of one event may last together.")}, {"cumulative", "Cumulative", "All excursions together may last for a time."}),
-        }, {"time", "Time rule", "How long the value may stay outside; left out: not at all."}).uncounted(),
-        text(&Limit::consequence, {"consequence", "Consequence", "What happens beyond the bound, in words."}),
-        group(&Limit::source, sourceRows(), {"source", "Source", "Document and author of the values; without both the limit is unsigned."}).uncounted().withoutCommons(),
+        eitherOf<Limit>(std::move(forms), "Measure",
+                        "What is limited, where, and by which values."),
+        oneOf<Limit>(
+            {
+                timeKind(TimeRule::momentary, {},
+                         {"momentary", "Momentary", "No excursion is allowed."}),
+                timeKind(TimeRule::continuous, {allowedRow("How long one excursion may last.")},
+                         {"continuous", "Continuous", "One excursion may last for a time."}),
+                timeKind(
+                    TimeRule::cumulative,
+                    {allowedRow("How long all excursions of one event may last together.")},
+                    {"cumulative", "Cumulative", "All excursions together may last for a time."}),
+            },
+            {"time", "Time rule", "How long the value may stay outside; left out: not at all."})
+            .uncounted(),
+        text(&Limit::consequence,
+             {"consequence", "Consequence", "What happens beyond the bound, in words."}),
+        group(&Limit::source, sourceRows(),
+              {"source", "Source",
+               "Document and author of the values; without both the limit is unsigned."})
+            .uncounted()
+            .withoutCommons(),
     };
 }
 

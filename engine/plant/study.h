@@ -16,19 +16,40 @@ namespace headroom::plant {
 /// When an event happens: at a time, or after another event by a delay.
 struct EventTime {
     std::optional<double> at_s;
-    std::optional<double> after_s;      ///< delay now used
+    std::optional<double> after_s;                     ///< delay now used
     std::optional<std::pair<double, double>> search_s; ///< range a search may move it in
-    Reference of;                       ///< event the delay counts from
+    Reference of;                                      ///< event the delay counts from
 };
 
-struct RejectLoad { std::vector<Reference> units; };               ///< empty: all units
-struct LoadOrder { Reference unit; double to_W = 0; double over_s = 0; }; ///< accept load or move the set-point; joins the grid first if off it
-struct GateStuck { Reference unit; };                              ///< the gate stays where it is
-struct LossOfGeneration { double power_W = 0; };                   ///< in the area, positive = lost
-struct ImposedFrequency { Rows table; };                           ///< (s after the event, Hz)
-struct OpeningOrder { Reference unit; Rows table; };               ///< (s after the event, share)
-struct FlowOrder { Reference unit; Rows table; };                  ///< (s after, m³/s); `flow` units
-struct LevelOrder { Reference reservoir; Rows table; };            ///< (s after the event, m)
+struct RejectLoad {
+    std::vector<Reference> units;
+}; ///< empty: all units
+struct LoadOrder {
+    Reference unit;
+    double to_W = 0;
+    double over_s = 0;
+}; ///< accept load or move the set-point; joins the grid first if off it
+struct GateStuck {
+    Reference unit;
+}; ///< the gate stays where it is
+struct LossOfGeneration {
+    double power_W = 0;
+}; ///< in the area, positive = lost
+struct ImposedFrequency {
+    Rows table;
+}; ///< (s after the event, Hz)
+struct OpeningOrder {
+    Reference unit;
+    Rows table;
+}; ///< (s after the event, share)
+struct FlowOrder {
+    Reference unit;
+    Rows table;
+}; ///< (s after, m³/s); `flow` units
+struct LevelOrder {
+    Reference reservoir;
+    Rows table;
+}; ///< (s after the event, m)
 using EventKind = std::variant<RejectLoad, LoadOrder, GateStuck, LossOfGeneration, ImposedFrequency,
                                OpeningOrder, FlowOrder, LevelOrder>;
 
@@ -38,10 +59,10 @@ struct Event {
 };
 
 struct Start {
-    std::vector<std::pair<Reference, double>> level_m;    ///< by reservoir; else its `level_m`
+    std::vector<std::pair<Reference, double>> level_m;        ///< by reservoir; else its `level_m`
     std::vector<std::pair<Reference, double>> chamberLevel_m; ///< offset start for checks
-    std::vector<std::pair<Reference, double>> output_W;   ///< by unit; absent: 0, on the grid
-    std::vector<std::pair<Reference, double>> opening;    ///< by unit, instead of an output
+    std::vector<std::pair<Reference, double>> output_W;       ///< by unit; absent: 0, on the grid
+    std::vector<std::pair<Reference, double>> opening;        ///< by unit, instead of an output
 };
 
 struct Study {

@@ -162,10 +162,14 @@ bool Tree::operator==(const Tree& other) const {
         return false;
     }
     switch (type()) {
-    case Type::text: return asText() == other.asText();
-    case Type::array: return items() == other.items();
-    case Type::object: return members() == other.members();
-    default: return false; // scalars were compared above
+    case Type::text:
+        return asText() == other.asText();
+    case Type::array:
+        return items() == other.items();
+    case Type::object:
+        return members() == other.members();
+    default:
+        return false; // scalars were compared above
     }
 }
 
@@ -180,11 +184,11 @@ bool sameContent(const Tree& a, const Tree& b) {
     if (!a.isObject() || !b.isObject()) {
         return a == b;
     }
-    return a.members().size() == b.members().size() &&
-           std::all_of(a.members().begin(), a.members().end(), [&](const Tree::Member& member) {
-               const Tree* other = b.find(member.first);
-               return other != nullptr && sameContent(member.second, *other);
-           });
+    return a.members().size() == b.members().size()
+           && std::all_of(a.members().begin(), a.members().end(), [&](const Tree::Member& member) {
+                  const Tree* other = b.find(member.first);
+                  return other != nullptr && sameContent(member.second, *other);
+              });
 }
 
 std::size_t Tree::nodeCount() const {

@@ -48,19 +48,19 @@ public:
     bool isNumber() const { return type() == Type::number; }
     bool isText() const { return type() == Type::text; }
 
-    bool asBoolean() const;                         ///< `Bug` if it is something else
-    double asNumber() const;                        ///< `Bug` if it is something else
-    const std::string& asText() const;              ///< `Bug` if it is something else
-    const std::vector<Tree>& items() const;         ///< of an array; empty for others
-    const std::vector<Member>& members() const;     ///< of an object; empty for others
+    bool asBoolean() const;                     ///< `Bug` if it is something else
+    double asNumber() const;                    ///< `Bug` if it is something else
+    const std::string& asText() const;          ///< `Bug` if it is something else
+    const std::vector<Tree>& items() const;     ///< of an array; empty for others
+    const std::vector<Member>& members() const; ///< of an object; empty for others
 
-    const Tree* find(std::string_view key) const;   ///< member of an object or nullptr
-    const Tree* at(const Path& path) const;         ///< walks objects; nullptr if absent
+    const Tree* find(std::string_view key) const; ///< member of an object or nullptr
+    const Tree* at(const Path& path) const;       ///< walks objects; nullptr if absent
 
     /// An object that names an outer table, `{"csv": "shaft.csv"}`, carries what was read from it
     /// along through every copy; it is never written and takes no part in comparisons.
     Tree withOuterTable(std::shared_ptr<const OuterTable> table) const;
-    const OuterTable* outerTable() const;           ///< nullptr: none read
+    const OuterTable* outerTable() const; ///< nullptr: none read
 
     /// This tree with `value` at `path`; missing objects on the way are made, a new key goes last.
     Tree with(const Path& path, Tree value) const;
@@ -70,9 +70,9 @@ public:
     /// Renames a key in place, keeping its position. `Bug` if `from` is absent or `to` exists.
     Tree renamed(const Path& parent, std::string_view from, std::string_view to) const;
 
-    bool sameAs(const Tree& other) const;           ///< same node: equal without looking
-    bool operator==(const Tree& other) const;       ///< deep; order of members matters
-    std::size_t nodeCount() const;                  ///< for limits and tests
+    bool sameAs(const Tree& other) const;     ///< same node: equal without looking
+    bool operator==(const Tree& other) const; ///< deep; order of members matters
+    std::size_t nodeCount() const;            ///< for limits and tests
 
 private:
     struct Node;

@@ -19,23 +19,28 @@ void replaceIn(const Field& row, void* owner, const Resolve& resolve) {
             reference = resolve(row, reference);
         }
     };
-    const bool changed = std::visit(
-        overloaded{[&](Reference& one) { renew(one); return true; },
-                   [&](std::vector<Reference>& several) {
-                       for (auto& one : several) {
-                           renew(one);
-                       }
-                       return true;
-                   },
-                   [&](Location& location) { renew(location.thing); return true; },
-                   [&](NamedNumbers& numbers) {
-                       for (auto& number : numbers) {
-                           renew(number.first);
-                       }
-                       return true;
-                   },
-                   [](auto&) { return false; }},
-        *held);
+    const bool changed = std::visit(overloaded{[&](Reference& one) {
+                                                   renew(one);
+                                                   return true;
+                                               },
+                                               [&](std::vector<Reference>& several) {
+                                                   for (auto& one : several) {
+                                                       renew(one);
+                                                   }
+                                                   return true;
+                                               },
+                                               [&](Location& location) {
+                                                   renew(location.thing);
+                                                   return true;
+                                               },
+                                               [&](NamedNumbers& numbers) {
+                                                   for (auto& number : numbers) {
+                                                       renew(number.first);
+                                                   }
+                                                   return true;
+                                               },
+                                               [](auto&) { return false; }},
+                                    *held);
     if (changed) {
         row.binding.set(owner, std::move(*held));
     }

@@ -1,9 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "base/constants.h"
 #include "support/catch.h"
 #include "units/text.h"
+
+#include "project_support.h"
 
 using namespace headroom;
 using namespace headroom::plant;
@@ -95,11 +95,12 @@ TEST_CASE("bind: the small plant is good", "[plant][invariant]") {
 }
 
 TEST_CASE("bind: all faults come at once", "[plant][messages]") {
-    const auto tree = smallPlant()
-                          .without(split("plant/reservoirs/Lake/level_m"))
-                          .with(split("plant/conduits/Tunnel/reaches/rock/diameter_m"), Tree::number(-3))
-                          .with(split("plant/units/U1/servo/opening_s"), Tree::text("ten"))
-                          .with(split("plant/chambers/Shaft/at"), Tree::text("Fool"));
+    const auto tree =
+        smallPlant()
+            .without(split("plant/reservoirs/Lake/level_m"))
+            .with(split("plant/conduits/Tunnel/reaches/rock/diameter_m"), Tree::number(-3))
+            .with(split("plant/units/U1/servo/opening_s"), Tree::text("ten"))
+            .with(split("plant/chambers/Shaft/at"), Tree::text("Fool"));
     const auto findings = bind(tree).findings;
     INFO(support::texts(findings));
     CHECK(has(findings, "plant.missing", "plant/reservoirs/Lake/level_m"));
@@ -114,15 +115,22 @@ TEST_CASE("bind: a slip of the pen gets the nearest key", "[plant][messages]") {
     REQUIRE(hits.size() == 1);
     CHECK(hits.front().subject == "plant/reservoirs/Lake/levl_m");
     CHECK_THAT(text(hits.front()), ContainsSubstring("“level_m”"));
-    CHECK(has(findingsWith(smallPlant(), "plant/reservoirs/Lake/zzzzzzzzzz", "1"), "plant.unknown-key"));
-    CHECK(bind(smallPlant().with(split("plant/reservoirs/Lake/x-mine"), Tree::number(1))).findings.empty());
-    CHECK(bind(smallPlant().with(split("plant/reservoirs/Lake/note"), Tree::text("old"))).findings.empty());
-    CHECK(bind(smallPlant().with(split("plant/reservoirs/Lake/source/document"), Tree::text("a"))).findings.empty());
+    CHECK(has(findingsWith(smallPlant(), "plant/reservoirs/Lake/zzzzzzzzzz", "1"),
+              "plant.unknown-key"));
+    CHECK(bind(smallPlant().with(split("plant/reservoirs/Lake/x-mine"), Tree::number(1)))
+              .findings.empty());
+    CHECK(bind(smallPlant().with(split("plant/reservoirs/Lake/note"), Tree::text("old")))
+              .findings.empty());
+    CHECK(bind(smallPlant().with(split("plant/reservoirs/Lake/source/document"), Tree::text("a")))
+              .findings.empty());
 }
 
 TEST_CASE("bind: exactly one kind, exactly one form", "[plant][messages]") {
-    CHECK(has(findingsWith(smallPlant(), "plant/chambers/Shaft/shape/throttled", R"({"diameter_m": 5, "floor_m": 82, "rim_m": 120, "lossIn_s2m5": 0, "lossOut_s2m5": 0})"),
-              "plant.two-kinds", "plant/chambers/Shaft/shape/throttled"));
+    CHECK(has(
+        findingsWith(
+            smallPlant(), "plant/chambers/Shaft/shape/throttled",
+            R"({"diameter_m": 5, "floor_m": 82, "rim_m": 120, "lossIn_s2m5": 0, "lossOut_s2m5": 0})"),
+        "plant.two-kinds", "plant/chambers/Shaft/shape/throttled"));
     CHECK(has(findingsWith(smallPlant(), "plant/chambers/Shaft/shape", "{}"), "plant.no-kind"));
     CHECK(has(findingsWith(smallPlant(), "plant/conduits/Tunnel/reaches/rock/darcy", "0.02"),
               "plant.two-kinds", "plant/conduits/Tunnel/reaches/rock/darcy"));
@@ -135,11 +143,14 @@ TEST_CASE("bind: exactly one kind, exactly one form", "[plant][messages]") {
 TEST_CASE("bind: null means something only in an option", "[plant][messages]") {
     const auto findings = findingsWith(smallPlant(), "plant/reservoirs/Lake/lowest_m", "null");
     CHECK(has(findings, "plant.null", "plant/reservoirs/Lake/lowest_m"));
-    CHECK(has(findingsWith(smallPlant(), "plant/units/U1", "null"), "plant.null", "plant/units/U1"));
+    CHECK(
+        has(findingsWith(smallPlant(), "plant/units/U1", "null"), "plant.null", "plant/units/U1"));
 }
 
-TEST_CASE("bind: numbers out of their usual range are a warning with its source", "[plant][messages]") {
-    const auto bound = bind(smallPlant().with(split("plant/conduits/Tunnel/reaches/rock/strickler"), Tree::number(120)));
+TEST_CASE("bind: numbers out of their usual range are a warning with its source",
+          "[plant][messages]") {
+    const auto bound = bind(smallPlant().with(split("plant/conduits/Tunnel/reaches/rock/strickler"),
+                                              Tree::number(120)));
     const auto hits = found(bound.findings, "plant.unusual");
     REQUIRE(hits.size() == 1);
     CHECK(hits.front().severity() == Severity::warning);
@@ -147,10 +158,12 @@ TEST_CASE("bind: numbers out of their usual range are a warning with its source"
     CHECK(bound.usable());
 }
 
-TEST_CASE("bind: names are 1 to 80 printable letters, each once over the plant", "[plant][messages]") {
+TEST_CASE("bind: names are 1 to 80 printable letters, each once over the plant",
+          "[plant][messages]") {
     const auto named = [](const std::string& name) {
         return bind(smallPlant().with({"plant", "points", name},
-                                      support::json(R"({"chainage_m": 1, "elevation_m": 1})"))).findings;
+                                      support::json(R"({"chainage_m": 1, "elevation_m": 1})")))
+            .findings;
     };
     CHECK(has(named(""), "plant.name-empty"));
     CHECK(has(named(std::string(81, 'a')), "plant.name-too-long"));
@@ -166,21 +179,29 @@ TEST_CASE("bind: names are 1 to 80 printable letters, each once over the plant",
     CHECK(has(named("FOOT"), "plant.name-differs-in-case"));
     CHECK(has(named("Tunnel"), "plant.name-twice"));
     CHECK(has(named("shaft"), "plant.name-differs-in-case"));
-    CHECK(has(bind(smallPlant().with(split("limits/shaft, HIGHEST"), *smallPlant().at(split("limits/Shaft, highest")))).findings,
+    CHECK(has(bind(smallPlant().with(split("limits/shaft, HIGHEST"),
+                                     *smallPlant().at(split("limits/Shaft, highest"))))
+                  .findings,
               "plant.name-differs-in-case"));
 }
 
 TEST_CASE("bind: references name what there is", "[plant][messages]") {
-    const auto near = found(findingsWith(smallPlant(), "plant/conduits/Pipe/to", R"("Inlt")"), "plant.undeclared-near");
+    const auto near = found(findingsWith(smallPlant(), "plant/conduits/Pipe/to", R"("Inlt")"),
+                            "plant.undeclared-near");
     REQUIRE(near.size() == 1);
     CHECK_THAT(text(near.front()), ContainsSubstring("“Inlet”"));
-    CHECK(has(findingsWith(smallPlant(), "plant/conduits/Pipe/to", R"("Somewhere else")"), "plant.undeclared"));
-    CHECK(has(findingsWith(smallPlant(), "plant/conduits/Pipe/to", R"("Lake")"), "plant.wrong-collection"));
+    CHECK(has(findingsWith(smallPlant(), "plant/conduits/Pipe/to", R"("Somewhere else")"),
+              "plant.undeclared"));
+    CHECK(has(findingsWith(smallPlant(), "plant/conduits/Pipe/to", R"("Lake")"),
+              "plant.wrong-collection"));
     CHECK(has(findingsWith(smallPlant(), "studies/Close/start/opening_pct", R"({"U2": 50})"),
               "plant.undeclared-near", "studies/Close/start/opening_pct/U2"));
-    CHECK(has(findingsWith(smallPlant(), "limits/Shaft, highest/level/at", R"("Shaftt")"), "plant.undeclared-near"));
-    CHECK(has(findingsWith(smallPlant(), "limits/Shaft, highest/level/at", R"("Foot")"), "plant.wrong-collection"));
-    CHECK(has(findingsWith(smallPlant(), "studies/Close/events/second/of", R"("frist")"), "plant.undeclared-near"));
+    CHECK(has(findingsWith(smallPlant(), "limits/Shaft, highest/level/at", R"("Shaftt")"),
+              "plant.undeclared-near"));
+    CHECK(has(findingsWith(smallPlant(), "limits/Shaft, highest/level/at", R"("Foot")"),
+              "plant.wrong-collection"));
+    CHECK(has(findingsWith(smallPlant(), "studies/Close/events/second/of", R"("frist")"),
+              "plant.undeclared-near"));
 }
 
 TEST_CASE("bind: tables are whole, in order and within range", "[plant][messages]") {
@@ -190,7 +211,8 @@ TEST_CASE("bind: tables are whole, in order and within range", "[plant][messages
     CHECK(has(area("[[82, 20]]"), "plant.table-too-short"));
     CHECK(has(area("[[82, 20], [120]]"), "plant.table-row"));
     CHECK(has(area(R"([[82, 20], [120, "x"]])"), "plant.table-row"));
-    CHECK(has(area("[[82, 20], [82, 20]]"), "plant.table-order", "plant/chambers/Shaft/shape/open/areaByLevel/1"));
+    CHECK(has(area("[[82, 20], [82, 20]]"), "plant.table-order",
+              "plant/chambers/Shaft/shape/open/areaByLevel/1"));
     CHECK(has(area("[[82, 20], [120, -4]]"), "plant.table-range"));
     CHECK(has(area(R"({"csv": "area.csv"})"), "plant.table-not-loaded"));
     CHECK(has(area(R"({"cvs": "area.csv"})"), "plant.mistyped"));
@@ -198,10 +220,14 @@ TEST_CASE("bind: tables are whole, in order and within range", "[plant][messages
     for (int i = 0; i <= longestInlineTable; ++i) {
         rows.push_back(Tree::array({Tree::number(82 + 0.001 * i), Tree::number(20)}));
     }
-    CHECK(has(bind(smallPlant().with(split("plant/chambers/Shaft/shape/open/areaByLevel"), Tree::array(rows))).findings,
+    CHECK(has(bind(smallPlant().with(split("plant/chambers/Shaft/shape/open/areaByLevel"),
+                                     Tree::array(rows)))
+                  .findings,
               "plant.table-too-long"));
     rows.pop_back();
-    CHECK(bind(smallPlant().with(split("plant/chambers/Shaft/shape/open/areaByLevel"), Tree::array(rows))).usable());
+    CHECK(bind(smallPlant().with(split("plant/chambers/Shaft/shape/open/areaByLevel"),
+                                 Tree::array(rows)))
+              .usable());
 }
 
 TEST_CASE("bind: a search range holds the delay now used", "[plant][messages]") {
@@ -216,7 +242,8 @@ TEST_CASE("bind: a search range holds the delay now used", "[plant][messages]") 
 }
 
 TEST_CASE("bind: places of findings come from the file", "[plant][files]") {
-    const auto opened = files::openText("{\"headroom\": 1,\n \"plant\": {\n  \"points\": {\n   \"A\": {\"chainage_m\": 0, \"elevation_m\": \"x\"}}}}",
+    const auto opened = files::openText("{\"headroom\": 1,\n \"plant\": {\n  \"points\": {\n   "
+                                        "\"A\": {\"chainage_m\": 0, \"elevation_m\": \"x\"}}}}",
                                         ".", "four.json");
     const auto hits = found(opened.findings(), "plant.mistyped");
     REQUIRE(hits.size() == 1);

@@ -1,8 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "files/json_writer.h"
 #include "support/catch.h"
+
+#include "project_support.h"
 
 using namespace headroom;
 using namespace headroom::plant;
@@ -56,7 +56,8 @@ TEST_CASE("edited: a change of kind or form writes the null beside it", "[plant]
     const Path shape = split("plant/chambers/Surge shaft/shape");
     Path open = shape;
     open.emplace_back("open");
-    const Tree kind = edited(dorvane(), wide, open, json(R"({"diameter_m": 12, "floor_m": 455, "rim_m": 536})"));
+    const Tree kind =
+        edited(dorvane(), wide, open, json(R"({"diameter_m": 12, "floor_m": 455, "rim_m": 536})"));
     const Tree& changes = changesOf(kind, "Wider shaft");
     CHECK(changes.at(shape)->find("throttled")->isNull());
     CHECK(bind(kind).usable());
@@ -93,8 +94,16 @@ TEST_CASE("edited: removing in an option writes null", "[plant][invariant]") {
 
 TEST_CASE("ordered: keys follow the rows, names keep their order", "[plant][invariant]") {
     CHECK(ordered(dorvane()).sameAs(dorvane()));
-    const Tree mixed = json(R"({"plant": {"points": {"b": {"elevation_m": 2, "x-mine": 1, "chainage_m": 1, "note": "n"}, "a": {}}}, "headroom": 1})");
-    CHECK(ordered(mixed) == json(R"({"headroom": 1, "plant": {"points": {"b": {"chainage_m": 1, "elevation_m": 2, "note": "n", "x-mine": 1}, "a": {}}}})"));
-    const Tree patch = json(R"({"options": {"o": {"changes": {"plant": {"units": {}, "points": {}}, "site": {}}}}})");
-    CHECK(ordered(patch) == json(R"({"options": {"o": {"changes": {"site": {}, "plant": {"points": {}, "units": {}}}}}})"));
+    const Tree mixed = json(
+        R"({"plant": {"points": {"b": {"elevation_m": 2, "x-mine": 1, "chainage_m": 1, "note": "n"}, "a": {}}}, "headroom": 1})");
+    CHECK(
+        ordered(mixed)
+        == json(
+            R"({"headroom": 1, "plant": {"points": {"b": {"chainage_m": 1, "elevation_m": 2, "note": "n", "x-mine": 1}, "a": {}}}})"));
+    const Tree patch = json(
+        R"({"options": {"o": {"changes": {"plant": {"units": {}, "points": {}}, "site": {}}}}})");
+    CHECK(
+        ordered(patch)
+        == json(
+            R"({"options": {"o": {"changes": {"site": {}, "plant": {"points": {}, "units": {}}}}}})"));
 }

@@ -1,9 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "support/catch.h"
 
 #include <set>
+
+#include "project_support.h"
 
 using namespace headroom;
 using namespace headroom::plant;
@@ -19,7 +19,8 @@ std::string of(const Tree& tree, const std::string& study = "", int option = -1)
     REQUIRE(bound.usable());
     const auto& project = bound.project;
     const int index = study.empty() ? 0 : project.studies.indexOf(study);
-    return fingerprint(variant(project, option), project.studies[index], project.numerics, 1).text();
+    return fingerprint(variant(project, option), project.studies[index], project.numerics, 1)
+        .text();
 }
 
 Tree with(std::string_view path, std::string_view value) {
@@ -28,21 +29,24 @@ Tree with(std::string_view path, std::string_view value) {
 
 } // namespace
 
-TEST_CASE("fingerprint: 32 hex digits, different for every cell of the demo", "[plant][invariant]") {
+TEST_CASE("fingerprint: 32 hex digits, different for every cell of the demo",
+          "[plant][invariant]") {
     const auto project = bind(dorvane()).project;
     std::set<std::string> all;
     for (int option = -1; option < project.options.size(); ++option) {
         const auto plant = variant(project, option);
         for (const auto& study : project.studies) {
             for (const int refinement : {1, 2}) {
-                const auto text = fingerprint(plant, study.second, project.numerics, refinement).text();
+                const auto text =
+                    fingerprint(plant, study.second, project.numerics, refinement).text();
                 CHECK(text.size() == 32);
                 CHECK(text.find_first_not_of("0123456789abcdef") == std::string::npos);
                 all.insert(text);
             }
         }
     }
-    CHECK(all.size() == static_cast<std::size_t>((project.options.size() + 1) * project.studies.size() * 2));
+    CHECK(all.size()
+          == static_cast<std::size_t>((project.options.size() + 1) * project.studies.size() * 2));
 }
 
 TEST_CASE("fingerprint: what cannot change a number is not in it", "[plant][invariant]") {
@@ -57,7 +61,8 @@ TEST_CASE("fingerprint: what cannot change a number is not in it", "[plant][inva
     CHECK(of(with("studies/Full rejection/about", R"("else")")) == before);
     CHECK(of(with("studies/Full rejection/class", R"("extreme")")) == before);
     CHECK(of(with("studies/Runaway/until_s", "400")) == before);
-    CHECK(of(with("plant/units/U1/turbine/francis/chart/fromRatedData/speedUncertainty_pu", "0.05")) == before);
+    CHECK(of(with("plant/units/U1/turbine/francis/chart/fromRatedData/speedUncertainty_pu", "0.05"))
+          == before);
     // Written defaults and other ways to say the same number.
     CHECK(of(with("plant/units/U1/drive/synchronous/locked", "false")) == before);
     CHECK(of(with("plant/units/U1/interlocks", R"({"synchroniseHold_s": 1})")) == before);
@@ -78,7 +83,8 @@ TEST_CASE("fingerprint: what can change a number is in it", "[plant][invariant]"
              {"plant/units/U1/interlocks/reloadNotBefore_s", "10"},
              {"plant/units/U1/governor/pid/droopOnPower", "true"},
              {"plant/units/U1/drive/synchronous/locked", "true"},
-             {"plant/units/U1/turbine/francis/chart/fromRatedData/flowByStroke", "[[0, 0], [100, 100]]"},
+             {"plant/units/U1/turbine/francis/chart/fromRatedData/flowByStroke",
+              "[[0, 0], [100, 100]]"},
              {"plant/grid", R"({"imposed": {}})"},
              {"numerics/longestStep_s", "0.02"},
              {"studies/Full rejection/start/levels_m/Upper Dorvane", "511"},
@@ -93,16 +99,23 @@ TEST_CASE("fingerprint: what can change a number is in it", "[plant][invariant]"
     }
 }
 
-TEST_CASE("fingerprint: a shaft as a diameter is a kind of its own, its search range is not", "[plant][invariant]") {
+TEST_CASE("fingerprint: a shaft as a diameter is a kind of its own, its search range is not",
+          "[plant][invariant]") {
     const auto reload = of(dorvane(), "Reject, then reload");
-    CHECK(of(with("studies/Reject, then reload/events/reload/after_s", "102"), "Reject, then reload") == reload);
-    CHECK(of(with("studies/Reject, then reload/events/reload/after_s", "103"), "Reject, then reload") != reload);
+    CHECK(
+        of(with("studies/Reject, then reload/events/reload/after_s", "102"), "Reject, then reload")
+        == reload);
+    CHECK(
+        of(with("studies/Reject, then reload/events/reload/after_s", "103"), "Reject, then reload")
+        != reload);
 }
 
 TEST_CASE("fingerprint: a kind with the same numbers is another plant", "[plant][invariant]") {
     const Tree open = smallPlant();
-    const Tree throttled = open.with(split("plant/chambers/Shaft/shape"),
-        json(R"({"throttled": {"areaByLevel": [[82, 20], [120, 20]], "lossIn_s2m5": 0, "lossOut_s2m5": 0}})"));
+    const Tree throttled = open.with(
+        split("plant/chambers/Shaft/shape"),
+        json(
+            R"({"throttled": {"areaByLevel": [[82, 20], [120, 20]], "lossIn_s2m5": 0, "lossOut_s2m5": 0}})"));
     CHECK(of(open) != of(throttled));
 }
 

@@ -1,10 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "plant/tree.h"
 #include "support/catch.h"
 
 #include <random>
+
+#include "project_support.h"
 
 using namespace headroom::plant;
 using support::json;
@@ -21,11 +21,16 @@ struct Example {
 Tree randomValue(std::mt19937& draw, int depth) {
     const auto pick = draw() % (depth > 0 ? 6 : 4);
     switch (pick) {
-    case 0: return Tree::number(static_cast<double>(draw() % 7));
-    case 1: return Tree::text(std::string(1, static_cast<char>('a' + draw() % 4)));
-    case 2: return Tree::boolean(draw() % 2 == 0);
-    case 3: return Tree::array({Tree::number(static_cast<double>(draw() % 3)), Tree::text("t")});
-    default: break;
+    case 0:
+        return Tree::number(static_cast<double>(draw() % 7));
+    case 1:
+        return Tree::text(std::string(1, static_cast<char>('a' + draw() % 4)));
+    case 2:
+        return Tree::boolean(draw() % 2 == 0);
+    case 3:
+        return Tree::array({Tree::number(static_cast<double>(draw() % 3)), Tree::text("t")});
+    default:
+        break;
     }
     Tree object = Tree::object({});
     const auto count = draw() % 4;

@@ -1,6 +1,4 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "plant/messages.h"
 #include "support/catch.h"
 #include "units/text.h"
@@ -8,6 +6,8 @@
 #include <fstream>
 #include <iterator>
 #include <set>
+
+#include "project_support.h"
 
 using namespace headroom;
 
@@ -19,7 +19,8 @@ Finding sampleOf(const Message& message) {
     finding.message = &message;
     finding.subject = "plant/chambers/Surge shaft";
     for (const auto part : {message.what, message.mend}) {
-        for (std::size_t at = part.find('{'); at != std::string_view::npos; at = part.find('{', at + 1)) {
+        for (std::size_t at = part.find('{'); at != std::string_view::npos;
+             at = part.find('{', at + 1)) {
             const auto end = part.find('}', at);
             REQUIRE(end != std::string_view::npos);
             finding.arguments.emplace_back(std::string(part.substr(at + 1, end - at - 1)),
@@ -31,7 +32,8 @@ Finding sampleOf(const Message& message) {
 
 } // namespace
 
-TEST_CASE("messages: each of the plant's says what is so and what to do, in any style", "[plant][messages]") {
+TEST_CASE("messages: each of the plant's says what is so and what to do, in any style",
+          "[plant][messages]") {
     const NumberStyle comma{',', false};
     std::set<std::string_view> codes;
     for (const auto* message : plant::messages()) {
@@ -57,7 +59,8 @@ TEST_CASE("messages: each of the plant's says what is so and what to do, in any 
 
 TEST_CASE("messages: the list holds every template of the header", "[plant][messages]") {
     std::ifstream in(HEADROOM_SOURCE_DIR "/engine/plant/messages.h");
-    const std::string header((std::istreambuf_iterator<char>(in)), std::istreambuf_iterator<char>());
+    const std::string header((std::istreambuf_iterator<char>(in)),
+                             std::istreambuf_iterator<char>());
     std::size_t declared = 0;
     for (std::size_t at = header.find("constexpr Message "); at != std::string::npos;
          at = header.find("constexpr Message ", at + 1)) {

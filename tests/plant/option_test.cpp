@@ -1,8 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "support/catch.h"
 #include "units/text.h"
+
+#include "project_support.h"
 
 using namespace headroom;
 using namespace headroom::plant;
@@ -51,11 +51,15 @@ TEST_CASE("options: a forgotten null is explained with the line to add", "[plant
     REQUIRE(hits.size() == 1);
     CHECK(hits.front().subject == "options/Rough/changes/plant/chambers/Shaft/shape/throttled");
     CHECK_THAT(text(hits.front()), ContainsSubstring("\"open\": null"));
-    const auto forms = withChanges(R"({"plant": {"conduits": {"Tunnel": {"reaches": {"rock": {"roughness_mm": 1}}}}}})");
+    const auto forms = withChanges(
+        R"({"plant": {"conduits": {"Tunnel": {"reaches": {"rock": {"roughness_mm": 1}}}}}})");
     const auto form = found(forms, "plant.forgotten-null");
     REQUIRE(form.size() == 1);
     CHECK_THAT(text(form.front()), ContainsSubstring("\"strickler\": null"));
-    CHECK(withChanges(R"({"plant": {"conduits": {"Tunnel": {"reaches": {"rock": {"strickler": null, "roughness_mm": 1}}}}}})").empty());
+    CHECK(
+        withChanges(
+            R"({"plant": {"conduits": {"Tunnel": {"reaches": {"rock": {"strickler": null, "roughness_mm": 1}}}}}})")
+            .empty());
 }
 
 TEST_CASE("options: changes of what is not there", "[plant][messages]") {
@@ -66,9 +70,11 @@ TEST_CASE("options: changes of what is not there", "[plant][messages]") {
     CHECK(hits.front().subject == "options/Rough/changes/plant/units/U2");
     CHECK_THAT(text(hits.front()), ContainsSubstring("“U1”") && ContainsSubstring("turbine"));
     CHECK_FALSE(has(lost, "plant.missing"));
-    CHECK(has(withChanges(R"({"plant": {"reservoirs": {"Ocean deep": {"lowest_m": 3}}}})"), "plant.patch-of-nothing"));
+    CHECK(has(withChanges(R"({"plant": {"reservoirs": {"Ocean deep": {"lowest_m": 3}}}})"),
+              "plant.patch-of-nothing"));
     CHECK(has(withChanges(R"({"plant": {"units": {"U7": null}}})"), "plant.nothing-to-remove"));
-    CHECK(has(withChanges(R"({"plant": {"unitz": {"U1": null}}})"), "plant.unknown-key-near", "options/Rough/changes/plant/unitz"));
+    CHECK(has(withChanges(R"({"plant": {"unitz": {"U1": null}}})"), "plant.unknown-key-near",
+              "options/Rough/changes/plant/unitz"));
     CHECK(has(withChanges(R"({"studies": {}})"), "plant.unknown-key"));
     CHECK(has(withChanges(R"({"plant": 5})"), "plant.mistyped", "options/Rough/changes/plant"));
 }
@@ -79,14 +85,15 @@ TEST_CASE("options: what still names a removed thing is listed once", "[plant][m
     const auto hits = found(findings, "plant.removed-but-used");
     REQUIRE(hits.size() == 1);
     CHECK(hits.front().subject == "options/Rough/changes/plant/points/Foot");
-    CHECK_THAT(text(hits.front()), ContainsSubstring("plant/conduits/Tunnel/to") &&
-                                       ContainsSubstring("plant/chambers/Shaft/at"));
+    CHECK_THAT(text(hits.front()), ContainsSubstring("plant/conduits/Tunnel/to")
+                                       && ContainsSubstring("plant/chambers/Shaft/at"));
     CHECK_FALSE(has(findings, "plant.undeclared"));
     CHECK_FALSE(has(findings, "plant.undeclared-near"));
 }
 
 TEST_CASE("options: a limit at a place that is gone is not a fault", "[plant][invariant]") {
-    const auto bound = bind(smallPlant().with(split("options/Rough/changes"), json(R"({"plant": {"chambers": {"Shaft": null}}})")));
+    const auto bound = bind(smallPlant().with(split("options/Rough/changes"),
+                                              json(R"({"plant": {"chambers": {"Shaft": null}}})")));
     INFO(support::texts(bound.findings));
     CHECK(bound.findings.empty());
     const auto without = variant(bound.project, 0);
@@ -97,10 +104,12 @@ TEST_CASE("options: a limit at a place that is gone is not a fault", "[plant][in
 }
 
 TEST_CASE("options: a study may name what only an option has", "[plant][invariant]") {
-    const auto tree = smallPlant()
-        .with(split("options/Rough/changes"), json(R"({"plant": {"units": {"U0": {"from": "Inlet", "to": "River",
+    const auto tree =
+        smallPlant()
+            .with(split("options/Rough/changes"),
+                  json(R"({"plant": {"units": {"U0": {"from": "Inlet", "to": "River",
             "turbine": {"orifice": {"ratedHead_m": 75, "ratedFlow_m3s": 1}}}}}})"))
-        .with(split("studies/Close/start/opening_pct"), json(R"({"U1": 100, "U0": 50})"));
+            .with(split("studies/Close/start/opening_pct"), json(R"({"U1": 100, "U0": 50})"));
     const auto bound = bind(tree);
     INFO(support::texts(bound.findings));
     REQUIRE(bound.findings.empty());
@@ -116,14 +125,17 @@ TEST_CASE("options: a study may name what only an option has", "[plant][invarian
 }
 
 TEST_CASE("options: a fault of the base is told once", "[plant][messages]") {
-    const auto findings = bind(smallPlant().with(split("plant/conduits/Pipe/to"), Tree::text("Inlt"))).findings;
+    const auto findings =
+        bind(smallPlant().with(split("plant/conduits/Pipe/to"), Tree::text("Inlt"))).findings;
     CHECK(found(findings, "plant.undeclared-near").size() == 1);
 }
 
 TEST_CASE("options: their faults point into their changes", "[plant][messages]") {
-    const auto findings = withChanges(R"({"plant": {"conduits": {"Tunnel": {"reaches": {"rock": {"strickler": 3000}}}}}})");
+    const auto findings = withChanges(
+        R"({"plant": {"conduits": {"Tunnel": {"reaches": {"rock": {"strickler": 3000}}}}}})");
     const auto hits = found(findings, "plant.out-of-range");
     REQUIRE(hits.size() == 1);
-    CHECK(hits.front().subject == "options/Rough/changes/plant/conduits/Tunnel/reaches/rock/strickler");
+    CHECK(hits.front().subject
+          == "options/Rough/changes/plant/conduits/Tunnel/reaches/rock/strickler");
     CHECK(hits.front().related.back() == "options/Rough");
 }

@@ -13,8 +13,8 @@ using namespace headroom::plant;
 
 const Tree& dorvane() {
     static const Tree tree = [] {
-        const auto opened = files::openProject(HEADROOM_SOURCE_DIR
-                                               "/studies/dorvane/Dorvane.headroom.json");
+        const auto opened =
+            files::openProject(HEADROOM_SOURCE_DIR "/studies/dorvane/Dorvane.headroom.json");
         if (!opened.usable()) {
             throw std::runtime_error(texts(opened.findings()));
         }

@@ -1,8 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "files/json_writer.h"
 #include "support/catch.h"
+
+#include "project_support.h"
 
 using namespace headroom;
 using namespace headroom::plant;
@@ -48,7 +48,8 @@ std::vector<Path> thingsOf(const Tree& tree) {
 
 } // namespace
 
-TEST_CASE("renamed: nothing is outdated by a new name, and it can be taken back", "[plant][invariant]") {
+TEST_CASE("renamed: nothing is outdated by a new name, and it can be taken back",
+          "[plant][invariant]") {
     const auto before = cells(bind(dorvane()).project);
     const std::string bytes = files::writeProject(dorvane());
     const auto things = thingsOf(dorvane());
@@ -76,10 +77,12 @@ TEST_CASE("renamed: the walk reaches every place that names the thing", "[plant]
     const std::string text = files::writeProject(*next);
     CHECK(text.find("\"U1\"") == std::string::npos);
     CHECK(next->at(split("options/Flywheel/changes/plant/units/Set 1/inertia/j_tm2")) != nullptr);
-    const auto kept = dorvane().with(split("ranges/Rough/of"), json(R"(["plant", "units", "U1", "inertia"])"));
+    const auto kept =
+        dorvane().with(split("ranges/Rough/of"), json(R"(["plant", "units", "U1", "inertia"])"));
     const auto moved = renamed(kept, split("plant/units/U1"), "Set 1");
     REQUIRE(moved);
-    CHECK(*moved->at(split("ranges/Rough/of")) == json(R"(["plant", "units", "Set 1", "inertia"])"));
+    CHECK(*moved->at(split("ranges/Rough/of"))
+          == json(R"(["plant", "units", "Set 1", "inertia"])"));
 }
 
 TEST_CASE("renamed: a bad or taken name is refused", "[plant][messages]") {

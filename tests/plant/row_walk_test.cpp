@@ -1,6 +1,4 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "project_support.h"
-
 #include "files/schema.h"
 #include "support/catch.h"
 #include "units/text.h"
@@ -8,6 +6,8 @@
 #include <functional>
 #include <map>
 #include <set>
+
+#include "project_support.h"
 
 using namespace headroom;
 using namespace headroom::plant;
@@ -21,9 +21,9 @@ const std::string sampleName = "Sample";
 /// A name of the demo that a reference row can give.
 std::string nameFor(const Field& row) {
     static const std::map<Collection, std::string> names{
-        {Collection::points, "Intake"},         {Collection::reservoirs, "Upper Dorvane"},
-        {Collection::conduits, "Headrace"},     {Collection::chambers, "Surge shaft"},
-        {Collection::units, "U1"},              {Collection::events, sampleName}};
+        {Collection::points, "Intake"},     {Collection::reservoirs, "Upper Dorvane"},
+        {Collection::conduits, "Headrace"}, {Collection::chambers, "Surge shaft"},
+        {Collection::units, "U1"},          {Collection::events, sampleName}};
     return names.at(row.collections.front());
 }
 
@@ -51,22 +51,34 @@ Tree sampleTable(const Field& row) {
 
 Tree sample(const Field& row) {
     switch (row.kind) {
-    case FieldKind::number: return Tree::number(middle(row));
-    case FieldKind::whole: return Tree::number(1);
-    case FieldKind::truth: return Tree::boolean(true);
-    case FieldKind::choice: return Tree::text(std::string(row.choices.front()));
-    case FieldKind::text: return Tree::text("words");
+    case FieldKind::number:
+        return Tree::number(middle(row));
+    case FieldKind::whole:
+        return Tree::number(1);
+    case FieldKind::truth:
+        return Tree::boolean(true);
+    case FieldKind::choice:
+        return Tree::text(std::string(row.choices.front()));
+    case FieldKind::text:
+        return Tree::text("words");
     case FieldKind::reference:
-    case FieldKind::location: return Tree::text(nameFor(row));
-    case FieldKind::references: return Tree::array({Tree::text(nameFor(row))});
-    case FieldKind::table: return sampleTable(row);
+    case FieldKind::location:
+        return Tree::text(nameFor(row));
+    case FieldKind::references:
+        return Tree::array({Tree::text(nameFor(row))});
+    case FieldKind::table:
+        return sampleTable(row);
     case FieldKind::interval:
         return Tree::array({Tree::number(middle(row) * 0.5), Tree::number(middle(row))});
     case FieldKind::group:
-    case FieldKind::oneOf: return sampleGroup(row);
-    case FieldKind::keyed: return Tree::object({{sampleName, sampleGroup(row)}});
-    case FieldKind::numbers: return Tree::object({{nameFor(row), Tree::number(middle(row))}});
-    default: return Tree::object({});
+    case FieldKind::oneOf:
+        return sampleGroup(row);
+    case FieldKind::keyed:
+        return Tree::object({{sampleName, sampleGroup(row)}});
+    case FieldKind::numbers:
+        return Tree::object({{nameFor(row), Tree::number(middle(row))}});
+    default:
+        return Tree::object({});
     }
 }
 
@@ -156,7 +168,8 @@ Tree treeWith(const Place& place) {
     static const Tree base = support::dorvane().without({"options"}); // quicker to bind
     Tree tree = base;
     for (std::size_t depth = 1; depth < place.path.size(); ++depth) {
-        const Path here(place.path.begin(), place.path.begin() + static_cast<std::ptrdiff_t>(depth));
+        const Path here(place.path.begin(),
+                        place.path.begin() + static_cast<std::ptrdiff_t>(depth));
         const Field* row = fieldAt(here);
         const Tree* there = tree.at(here);
         if (there == nullptr || !there->isObject()) {
@@ -174,9 +187,9 @@ Tree treeWith(const Place& place) {
 }
 
 Tree wrongType(const Field& row) {
-    const bool wordy = row.kind == FieldKind::text || row.kind == FieldKind::reference ||
-                       row.kind == FieldKind::choice || row.kind == FieldKind::location ||
-                       row.kind == FieldKind::references;
+    const bool wordy = row.kind == FieldKind::text || row.kind == FieldKind::reference
+                       || row.kind == FieldKind::choice || row.kind == FieldKind::location
+                       || row.kind == FieldKind::references;
     return wordy ? Tree::number(5) : Tree::text("wrong");
 }
 
@@ -218,8 +231,8 @@ TEST_CASE("Rows: there are many, and each can be reached by its path", "[plant][
     }
     CHECK(fieldAt({"plant", "units", "U1", "nonsense"}) == nullptr);
     CHECK(fieldAt({"options", "A", "changes", "studies"}) == nullptr);
-    CHECK(fieldAt({"options", "A", "changes", "plant", "units", "U1", "inertia", "j_tm2"}) ==
-          fieldAt({"plant", "units", "U1", "inertia", "j_tm2"}));
+    CHECK(fieldAt({"options", "A", "changes", "plant", "units", "U1", "inertia", "j_tm2"})
+          == fieldAt({"plant", "units", "U1", "inertia", "j_tm2"}));
     CHECK(fieldAt({"plant", "units", "U1", "note"}) != nullptr);
     CHECK(fieldAt({}) == nullptr);
 }
@@ -249,18 +262,20 @@ TEST_CASE("Rows: each explains itself and its ranges make sense", "[plant][messa
         const auto suffix = "_" + std::string(info(row.quantity).suffix);
         if (row.kind == FieldKind::number && suffix.size() > 1) {
             const auto part = suffix.substr(1);
-            CHECK((row.key.ends_with(suffix) || place.ownerKey.ends_with(suffix) ||
-                   row.key.starts_with(part)));
+            CHECK((row.key.ends_with(suffix) || place.ownerKey.ends_with(suffix)
+                   || row.key.starts_with(part)));
         }
     }
 }
 
 /// What the reading of one value can say; how things fit together is for other tests.
 const std::set<std::string_view> readingCodes{
-    "plant.mistyped", "plant.out-of-range", "plant.unusual", "plant.unknown-key",
-    "plant.unknown-key-near", "plant.unknown-choice", "plant.two-kinds", "plant.no-kind",
-    "plant.missing-form", "plant.undeclared", "plant.undeclared-near", "plant.wrong-collection",
-    "plant.table-row", "plant.table-order", "plant.table-range", "plant.table-too-short"};
+    "plant.mistyped",       "plant.out-of-range",     "plant.unusual",
+    "plant.unknown-key",    "plant.unknown-key-near", "plant.unknown-choice",
+    "plant.two-kinds",      "plant.no-kind",          "plant.missing-form",
+    "plant.undeclared",     "plant.undeclared-near",  "plant.wrong-collection",
+    "plant.table-row",      "plant.table-order",      "plant.table-range",
+    "plant.table-too-short"};
 
 TEST_CASE("Rows: a good value of each binds without a fault there", "[plant][invariant]") {
     for (const auto& place : places()) {
@@ -279,7 +294,8 @@ TEST_CASE("Rows: a wrong type is said at its place", "[plant][messages]") {
         if (place.row->kind == FieldKind::free) {
             continue;
         }
-        const auto findings = bind(treeWith(place).with(place.path, wrongType(*place.row))).findings;
+        const auto findings =
+            bind(treeWith(place).with(place.path, wrongType(*place.row))).findings;
         INFO(join(place.path) << "\n" << support::texts(findings));
         CHECK(has(findings, "plant.mistyped", join(place.path)));
     }
@@ -301,7 +317,8 @@ TEST_CASE("Rows: below and above the range are said with the unit", "[plant][mes
             INFO(join(place.path) << "\n" << support::texts(findings));
             const auto hits = found(findings, "plant.out-of-range", join(place.path));
             REQUIRE(hits.size() == 1);
-            CHECK_THAT(text(hits.front()), ContainsSubstring(std::string(info(row.quantity).symbol)));
+            CHECK_THAT(text(hits.front()),
+                       ContainsSubstring(std::string(info(row.quantity).symbol)));
         }
         for (const double si : {row.hard->low, row.hard->high}) { // the ends are allowed
             const double file = fromSi(row.quantity, si);
@@ -324,9 +341,9 @@ TEST_CASE("Rows: what is required is missed", "[plant][messages]") {
         const auto findings = bind(treeWith(place).without(place.path)).findings;
         const Path parent(place.path.begin(), place.path.end() - 1);
         INFO(join(place.path) << "\n" << support::texts(findings));
-        CHECK((has(findings, "plant.missing", join(place.path)) ||
-               has(findings, "plant.missing-form", join(parent)) ||
-               has(findings, "plant.no-kind", join(parent))));
+        CHECK((has(findings, "plant.missing", join(place.path))
+               || has(findings, "plant.missing-form", join(parent))
+               || has(findings, "plant.no-kind", join(parent))));
     }
     CHECK(checked > 80);
 }

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "plant/tree.h"
-
 #include "base/ensure.h"
+#include "plant/tree.h"
 #include "support/catch.h"
 
 #include <malloc.h>
@@ -57,9 +56,9 @@ TEST_CASE("Tree: with makes what is missing, without takes it back", "[plant][in
 }
 
 TEST_CASE("Tree: renaming keeps the place of a member", "[plant][invariant]") {
-    const Tree tree = Tree::object({{"p", Tree::object({{"1", Tree::number(1)},
-                                                        {"2", Tree::number(2)},
-                                                        {"3", Tree::number(3)}})}});
+    const Tree tree = Tree::object(
+        {{"p",
+          Tree::object({{"1", Tree::number(1)}, {"2", Tree::number(2)}, {"3", Tree::number(3)}})}});
     const Tree renamed = tree.renamed({"p"}, "2", "two");
     REQUIRE(renamed.find("p")->members().size() == 3);
     CHECK(renamed.find("p")->members()[1].first == "two");
@@ -91,15 +90,15 @@ TEST_CASE("Tree: a thousand edits beside a long table cost little", "[plant][inv
     std::vector<Tree> history;
     Tree plant = Tree::object({});
     for (int i = 0; i < 60; ++i) {
-        plant = plant.with({"plant", "conduits", "C" + std::to_string(i), "length_m"},
-                           Tree::number(i));
+        plant =
+            plant.with({"plant", "conduits", "C" + std::to_string(i), "length_m"}, Tree::number(i));
     }
     history.push_back(plant.with({"ground"}, rowsOf(rows)));
     const std::size_t before = heapInUse();
     for (int i = 0; i < 1000; ++i) {
-        history.push_back(history.back().with(
-            {"plant", "conduits", "C" + std::to_string(i % 60), "length_m"},
-            Tree::number(1000 + i)));
+        history.push_back(
+            history.back().with({"plant", "conduits", "C" + std::to_string(i % 60), "length_m"},
+                                Tree::number(1000 + i)));
     }
     const std::size_t grown = heapInUse() - before;
     CAPTURE(rows, grown);
@@ -119,6 +118,7 @@ TEST_CASE("Tree: an outer table goes along with its object", "[plant][invariant]
     CHECK(carried.outerTable()->rows() == 2);
     const Tree project = Tree::object({{"ground", carried}}).with({"title"}, Tree::text("x"));
     CHECK(project.find("ground")->outerTable() == table.get());
-    CHECK(mergePatch(project, Tree::object({{"title", Tree::text("y")}}))
-              .find("ground")->outerTable() == table.get());
+    CHECK(
+        mergePatch(project, Tree::object({{"title", Tree::text("y")}})).find("ground")->outerTable()
+        == table.get());
 }
