@@ -14,6 +14,10 @@ function(headroom_test name)
   foreach(used IN LISTS TEST_USES)
     target_link_libraries(test_${name} PRIVATE headroom_${used})
   endforeach()
+  # What a test measures is compiled on its own floor; the test's own words need no optimiser.
+  # -Wrestrict raises false alarms over std::string in this compiler (GCC bug 105651).
+  target_compile_options(test_${name} PRIVATE $<$<CONFIG:Release>:-O1>
+    $<$<CXX_COMPILER_ID:GNU>:-Wno-restrict>)
   target_compile_definitions(test_${name} PRIVATE
     HEADROOM_SOURCE_DIR="${CMAKE_SOURCE_DIR}" HEADROOM_BUILD_DIR="${CMAKE_BINARY_DIR}")
   add_test(NAME ${name} COMMAND test_${name} --order rand --rng-seed time)
