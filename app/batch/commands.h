@@ -18,11 +18,12 @@ enum class Exit {
 
 /// What the user chose on the command line; empty lists mean all.
 struct Call {
-    std::string project;
-    std::vector<std::string> options, studies;
-    std::string out;  ///< folder for results; "" for none
-    std::string part; ///< "i/n", or ""
+    std::string project{};
+    std::vector<std::string> options{}, studies{};
+    std::string out{};  ///< folder for results; "" for none
+    std::string part{}; ///< "i/n", or ""
     int jobs = 0;     ///< threads; 0: all cores
+    int traceRows = 0; ///< most rows of a trace file; 0: the usual number
     bool json = false;
     bool strict = false;
 };

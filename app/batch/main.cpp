@@ -50,6 +50,8 @@ int answer(int count, char** words) {
     run->add_option("--out", call.out, "folder for the results");
     run->add_option("--jobs", call.jobs, "runs at a time; all cores if left out")
         ->check(CLI::Range(1, 1024));
+    run->add_option("--trace-rows", call.traceRows, "most rows of a trace file (6000)")
+        ->check(CLI::Range(2, 10000000));
     run->add_option("--part", call.part, "i/n: only every n-th cell, beginning with the i-th");
     run->add_flag("--strict", call.strict, "end with 1 if a limit is broken");
     program.add_subcommand("schema", "prints the JSON Schema of project files")

@@ -79,9 +79,9 @@ Findings makeFolder(const std::filesystem::path& folder) {
              .arguments = {{"folder", folder.string()}, {"reason", fault.message()}}}};
 }
 
-Findings write(const std::filesystem::path& folder, const Snapshot& snapshot,
-               const std::vector<Cell>& cells, const TracePaths& paths,
-               const std::string& verdicts) {
+Findings write(const Call& call, const Snapshot& snapshot, const std::vector<Cell>& cells,
+               const TracePaths& paths, const std::string& verdicts) {
+    const std::filesystem::path folder = call.out;
     Findings findings = makeFolder(folder);
     if (!findings.empty()) {
         return findings;
@@ -89,7 +89,8 @@ Findings write(const std::filesystem::path& folder, const Snapshot& snapshot,
     const auto add = [&](Findings more) {
         findings.insert(findings.end(), more.begin(), more.end());
     };
-    add(writeTraceFiles(folder, snapshot, cells, paths));
+    add(writeTraceFiles(folder, snapshot, cells, paths,
+                        call.traceRows > 0 ? call.traceRows : usualTraceRows));
     add(files::replaceFile(folder / "summary.txt", summaryText(snapshot, cells)));
     add(files::replaceFile(folder / "verdicts.json", verdicts)); // last: what it names is there
     return findings;
@@ -143,7 +144,7 @@ Exit run(const Call& call) {
         return keepsTraces ? paths.of(cell) : std::string();
     });
     if (keepsTraces) {
-        const auto findings = write(call.out, snapshot, judged, paths, verdicts);
+        const auto findings = write(call, snapshot, judged, paths, verdicts);
         tell(findings);
         if (anyError(findings)) {
             return Exit::wrongInput;

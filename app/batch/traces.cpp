@@ -37,7 +37,8 @@ std::string TracePaths::of(const studies::Cell& cell) const {
 }
 
 Findings writeTraceFiles(const std::filesystem::path& folder, const studies::Snapshot& snapshot,
-                         const std::vector<studies::Cell>& cells, const TracePaths& paths) {
+                         const std::vector<studies::Cell>& cells, const TracePaths& paths,
+                         int mostRows) {
     Findings findings;
     for (const auto& cell : cells) {
         const auto path = paths.of(cell);
@@ -45,7 +46,7 @@ Findings writeTraceFiles(const std::filesystem::path& folder, const studies::Sna
             continue;
         }
         const auto text =
-            files::writeTraces(*cell.stored->run, snapshot.variant(cell.option).plant);
+            files::writeTraces(*cell.stored->run, snapshot.variant(cell.option).plant, mostRows);
         for (auto& finding : files::replaceFile(folder / path, text)) {
             findings.push_back(std::move(finding));
         }

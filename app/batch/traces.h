@@ -24,8 +24,12 @@ private:
     std::map<std::pair<int, int>, std::string> paths_;
 };
 
+/// Rows of a trace file unless the user asks for others; enough for any plot.
+inline constexpr int usualTraceRows = 6000;
+
 /// Writes the trace file of every cell that has one below `folder`.
 Findings writeTraceFiles(const std::filesystem::path& folder, const studies::Snapshot& snapshot,
-                         const std::vector<studies::Cell>& cells, const TracePaths& paths);
+                         const std::vector<studies::Cell>& cells, const TracePaths& paths,
+                         int mostRows);
 
 } // namespace headroom::batch

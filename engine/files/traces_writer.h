@@ -9,9 +9,10 @@
 namespace headroom::files {
 
 /// A run's traces as CSV (RFC 4180): first column "time [s]", then one column for each channel,
-/// "Surge shaft, Water level [m]". Where a quantity rings within the recording intervals, two
-/// more columns give the least and the greatest of each interval, so that no peak is lost.
+/// "Surge shaft, Water level [m]". Where a quantity rings between two rows, two more columns give
+/// the least and the greatest since the row before, so that no peak is lost.
 /// @param plant the one that was run, for the names
-std::string writeTraces(const results::Run& run, const plant::Plant& plant);
+/// @param mostRows recording intervals are taken together until no more rows are needed
+std::string writeTraces(const results::Run& run, const plant::Plant& plant, int mostRows);
 
 } // namespace headroom::files

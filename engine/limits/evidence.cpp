@@ -120,6 +120,24 @@ std::optional<Evidence> untilFromTrace(const Channel& channel, Side side, double
     return found;
 }
 
+/// Whether an order or a breaker moves the quantity at once, so that a jump beside its extreme is
+/// the quantity itself and not something that a finer step would show.
+bool switches(Measure measure) {
+    return measure == Measure::openingRate || measure == Measure::terminalPower ||
+           measure == Measure::gridPower;
+}
+
+/// S of an extreme. A quantity that switches jumps on one side of its extreme at most and is
+/// steady on the other: there the smaller of the two sides counts.
+double stepBeside(const Channel& channel, const results::Extreme& extreme) {
+    if (!switches(channel.measure)) {
+        return extreme.largestStep;
+    }
+    const auto& around = extreme.around;
+    const auto change = [&](std::size_t i) { return std::abs(around[i + 1] - around[i]); };
+    return std::min(std::max(change(0), change(1)), std::max(change(2), change(3)));
+}
+
 std::optional<Evidence> fromChannel(const Source& source, Side side, const Run& run,
                                     double until_s) {
     const Channel& channel = *source.channel;
@@ -128,7 +146,7 @@ std::optional<Evidence> fromChannel(const Source& source, Side side, const Run& 
     if (extreme.time_s <= until_s) {
         found.extreme = extreme.value;
         found.time_s = extreme.time_s;
-        found.largestStep = extreme.largestStep;
+        found.largestStep = stepBeside(channel, extreme);
     } else if (const auto before = untilFromTrace(channel, side, run.recordInterval_s, until_s)) {
         found = *before;
     } else {

@@ -17,7 +17,10 @@ struct Evidence {
     double rest = 0.0;
     double extreme = 0.0;
     double time_s = 0.0;
-    double largestStep = 0.0;               ///< S around the extreme
+    double largestStep = 0.0;               ///< largest change in one step around the extreme
+    /// The extreme with its neighbours as the run tracked it, before `scale` and `offset`;
+    /// nullptr: from a trace or an envelope.
+    const results::Extreme* tracked = nullptr;
     const results::Trace* trace = nullptr;  ///< nullptr: no trace at this place
     double scale = 1.0;                     ///< > 0; a traced value times this …
     double offset = 0.0;                    ///< … plus this is the measure

@@ -45,9 +45,13 @@ bool judgeTime(Verdict& verdict, const Case& the, const Evidence& traced, const 
                double until_s) {
     const auto& limit = the.limit;
     const bool timed = limit.timeRule != plant::TimeRule::momentary && limit.allowed_s > 0.0;
+    const bool neverOut = verdict.margin - verdict.uncertainty >= 0.0;
     if (traced.trace == nullptr) {
-        verdict.outsideKnown = verdict.margin - verdict.uncertainty >= 0.0;
-        return !timed || verdict.outsideKnown;
+        verdict.outsideKnown = neverOut;
+        return !timed || neverOut;
+    }
+    if (!timed && neverOut) {
+        return true;
     }
     const double inward = verdict.uncertainty * (verdict.upper ? -1.0 : 1.0);
     const auto outside_s = [&](double bound) {
@@ -131,7 +135,11 @@ Verdict judgeSide(Verdict verdict, const Case& the, Side side, const Bound& boun
     verdict.alreadyBrokenAtRest = added.sign() * (added.to(reported.rest) - bound.value) > 0.0;
     Uncertainty parts;
     if (fine) {
-        parts.numerical = numericalUncertainty(coarse->extreme, fine->extreme, fine->largestStep) *
+        const double step = coarse->tracked != nullptr && fine->tracked != nullptr
+                                ? fine->scale * stepNear(the.limit.measure, *coarse->tracked,
+                                                         *fine->tracked)
+                                : fine->largestStep;
+        parts.numerical = numericalUncertainty(coarse->extreme, fine->extreme, step) *
                           added.slope(fine->extreme);
     }
     parts.model = modelUncertainty(the.limit, plant, the.place);

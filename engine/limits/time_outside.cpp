@@ -84,8 +84,9 @@ double valueExceededFor(const Evidence& evidence, Side side, plant::TimeRule rul
     if (spent_s(mild) <= allowed_s) {
         return mild;
     }
-    // Halving 60 times resolves any double; stop as soon as the two meet.
-    for (int i = 0; i < 60 && std::abs(severe - mild) > 1e-9 * (1.0 + std::abs(severe)); ++i) {
+    // A trace is in single precision; 24 halvings of its range go below that.
+    constexpr int halvings = 24;
+    for (int i = 0; i < halvings; ++i) {
         const double middle = 0.5 * (mild + severe);
         (spent_s(middle) <= allowed_s ? severe : mild) = middle;
     }

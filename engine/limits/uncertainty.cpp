@@ -2,7 +2,9 @@
 #include "limits/uncertainty.h"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
+#include <functional>
 
 namespace headroom::limits {
 
@@ -47,7 +49,45 @@ double chartUncertainty(Measure measure, const plant::FrancisTurbine& turbine) {
     }
 }
 
+bool mayJump(Measure measure) {
+    switch (measure) {
+    case Measure::terminalPower:
+    case Measure::gridPower:
+    case Measure::openingRate:
+    case Measure::frequencyRate:
+        return true;
+    default:
+        return false;
+    }
+}
+
+/// Changes from step to step around an extreme, the largest first.
+std::array<double, 4> changes(const results::Extreme& extreme) {
+    std::array<double, 4> sorted{};
+    for (std::size_t i = 0; i < sorted.size(); ++i) {
+        sorted[i] = std::abs(extreme.around[i + 1] - extreme.around[i]);
+    }
+    std::sort(sorted.begin(), sorted.end(), std::greater<>());
+    return sorted;
+}
+
 } // namespace
+
+double stepNear(Measure measure, const results::Extreme& coarse, const results::Extreme& fine) {
+    if (!mayJump(measure)) {
+        return fine.largestStep;
+    }
+    // At half the step a slope changes by half, a jump by all of itself; between them lies 3/4.
+    constexpr double shrinks = 0.75;
+    constexpr std::size_t mostJumps = 2; // up and down again
+    const auto before = changes(coarse);
+    const auto now = changes(fine);
+    std::size_t i = 0;
+    while (i < mostJumps && now[i] > shrinks * before[i]) {
+        ++i;
+    }
+    return now[i];
+}
 
 double Uncertainty::total() const {
     return std::sqrt(numerical * numerical + parameters * parameters + model * model);

@@ -22,6 +22,12 @@ struct Uncertainty {
 /// `resources/theory/verdicts.md`, section "Numerical uncertainty".
 double numericalUncertainty(double coarse, double fine, double largestStep);
 
+/// S of an extreme that both runs tracked: the largest change in one step within two steps of it in
+/// the finer run. Of quantities that jump by their nature (electrical power at a breaker, rates at
+/// a dead time's end) up to two changes that are as large with the halved step as before are left
+/// out: both runs resolve such a jump, and its size is no error. `verdicts.md`, same section.
+double stepNear(Measure measure, const results::Extreme& coarse, const results::Extreme& fine);
+
 /// What a synthetic Francis chart leaves open in the speed of its unit [pu of rated] and in the
 /// heads beside it [m] when the project gives no own values. Spread of a rejection over the free
 /// shape parameters of the chart (runaway speed, no-load and standstill flow), derived here.

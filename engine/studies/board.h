@@ -48,6 +48,8 @@ enum class CellState {
     failed,        ///< the run ended early: `reason` says why
 };
 
+struct CellInputs;
+
 struct Cell {
     int option = -1;  ///< -1: the base
     int study = 0;
@@ -57,6 +59,7 @@ struct Cell {
     std::shared_ptr<const StoredRun> stored;     ///< of this fingerprint, or nullptr
     std::vector<results::Verdict> verdicts;      ///< one a limit, also when not run
     std::optional<Finding> reason;
+    std::shared_ptr<const CellInputs> inputs;    ///< of the snapshot it was judged in
 };
 
 /// Fingerprints that a cell had before its present one, the latest first.
@@ -87,16 +90,19 @@ struct Snapshot {
     }
     int options() const { return static_cast<int>(variants.size()) - 1; }
     int studies() const { return project().studies.size(); }
-    const CellInputs& inputs(int option, int study) const {
-        return *cells[static_cast<std::size_t>((option + 1) * studies() + study)];
+    const std::shared_ptr<const CellInputs>& sharedInputs(int option, int study) const {
+        return cells[static_cast<std::size_t>((option + 1) * studies() + study)];
     }
+    const CellInputs& inputs(int option, int study) const { return *sharedInputs(option, study); }
     const std::string& optionName(int option) const { return variant(option).name; }
     const std::string& studyName(int study) const { return project().studies.name(study); }
 };
 std::shared_ptr<const Snapshot> makeSnapshot(plant::Bound bound,
                                              const Snapshot* previous = nullptr);
 
-/// Judges one cell from what the store has. Does not run anything.
-Cell judgeCell(const Snapshot& snapshot, int option, int study, const RunStore& store);
+/// Judges one cell from what the store has. Does not run anything. Where inputs, limits and stored
+/// run are those of `before`, its verdicts are taken over instead of made again.
+Cell judgeCell(const Snapshot& snapshot, int option, int study, const RunStore& store,
+               const Cell* before = nullptr);
 
 } // namespace headroom::studies

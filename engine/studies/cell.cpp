@@ -53,6 +53,14 @@ void describe(Cell& cell, const Snapshot& snapshot) {
     }
 }
 
+/// Whether what was judged before still holds: the same inputs (which are shared only with the
+/// same variant, limits included) and the same stored run.
+bool stillHolds(const Cell& before, const std::shared_ptr<const CellInputs>& inputs,
+                const RunStore& store) {
+    return before.inputs == inputs && before.stored != nullptr &&
+           before.stored == store.find(inputs->fingerprint);
+}
+
 /// Every limit as not applicable, for a cell that has nothing to run.
 void refuseAll(Cell& cell) {
     for (auto& verdict : cell.verdicts) {
@@ -63,10 +71,19 @@ void refuseAll(Cell& cell) {
 
 } // namespace
 
-Cell judgeCell(const Snapshot& snapshot, int option, int study, const RunStore& store) {
-    const auto& inputs = snapshot.inputs(option, study);
+Cell judgeCell(const Snapshot& snapshot, int option, int study, const RunStore& store,
+               const Cell* before) {
+    const auto& shared = snapshot.sharedInputs(option, study);
+    const auto& inputs = *shared;
     const auto& variant = snapshot.variant(option);
     Cell cell;
+    if (before != nullptr && stillHolds(*before, shared, store)) {
+        cell = *before;
+        cell.option = option;
+        cell.study = study;
+        return cell;
+    }
+    cell.inputs = shared;
     cell.option = option;
     cell.study = study;
     cell.fingerprint = inputs.fingerprint;

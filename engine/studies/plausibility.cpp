@@ -3,6 +3,7 @@
 
 #include "base/constants.h"
 #include "hydraulics/hammer_formulas.h"
+#include "hydraulics/losses.h"
 #include "hydraulics/surge_formulas.h"
 #include "machines/factors.h"
 #include "simulation/conduit_geometry.h"
@@ -100,7 +101,6 @@ private:
 
     void conduitRows(int i) {
         const auto& name = plant_.conduits.name(i);
-        const auto& conduit = plant_.conduits[i];
         const auto flow = flowOf(i);
         const double speed_mps = line(i).waveSpeed_mps();
         if (flow) {
@@ -108,10 +108,7 @@ private:
             add(name, "Discharge", "Q", Quantity::discharge, {}, flow, "");
             add(name, "Velocity", "v", Quantity::velocity, velocity_mps, {},
                 "discharge over the smallest area");
-            const auto above = rest_.find(Measure::head, {Thing::point, conduit.from.index});
-            const auto below = rest_.find(Measure::head, {Thing::point, conduit.to.index});
-            add(name, "Loss of head", "h", Quantity::head, loss_m(i, *flow),
-                above && below ? std::optional(*above - *below) : std::nullopt,
+            add(name, "Loss of head", "h", Quantity::head, loss_m(i, *flow), {},
                 "friction and single losses at this discharge");
             add(name, "Rise for an instant stop", "", Quantity::head,
                 hydraulics::joukowskyRise_m(speed_mps, -velocity_mps, g()), {},
@@ -161,6 +158,22 @@ private:
         return {};
     }
 
+    /// The same up to a reservoir, past chambers.
+    std::vector<int> wayToReservoir(int point) const {
+        auto way = wayToSurface(point, true);
+        while (!way.empty() && !hasReservoir(upperEnd(way))) {
+            const auto more = wayToSurface(upperEnd(way), true);
+            if (more.empty()) {
+                return {};
+            }
+            way.insert(way.end(), more.begin(), more.end());
+        }
+        return way;
+    }
+    int upperEnd(const std::vector<int>& way) const {
+        return plant_.conduits[way.back()].from.index;
+    }
+
     double inertia_1m(const std::vector<int>& way) const {
         double sum = 0.0;
         for (const int conduit : way) {
@@ -174,6 +187,18 @@ private:
         double sum = 0.0;
         for (const int conduit : way) {
             sum += loss_m(conduit, flow_m3s);
+        }
+        return sum;
+    }
+    /// Each conduit with its own discharge; nothing if one is not known.
+    std::optional<double> ownLosses_m(const std::vector<int>& way) const {
+        double sum = 0.0;
+        for (const int conduit : way) {
+            const auto flow = flowOf(conduit);
+            if (!flow) {
+                return std::nullopt;
+            }
+            sum += loss_m(conduit, *flow);
         }
         return sum;
     }
@@ -193,6 +218,18 @@ private:
         return rows.back().second;
     }
 
+    std::optional<double> levelByHand_m(const plant::Chamber& chamber) const {
+        const auto way = wayToReservoir(chamber.at.index);
+        const auto loss_m = ownLosses_m(way);
+        if (way.empty() || !loss_m) {
+            return std::nullopt;
+        }
+        const auto& last = line(way.front()).pieces.back();
+        const double share = medium_.velocityHeads ? chamber.velocityShare.value_or(1.0) : 0.0;
+        return *surfaceAt(upperEnd(way)) - *loss_m -
+               hydraulics::chamberHeadDrop_m(share, *flowOf(way.front()), last.area_m2, g());
+    }
+
     void chamberRows(int i) {
         const auto& name = plant_.chambers.name(i);
         const auto& chamber = plant_.chambers[i];
@@ -200,7 +237,8 @@ private:
         if (!level) {
             return;
         }
-        add(name, "Level", "", Quantity::elevation, {}, level, "");
+        add(name, "Level", "", Quantity::elevation, levelByHand_m(chamber), level,
+            "reservoir less the losses up to here and the tunnel's velocity head");
         auto way = wayToSurface(chamber.at.index, true);
         const bool upstream = !way.empty();
         if (!upstream) {
@@ -278,16 +316,24 @@ private:
 
     /// Upper reservoir less tailwater, along ways that do not fork.
     std::optional<double> grossHead_m(const plant::Unit& unit) const {
-        auto way = wayToSurface(unit.from.index, true);
-        while (!way.empty() && !hasReservoir(plant_.conduits[way.back()].from.index)) {
-            way = wayToSurface(plant_.conduits[way.back()].from.index, true);
-        }
-        const auto upper = way.empty() ? surfaceAt(unit.from.index)
-                                       : surfaceAt(plant_.conduits[way.back()].from.index);
+        const auto way = wayToReservoir(unit.from.index);
+        const auto upper = surfaceAt(way.empty() ? unit.from.index : upperEnd(way));
         const auto lower = unit.to.collection == plant::Collection::reservoirs
                                ? levelOf(unit.to.index)
                                : surfaceAt(unit.to.index);
         return upper && lower ? std::optional(*upper - *lower) : std::nullopt;
+    }
+
+    /// Gross head less the losses on the way and the velocity head at the draft tube's outlet.
+    std::optional<double> netHead_m(const plant::Unit& unit, std::optional<double> flow) const {
+        const auto gross = grossHead_m(unit);
+        const auto loss_m = ownLosses_m(wayToReservoir(unit.from.index));
+        if (!gross || !loss_m || !flow) {
+            return std::nullopt;
+        }
+        const bool outlet = unit.draftTube && medium_.velocityHeads;
+        return *gross - *loss_m -
+               (outlet ? hydraulics::velocityHead_m(*flow, unit.draftTube->area_m2, g()) : 0.0);
     }
 
     void unitRows(int i) {
@@ -296,7 +342,11 @@ private:
         const Place place{Thing::unit, i};
         add(name, "Gross head", "", Quantity::head, grossHead_m(unit), {},
             "upper reservoir less tailwater");
-        for (const auto measure : {Measure::netHead, Measure::discharge, Measure::opening,
+        add(name, "Net head", "", Quantity::head,
+            netHead_m(unit, rest_.find(Measure::discharge, place)),
+            rest_.find(Measure::netHead, place),
+            "gross head less losses and the velocity head at the draft tube's outlet");
+        for (const auto measure : {Measure::discharge, Measure::opening,
                                    Measure::speed, Measure::shaftPower}) {
             if (const auto value = rest_.find(measure, place)) {
                 add(name, std::string(info(measure).label), "", info(measure).quantity, {}, value,

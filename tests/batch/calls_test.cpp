@@ -108,7 +108,7 @@ TEST_CASE("calls: what only the models show is found before anything is run", "[
     const auto chart = changedDemo(folder,
                                    {"plant", "units", "U1", "turbine", "francis", "chart",
                                     "fromRatedData", "runaway_pu"},
-                                   plant::Tree::number(2.9));
+                                   plant::Tree::number(1.21));
     const auto refused = call({"run", chart, "--out", out.string()});
     CAPTURE(refused.err);
     CHECK(refused.exit == 2);

@@ -22,6 +22,27 @@ TEST_CASE("U_num: the change at halving plus the largest step near the extreme",
     CHECK_THAT(numericalUncertainty(456.0, 456.1, 0.03), WithinAbs(0.13, 1e-12));
 }
 
+TEST_CASE("S: a jump that both runs resolve is no error, a slope is", "[limits][limit]") {
+    results::Extreme coarse, fine;
+    coarse.around = {115.2, 115.3, 115.4, 0.0, 0.0}; // the breaker opens
+    fine.around = {115.30, 115.35, 115.40, 0.0, 0.0};
+    coarse.largestStep = fine.largestStep = 115.4;
+    using limits::stepNear;
+    CHECK_THAT(stepNear(Measure::terminalPower, coarse, fine), WithinAbs(0.05, 1e-9));
+    // A head does not jump by its nature: what looks like it stays in.
+    CHECK(stepNear(Measure::head, coarse, fine) == 115.4);
+    // A steep slope halves with the step and stays in.
+    coarse.around = {0.0, 0.0, 2.0, 0.0, 0.0};
+    fine.around = {0.0, 0.0, 1.0, 0.0, 0.0};
+    CHECK(stepNear(Measure::openingRate, coarse, fine) == 1.0);
+    // Not more than two are taken for jumps.
+    fine.around = coarse.around = {0.0, 3.0, 0.0, 3.0, 0.0};
+    CHECK(stepNear(Measure::openingRate, coarse, fine) == 3.0);
+    // At rest nothing changes.
+    fine.around = coarse.around = {1.0, 1.0, 1.0, 1.0, 1.0};
+    CHECK(stepNear(Measure::gridPower, coarse, fine) == 0.0);
+}
+
 TEST_CASE("U_mod: never zero beside a chart made from rated data", "[limits][limit]") {
     // Default ±0.007 of speed and ±0.4 m: spread over the chart's free shape parameters,
     // derived here (recipes of the synthetic chart).

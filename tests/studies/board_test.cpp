@@ -164,6 +164,21 @@ TEST_CASE("cell: a changed limit judges again what was run", "[studies][limit]")
     CHECK(cell.verdicts[0].mark == Mark::held);
 }
 
+TEST_CASE("cell: what did not change is not judged again, what did is", "[studies][invariant]") {
+    const auto store = makeMemoryStore();
+    const auto tree = small::projectTree();
+    const auto first = small::snapshot(tree);
+    keep(*store, *first, -1, 0);
+    auto before = judgeCell(*first, -1, 0, *store);
+    before.verdicts[0].share = 123.0; // to be recognised by
+    const auto title = small::snapshot(tree.with({"title"}, Tree::text("Other")), first.get());
+    CHECK(judgeCell(*title, -1, 0, *store, &before).verdicts[0].share == 123.0);
+    const auto laxer = small::snapshot(tree.with(small::shaftBound, Tree::number(120)), first.get());
+    CHECK(judgeCell(*laxer, -1, 0, *store, &before).verdicts[0].share != 123.0);
+    keep(*store, *first, -1, 0); // run anew
+    CHECK(judgeCell(*title, -1, 0, *store, &before).verdicts[0].share != 123.0);
+}
+
 TEST_CASE("cell: what was stopped, and what could not be computed, says so", "[studies][limit]") {
     const auto store = makeMemoryStore();
     const auto snapshot = small::snapshot(small::projectTree());
