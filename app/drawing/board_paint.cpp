@@ -12,7 +12,8 @@ using Scene = BoardPicture::Scene;
 constexpr float fillStrength = 0.22F;
 
 void paintColumn(QPainter& painter, const BoardColumn& column, const Look& look) {
-    const QFont font = look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
+    const QFont font =
+        look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
     const QFontMetricsF metrics(font);
     painter.setFont(font);
     painter.setPen(column.inHand ? look.accent : look.text);
@@ -25,11 +26,11 @@ void paintColumn(QPainter& painter, const BoardColumn& column, const Look& look)
     }
     painter.save();
     painter.translate(column.pivot);
-    painter.rotate(-slant_deg);
+    painter.rotate(slant_deg);
     const double line = look.lineHeight(TextSize::small);
     double y = -line * static_cast<double>(column.lines.size()) + metrics.ascent();
     for (const auto& words : column.lines) {
-        painter.drawText(QPointF(0, y), words);
+        painter.drawText(QPointF(-metrics.horizontalAdvance(words), y), words);
         y += line;
     }
     painter.restore();
@@ -73,7 +74,9 @@ void BoardPicture::paint(QPainter& painter) const {
         painter.setPen(look.hairPen(look.line));
         painter.drawLine(row.row.bottomLeft(), row.row.bottomRight());
         paintPlain(painter, row.letter, look, Qt::AlignLeft);
-        paintPlain(painter, row.name, look, Qt::AlignLeft);
+        for (const auto& line : row.name) {
+            paintPlain(painter, line, look, Qt::AlignLeft);
+        }
     }
     painter.setPen(look.hairPen(look.line));
     painter.drawLine(QPointF(0, scene.headerBottom), QPointF(scene.width, scene.headerBottom));

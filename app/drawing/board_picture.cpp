@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/board_scene.h"
-
 #include "drawing/words.h"
 #include "limits/judge.h"
 #include "units/text.h"
@@ -8,6 +7,7 @@
 #include <QFontMetricsF>
 #include <QStringList>
 #include <QTransform>
+
 #include <algorithm>
 #include <cmath>
 #include <numbers>
@@ -18,18 +18,19 @@ namespace {
 
 using Scene = BoardPicture::Scene;
 
-constexpr double narrowest = 40.0, widest = 66.0; ///< columns
-constexpr double leastRow = 0.86;                 ///< share of the usual height
-constexpr double slantedMost_px = 78.0;           ///< longest slanted line
+constexpr double narrowest = 40.0, easy = 48.0, widest = 66.0; ///< columns
+constexpr double narrowMark = 0.36;                            ///< share of the cell's width
+constexpr double leastRow = 0.86;                              ///< share of the usual height
+constexpr double slantedMost_px = 84.0;                        ///< longest slanted line
 
 struct Making {
     const BoardInput& input;
     Scene& scene;
     BoardPicture& picture;
-    double left = 0.0;    ///< where the columns begin
-    double pitch = 0.0;   ///< of the columns
-    double top = 0.0;     ///< where the rows begin
-    double height = 0.0;  ///< of a row
+    double left = 0.0;   ///< where the columns begin
+    double pitch = 0.0;  ///< of the columns
+    double top = 0.0;    ///< where the rows begin
+    double height = 0.0; ///< of a row
 };
 
 QString optionName(const studies::Snapshot& snapshot, int option) {
@@ -88,8 +89,8 @@ Header headerFor(const studies::Snapshot& snapshot, const Look& look, double pit
     header.slanted = header.longest > pitch - 0.5 * look.space.unit;
     header.longest = std::min(header.longest, slantedMost_px * look.scale);
     const double angle = slant_deg * std::numbers::pi / 180.0;
-    header.height = header.slanted ? header.longest * std::sin(angle) + 2 * line * std::cos(angle)
-                                   : 2 * line;
+    header.height =
+        header.slanted ? header.longest * std::sin(angle) + 2 * line * std::cos(angle) : 2 * line;
     header.height += 2 * look.space.unit;
     return header;
 }
@@ -107,25 +108,28 @@ void addColumn(Making& making, int position, const Header& header) {
     column.inHand = option == making.input.optionInHand;
     column.column = QRectF(making.left + position * making.pitch, 0, making.pitch, making.top);
     column.slanted = header.slanted;
-    const QFont font = look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
+    const QFont font =
+        look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
     const double line = look.lineHeight(TextSize::small);
     column.lines = twoLines(name, font);
     Item item;
     if (column.slanted) {
+        // Falling towards its column: the room needed lies left, over the names of the studies, so
+        // that the last name cannot run off at the right.
         const double angle = slant_deg * std::numbers::pi / 180.0;
-        column.pivot = {column.column.left() + 2 * line * std::sin(angle) - 0.6 * look.space.unit,
-                        making.top - look.space.unit};
-        // To the picture's edge and not beyond.
-        const double room = (making.input.size.width() - column.pivot.x()) / std::cos(angle) - 2;
+        const double high = line * static_cast<double>(column.lines.size());
+        column.pivot = {column.column.center().x() - 0.5 * high * std::sin(angle),
+                        making.top - 0.5 * look.space.unit};
+        const double room = column.pivot.x() / std::cos(angle) - 2;
         const QFontMetricsF metrics(font);
         for (auto& words : column.lines) {
             words = metrics.elidedText(words, Qt::ElideRight, std::min(room, header.longest + 1));
         }
         QTransform turn;
         turn.translate(column.pivot.x(), column.pivot.y());
-        turn.rotate(-slant_deg);
-        const double high = line * static_cast<double>(column.lines.size());
-        item.shape.addPolygon(turn.map(QPolygonF(QRectF(0, -high, widthOf(column.lines, font), high))));
+        turn.rotate(slant_deg);
+        const double wide = widthOf(column.lines, font);
+        item.shape.addPolygon(turn.map(QPolygonF(QRectF(-wide, -high, wide, high))));
         item.shape.closeSubpath();
     } else {
         double y = making.top - look.space.unit - line * static_cast<double>(column.lines.size());
@@ -138,8 +142,9 @@ void addColumn(Making& making, int position, const Header& header) {
     }
     item.kind = ItemKind::columnTitle;
     item.option = option;
-    item.thing = option < 0 ? plant::Path{"base"}
-                            : plant::Path{"options", making.input.snapshot.project().options.name(option)};
+    item.thing = option < 0
+                     ? plant::Path{"base"}
+                     : plant::Path{"options", making.input.snapshot.project().options.name(option)};
     item.box = item.shape.boundingRect();
     for (const auto& words : column.lines) {
         item.label += (item.label.isEmpty() ? QString() : QStringLiteral(" ")) + words;
@@ -164,20 +169,25 @@ const studies::Cell* cellOf(const BoardInput& input, CellId id) {
 }
 
 bool hasShare(const studies::Cell& cell, const results::Verdict& verdict) {
-    const bool ended = cell.state == studies::CellState::done || cell.state == studies::CellState::cutShort ||
-                       cell.state == studies::CellState::failed;
-    return ended && verdict.mark != results::Mark::notRun && verdict.mark != results::Mark::notApplicable &&
-           std::isfinite(verdict.share);
+    const bool ended = cell.state == studies::CellState::done
+                       || cell.state == studies::CellState::cutShort
+                       || cell.state == studies::CellState::failed;
+    return ended && verdict.mark != results::Mark::notRun
+           && verdict.mark != results::Mark::notApplicable && std::isfinite(verdict.share);
 }
 
 QString stateWords(const studies::Cell& cell) {
     switch (cell.state) {
-    case studies::CellState::waiting: return QStringLiteral("waiting");
+    case studies::CellState::waiting:
+        return QStringLiteral("waiting");
     case studies::CellState::running:
         return QStringLiteral("running, %1 per cent done").arg(percent(cell.progress));
-    case studies::CellState::cutShort: return QStringLiteral("cut short");
-    case studies::CellState::failed: return QStringLiteral("failed");
-    default: return words(markOf(cell));
+    case studies::CellState::cutShort:
+        return QStringLiteral("cut short");
+    case studies::CellState::failed:
+        return QStringLiteral("failed");
+    default:
+        return words(markOf(cell));
     }
 }
 
@@ -185,8 +195,8 @@ QString spokenCell(const Making& making, CellId id, const studies::Cell* cell) {
     const auto& snapshot = making.input.snapshot;
     const auto& variant = snapshot.variant(id.option);
     const auto& project = snapshot.project();
-    QString out = text(project.studies.name(id.study)) + QStringLiteral(", ") + text(variant.name) +
-                  QStringLiteral(": ");
+    QString out = text(project.studies.name(id.study)) + QStringLiteral(", ") + text(variant.name)
+                  + QStringLiteral(": ");
     if (cell == nullptr) {
         return out + QStringLiteral("not run.");
     }
@@ -213,7 +223,8 @@ void addCell(Making& making, CellId id, const QRectF& frame) {
     out.id = id;
     out.frame = frame.adjusted(1, 1, -1, -1);
     out.mark = cell == nullptr ? MarkState::notRun : markOf(*cell);
-    out.progress = cell == nullptr ? 0.0 : std::clamp(cell->progress, 0.0, 1.0);
+    const bool started = cell != nullptr && cell->state == studies::CellState::running;
+    out.progress = started ? std::clamp(cell->progress, 0.0, 1.0) : 0.0;
     const auto& shownRuns = making.input.selection.shown;
     const auto found = std::find(shownRuns.begin(), shownRuns.end(), id);
     out.shownAs = found == shownRuns.end() ? -1 : static_cast<int>(found - shownRuns.begin());
@@ -221,25 +232,31 @@ void addCell(Making& making, CellId id, const QRectF& frame) {
         const double high = out.progress * out.frame.height();
         out.fill = QRectF(out.frame.left(), out.frame.bottom() - high, out.frame.width(), high);
     }
-    const double side = std::min(look.space.mark, 0.5 * frame.width());
+    // A narrow cell keeps room for "−10"; the mark stays readable.
+    const double side = std::min(look.space.mark, narrowMark * frame.width());
     const double gap = 0.5 * look.space.unit;
     out.markBox = QRectF(frame.left() + gap, frame.center().y() - side / 2, side, side);
     const auto* worst = cell == nullptr ? nullptr : limits::worst(cell->verdicts);
     QString shownShare, letter;
     if (worst != nullptr && hasShare(*cell, *worst)) {
         shownShare = percent(worst->share);
-        letter = limitLetter(making.input.snapshot.project(), making.input.snapshot.variant(id.option),
-                             worst->limit);
+        letter = limitLetter(making.input.snapshot.project(),
+                             making.input.snapshot.variant(id.option), worst->limit);
     }
     const double line = look.lineHeight(TextSize::small);
     const double left = out.markBox.right() + gap;
     // A share over its letter; the two lines may touch, they never overlap.
     const double step = std::min(line, (frame.height() - 2) / 2);
     const double first = frame.center().y() - step;
-    const double wide = std::max(1.0, frame.right() - left - 1);
+    const double wide = std::max(1.0, frame.right() - left);
     out.share = {shownShare, QRectF(left, first, wide, step), TextSize::small};
-    out.letter = {letter, QRectF(left, first + step, wide, step), TextSize::small,
-                  TextWeight::normal, true, false, {}};
+    out.letter = {letter,
+                  QRectF(left, first + step, wide, step),
+                  TextSize::small,
+                  TextWeight::normal,
+                  true,
+                  false,
+                  {}};
     Item item;
     item.kind = ItemKind::cell;
     item.option = id.option;
@@ -262,25 +279,39 @@ void addRow(Making& making, int study, double y) {
     BoardRow row;
     row.study = study;
     row.row = QRectF(0, y, making.input.size.width(), making.height);
-    row.selected = !making.input.selection.shown.empty() &&
-                   making.input.selection.inHand().study == study;
+    row.selected =
+        !making.input.selection.shown.empty() && making.input.selection.inHand().study == study;
     const double middle = y + (making.height - line) / 2, letter = 4 * gap;
     const auto weight = row.selected ? TextWeight::strong : TextWeight::normal;
-    row.letter = {classLetter(studies[study].loadClass), QRectF(gap, middle, letter, line),
-                  TextSize::small, TextWeight::normal, true, false, {}};
-    row.name = {text(studies.name(study)),
-                QRectF(gap + letter, middle, std::max(1.0, making.left - letter - 2 * gap), line),
-                TextSize::small, weight};
-    const QFontMetricsF metrics(look.font(TextSize::small, weight));
+    row.letter = {classLetter(studies[study].loadClass),
+                  QRectF(gap, middle, letter, line),
+                  TextSize::small,
+                  TextWeight::normal,
+                  true,
+                  false,
+                  {}};
+    const QString name = text(studies.name(study));
+    const QFont font = look.font(TextSize::small, weight);
+    const QFontMetricsF metrics(font);
+    const double wide = std::max(1.0, making.left - letter - 2 * gap);
+    const bool fits = metrics.horizontalAdvance(name) <= wide;
+    const auto lines = fits ? std::vector<QString>{name} : twoLines(name, font);
+    const double step = std::min(line, (making.height - 2) / 2);
+    double top =
+        fits ? middle : y + making.height / 2 - step * static_cast<double>(lines.size()) / 2;
+    for (const auto& words : lines) {
+        row.name.push_back({words, QRectF(gap + letter, top, wide, line), TextSize::small, weight});
+        top += step;
+    }
     Item item;
     item.kind = ItemKind::rowTitle;
     item.study = study;
     item.thing = {"studies", studies.name(study)};
     item.box = QRectF(0, y, making.left, making.height);
     item.shape.addRect(item.box);
-    item.label = metrics.elidedText(row.name.text, Qt::ElideRight, row.name.box.width() + 1);
-    item.description = QStringLiteral("Study %1, class %2")
-                           .arg(row.name.text, className(studies[study].loadClass));
+    item.label = name;
+    item.description =
+        QStringLiteral("Study %1, class %2").arg(name, className(studies[study].loadClass));
     making.picture.items.push_back(std::move(item));
     making.scene.rows.push_back(std::move(row));
     for (int i = 0; i < making.picture.columnsShown; ++i) {
@@ -296,7 +327,8 @@ void addLabel(Making& making, const QString& words, const QRectF& where) {
     item.shape.addRect(where);
     item.label = item.description = words;
     making.picture.items.push_back(std::move(item));
-    making.scene.labels.push_back({words, where, TextSize::small, TextWeight::normal, true, false, {}});
+    making.scene.labels.push_back(
+        {words, where, TextSize::small, TextWeight::normal, true, false, {}});
 }
 
 QString outOfSight(const BoardPicture& picture, int rows, int columns) {
@@ -306,32 +338,36 @@ QString outOfSight(const BoardPicture& picture, int rows, int columns) {
             parts << QStringLiteral("%1 %2").arg(count).arg(QLatin1String(words));
         }
     };
-    add(picture.firstRow, "studies above");
+    add(picture.firstRow, "more above");
     add(rows - picture.firstRow - picture.rowsShown, "more below");
-    add(picture.firstColumn, "options left");
-    add(columns - picture.firstColumn - picture.columnsShown, "more options right");
+    add(picture.firstColumn, "more to the left");
+    add(columns - picture.firstColumn - picture.columnsShown, "more to the right");
     return parts.join(QStringLiteral(" · "));
 }
 
 void layColumns(Making& making) {
     const auto& look = making.input.look;
     const auto& snapshot = making.input.snapshot;
-    double names = 0.0;
+    double names = 0.0, folded = 0.0; // widest on one line, widest on two
     const QFont font = look.font(TextSize::small, TextWeight::strong);
     for (const auto& name : snapshot.project().studies.names()) {
         names = std::max(names, textSize(text(name), font).width());
+        folded = std::max(folded, widthOf(twoLines(text(name), font), font));
     }
-    const double width = making.input.size.width();
+    const double width = making.input.size.width(), beside = 7 * look.space.unit;
     const int columns = columnsOf(snapshot);
     const double least = narrowest * look.scale;
-    const double wanted = names + 7 * look.space.unit;
+    // Names are folded before the columns become narrow, and cut before they become too narrow.
+    const double wanted =
+        std::min(names + beside, std::max(folded + beside, width - easy * look.scale * columns));
     making.left = std::min(wanted, std::max(0.25 * width, width - least * columns));
     making.left = std::min(making.left, std::max(0.0, width - least));
     const int fitting = std::max(1, static_cast<int>((width - making.left) / least + 1e-6));
     making.picture.columnsShown = std::min(columns, fitting);
     making.picture.firstColumn =
         std::clamp(making.input.firstColumn, 0, columns - making.picture.columnsShown);
-    making.pitch = std::min((width - making.left) / making.picture.columnsShown, widest * look.scale);
+    making.pitch =
+        std::min((width - making.left) / making.picture.columnsShown, widest * look.scale);
 }
 
 void layRows(Making& making) {
@@ -343,7 +379,8 @@ void layRows(Making& making) {
     const bool columnsHidden = picture.columnsShown < columnsOf(making.input.snapshot);
     making.height = look.space.row;
     if (rows > 0 && rows * making.height > room - (columnsHidden ? line : 0.0)) {
-        making.height = std::max(leastRow * look.space.row, (room - (columnsHidden ? line : 0.0)) / rows);
+        making.height =
+            std::max(leastRow * look.space.row, (room - (columnsHidden ? line : 0.0)) / rows);
     }
     const bool all = rows * making.height <= room - (columnsHidden ? line : 0.0) + 0.5;
     picture.rowsShown = all ? rows : std::max(0, static_cast<int>((room - line) / making.height));
@@ -363,9 +400,10 @@ BoardPicture boardPicture(const BoardInput& input) {
     scene->headerBottom = making.top;
     scene->width = input.size.width();
     const double line = headingHeight(input.look), gap = input.look.space.unit;
-    if (making.left > 8 * gap) {
-        addLabel(making, QStringLiteral("headroom left, %"),
-                 QRectF(gap, making.top - gap - line, making.left - 2 * gap, line));
+    const QString heading = QStringLiteral("headroom left, %");
+    const double headingWide = textSize(heading, input.look.font(TextSize::small)).width();
+    if (making.left > headingWide + 4 * gap) { // else the slanted names need the room
+        addLabel(making, heading, QRectF(gap, making.top - gap - line, headingWide, line));
     }
     for (int i = 0; i < picture.columnsShown; ++i) {
         addColumn(making, i, header);
@@ -375,8 +413,9 @@ BoardPicture boardPicture(const BoardInput& input) {
     }
     const QString hidden = outOfSight(picture, input.snapshot.studies(), columnsOf(input.snapshot));
     if (!hidden.isEmpty()) {
-        addLabel(making, hidden, QRectF(gap, making.top + picture.rowsShown * making.height,
-                                        input.size.width() - 2 * gap, line + gap));
+        addLabel(making, hidden,
+                 QRectF(gap, making.top + picture.rowsShown * making.height,
+                        input.size.width() - 2 * gap, line + gap));
     }
     if (input.snapshot.studies() == 0) {
         addLabel(making, QStringLiteral("No studies yet."),
@@ -394,8 +433,8 @@ double boardHeight(const studies::Snapshot& snapshot, const Look& look, double w
     Making making{input, *scene, picture};
     layColumns(making);
     const bool hidden = picture.columnsShown < columnsOf(snapshot);
-    return headerFor(snapshot, look, making.pitch).height + snapshot.studies() * look.space.row +
-           (hidden ? look.lineHeight(TextSize::small) + look.space.unit : 0.0) + look.space.unit;
+    return headerFor(snapshot, look, making.pitch).height + snapshot.studies() * look.space.row
+           + (hidden ? look.lineHeight(TextSize::small) + look.space.unit : 0.0) + look.space.unit;
 }
 
 } // namespace headroom::drawing

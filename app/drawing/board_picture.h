@@ -7,6 +7,7 @@
 #include "studies/board.h"
 
 #include <QSizeF>
+
 #include <memory>
 #include <vector>
 
@@ -20,8 +21,8 @@ struct BoardInput {
     Selection selection;
     QSizeF size;
     const Look& look;
-    int firstRow = 0;    ///< scrolled to: study
-    int firstColumn = 0; ///< scrolled to: 0 the base, 1 + i option i
+    int firstRow = 0;      ///< scrolled to: study
+    int firstColumn = 0;   ///< scrolled to: 0 the base, 1 + i option i
     int optionInHand = -1; ///< receives changes; its name is coloured
 };
 

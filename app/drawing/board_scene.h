@@ -11,23 +11,24 @@ struct BoardRow {
     int study = -1;
     QRectF row;
     bool selected = false;
-    Label letter, name;
+    Label letter;
+    std::vector<Label> name; ///< one line, or two where one has no room
 };
 struct BoardColumn {
     int option = -2;
     QRectF column;
     bool inHand = false;
     bool slanted = false;
-    QPointF pivot;                 ///< where slanted lines begin
-    std::vector<QString> lines;    ///< at most two
-    std::vector<QRectF> boxes;     ///< of level lines
+    QPointF pivot;              ///< where slanted lines end
+    std::vector<QString> lines; ///< at most two
+    std::vector<QRectF> boxes;  ///< of level lines
 };
 struct BoardCell {
     CellId id;
     QRectF frame, markBox, fill;
     MarkState mark = MarkState::notRun;
     double progress = 0.0;
-    int shownAs = -1;              ///< position in the comparison; 0: in the hand
+    int shownAs = -1; ///< position in the comparison; 0: in the hand
     Label share, letter;
 };
 
@@ -38,7 +39,7 @@ struct BoardPicture::Scene {
     std::vector<BoardRow> rows;
     std::vector<BoardColumn> columns;
     std::vector<BoardCell> cells;
-    std::vector<Label> labels;     ///< heading and counts
+    std::vector<Label> labels; ///< heading and counts
 };
 
 inline constexpr double slant_deg = 55.0;

@@ -64,8 +64,8 @@ double ChainageMap::x_px(double chainage_m) const {
     while (span < last && chainage_m > spans_[static_cast<std::size_t>(span)].to_m) {
         ++span;
     }
-    return from_px(span) +
-           (chainage_m - spans_[static_cast<std::size_t>(span)].from_m) / metresPerPixel(span);
+    return from_px(span)
+           + (chainage_m - spans_[static_cast<std::size_t>(span)].from_m) / metresPerPixel(span);
 }
 
 int ChainageMap::spanAt(double x_px) const {
@@ -79,7 +79,8 @@ int ChainageMap::spanAt(double x_px) const {
 
 double ChainageMap::chainage_m(double x_px) const {
     const int span = spanAt(x_px);
-    return spans_[static_cast<std::size_t>(span)].from_m + (x_px - from_px(span)) * metresPerPixel(span);
+    return spans_[static_cast<std::size_t>(span)].from_m
+           + (x_px - from_px(span)) * metresPerPixel(span);
 }
 
 const Span* ChainageMap::find(Span::Kind kind) const {

@@ -4,6 +4,7 @@
 #include "plant/plant.h"
 
 #include <QString>
+
 #include <optional>
 #include <vector>
 
@@ -27,8 +28,8 @@ public:
     /// `lead_px`: room left of the first chainage, for the reservoir, at the first span's scale.
     ChainageMap(std::vector<Span> spans, double left_px, double right_px, double lead_px = 0.0);
 
-    double x_px(double chainage_m) const;       ///< beyond the ends: goes on at the end's scale
-    double chainage_m(double x_px) const;       ///< inverse of `x_px`
+    double x_px(double chainage_m) const; ///< beyond the ends: goes on at the end's scale
+    double chainage_m(double x_px) const; ///< inverse of `x_px`
     double left_px() const { return edges_px_.front(); }
     double right_px() const { return edges_px_.back(); }
     const std::vector<Span>& spans() const { return spans_; } ///< with the lead in front, if any

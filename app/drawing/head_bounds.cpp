@@ -43,7 +43,8 @@ void add(BoundLine& line, BoundPlace place) {
     const auto after = [](const BoundPlace& a, const BoundPlace& b) {
         return a.chainage_m < b.chainage_m;
     };
-    line.places.insert(std::upper_bound(line.places.begin(), line.places.end(), place, after), place);
+    line.places.insert(std::upper_bound(line.places.begin(), line.places.end(), place, after),
+                       place);
 }
 
 BoundLine alongWhole(const Context& in, int index, int conduit, const plant::Rows& axis, bool upper,
@@ -72,7 +73,8 @@ std::optional<BoundPlace> placeOn(const Context& in, int index, int conduit,
         point = in.plant().chambers[place->index].at.index;
     } else if (isHead(limit.measure) && place->thing == Thing::point) {
         point = place->index;
-    } else if (!isHead(limit.measure) || place->thing != Thing::conduit || place->index != conduit) {
+    } else if (!isHead(limit.measure) || place->thing != Thing::conduit
+               || place->index != conduit) {
         return std::nullopt;
     }
     if (place->thing != Thing::conduit) {
@@ -93,8 +95,8 @@ void addLines(HeadBounds& out, const Context& in, int conduit, bool upper) {
     BoundLine between{conduit, upper, false, {}};
     for (int i = 0; i < in.variant.limits.size(); ++i) {
         const auto& limit = in.variant.limits[i];
-        const bool here = limit.at.thing.collection == plant::Collection::conduits &&
-                          limit.at.thing.index == conduit;
+        const bool here = limit.at.thing.collection == plant::Collection::conduits
+                          && limit.at.thing.index == conduit;
         if (limit.wholeConduit && limit.measure == Measure::pressureHead) {
             const auto bound = boundOf(limit, upper, in.loadClass);
             if (here && bound) {
@@ -112,8 +114,8 @@ void addLines(HeadBounds& out, const Context& in, int conduit, bool upper) {
 } // namespace
 
 bool BoundLine::covers(double chainage_m) const {
-    return !places.empty() && chainage_m >= places.front().chainage_m &&
-           chainage_m <= places.back().chainage_m;
+    return !places.empty() && chainage_m >= places.front().chainage_m
+           && chainage_m <= places.back().chainage_m;
 }
 
 double BoundLine::effective_m(double chainage_m) const {

@@ -23,7 +23,7 @@ struct BoundPlace {
 struct BoundLine {
     int conduit = -1;
     bool upper = true;
-    bool wholeConduit = false; ///< declared along the whole conduit: judges everywhere
+    bool wholeConduit = false;      ///< declared along the whole conduit: judges everywhere
     std::vector<BoundPlace> places; ///< chainage rising
 
     bool covers(double chainage_m) const;

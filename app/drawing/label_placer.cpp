@@ -4,6 +4,7 @@
 #include <QFontMetricsF>
 #include <QPainter>
 #include <QPainterPath>
+
 #include <algorithm>
 #include <cmath>
 
@@ -32,7 +33,8 @@ bool free(const std::vector<QRectF>& taken, const QRectF& box) {
 }
 
 QPointF baseline(const Label& label, const QFontMetricsF& metrics) {
-    return {label.box.left(), label.box.center().y() + (metrics.ascent() - metrics.descent()) / 2.0};
+    return {label.box.left(),
+            label.box.center().y() + (metrics.ascent() - metrics.descent()) / 2.0};
 }
 
 void paintFrame(QPainter& painter, const Label& label, const Look& look) {
@@ -57,9 +59,9 @@ void paintLabel(QPainter& painter, const Label& label, const Look& look) {
     painter.setFont(font);
     if (label.leader) {
         painter.setPen(look.hairPen(label.framed ? look.limit : look.muted));
-        painter.drawLine(QPointF(label.box.center().x(),
-                                 label.leader->y() < label.box.top() ? label.box.top() - 2
-                                                                     : label.box.bottom() + 2),
+        painter.drawLine(QPointF(label.box.center().x(), label.leader->y() < label.box.top()
+                                                             ? label.box.top() - 2
+                                                             : label.box.bottom() + 2),
                          *label.leader);
     }
     if (label.framed) {
@@ -113,8 +115,8 @@ bool LabelPlacer::freeOfLines(const QRectF& box) const {
 std::optional<QRectF> LabelPlacer::place(const std::vector<QRectF>& candidates, bool strict) {
     for (int pass = 0; pass < (strict ? 1 : 3); ++pass) {
         for (const QRectF& box : candidates) {
-            const bool good = inside(box) && freeOfLabels(box) && (pass > 1 || freeOfBodies(box)) &&
-                              (pass > 0 || freeOfLines(box));
+            const bool good = inside(box) && freeOfLabels(box) && (pass > 1 || freeOfBodies(box))
+                              && (pass > 0 || freeOfLines(box));
             if (good) {
                 take(box);
                 return box;

@@ -7,6 +7,7 @@
 #include <QPolygonF>
 #include <QRectF>
 #include <QString>
+
 #include <optional>
 #include <vector>
 
@@ -17,11 +18,11 @@ namespace headroom::drawing {
 /// A printed text with its place.
 struct Label {
     QString text;
-    QRectF box;                 ///< the text lies inside
+    QRectF box; ///< the text lies inside
     TextSize size = TextSize::small;
     TextWeight weight = TextWeight::normal;
-    bool quiet = false;         ///< in the muted colour
-    bool framed = false;        ///< on a ground of its own, with a frame in the limit's colour
+    bool quiet = false;  ///< in the muted colour
+    bool framed = false; ///< on a ground of its own, with a frame in the limit's colour
     std::optional<QPointF> leader = {}; ///< hair line from the box to here
 };
 
@@ -52,7 +53,10 @@ private:
     bool freeOfBodies(const QRectF& box) const;
     bool freeOfLines(const QRectF& box) const;
 
-    struct Line { QLineF line; double half; };
+    struct Line {
+        QLineF line;
+        double half;
+    };
     QRectF area_;
     std::vector<QRectF> labels_, bodies_;
     std::vector<Line> lines_;

@@ -4,6 +4,7 @@
 #include "drawing/schemes.h"
 
 #include <QFontMetricsF>
+
 #include <algorithm>
 #include <cmath>
 #include <map>
@@ -18,23 +19,28 @@ constexpr double leastScale = 0.5, greatestScale = 4.0;
 /// Heights of letters in logical pixels (3/4 of them in points).
 double pixels(TextSize size) {
     switch (size) {
-    case TextSize::small: return 12.0;
-    case TextSize::body: return 13.0;
-    case TextSize::heading: return 15.0;
-    case TextSize::sentence: return 18.0;
+    case TextSize::small:
+        return 12.0;
+    case TextSize::body:
+        return 13.0;
+    case TextSize::heading:
+        return 15.0;
+    case TextSize::sentence:
+        return 18.0;
     }
     return 13.0;
 }
 
 void scaleAll(Look& look) {
     auto& s = look.space;
-    for (double* value : {&s.leftMargin, &s.rightMargin, &s.laneGutter, &s.unit, &s.row, &s.bar,
-                          &s.mark, &s.sentenceMark, &s.target, &s.textureStep, &s.textureDepth,
-                          &s.corner}) {
+    for (double* value :
+         {&s.leftMargin, &s.rightMargin, &s.laneGutter, &s.unit, &s.row, &s.bar, &s.mark,
+          &s.sentenceMark, &s.target, &s.textureStep, &s.textureDepth, &s.corner}) {
         *value *= look.scale;
     }
     auto& w = look.width;
-    for (double* value : {&w.hair, &w.data, &w.inHand, &w.selected, &w.lining, &w.water, &w.focus}) {
+    for (double* value :
+         {&w.hair, &w.data, &w.inHand, &w.selected, &w.lining, &w.water, &w.focus}) {
         *value *= look.scale;
     }
 }

@@ -6,6 +6,7 @@
 #include <QPen>
 #include <QString>
 #include <QVector>
+
 #include <array>
 
 /// The only place of colours, pens, fonts and spacings. Everything that paints asks here; a test
@@ -16,7 +17,15 @@ enum class Scheme { light, dark, print };
 
 /// The nine shapes of a cell or a limit. The shape says it; the tint only helps.
 enum class MarkState {
-    held, tight, broken, undecided, notValid, notRun, outdated, running, notApplicable,
+    held,
+    tight,
+    broken,
+    undecided,
+    notValid,
+    notRun,
+    outdated,
+    running,
+    notApplicable,
 };
 inline constexpr int markStateCount = 9;
 
@@ -27,27 +36,27 @@ enum class TextWeight { normal, strong };
 
 /// Distances in logical pixels at scale 1. Section, Ribbon and Lanes share the left margin.
 struct Spacing {
-    double leftMargin = 52;    ///< axis labels of Section, Ribbon and Lanes stand in it
-    double rightMargin = 10;   ///< of Section and Ribbon
-    double laneGutter = 96;    ///< right of the Lanes: names and cursor values
-    double unit = 4;           ///< all other gaps are multiples of it
-    double row = 34;           ///< of the Board: a share over a letter
-    double bar = 40;           ///< of the Headroom strip, with its text
-    double mark = 18;          ///< side of a mark in Board and Strip
+    double leftMargin = 52;  ///< axis labels of Section, Ribbon and Lanes stand in it
+    double rightMargin = 10; ///< of Section and Ribbon
+    double laneGutter = 96;  ///< right of the Lanes: names and cursor values
+    double unit = 4;         ///< all other gaps are multiples of it
+    double row = 34;         ///< of the Board: a share over a letter
+    double bar = 40;         ///< of the Headroom strip, with its text
+    double mark = 20;        ///< side of a mark in Board and Strip
     double sentenceMark = 28;
-    double target = 28;        ///< least side of something to press
-    double textureStep = 6;    ///< between the lines of a texture
-    double textureDepth = 14;  ///< a texture reaches this far outward from its bound
-    double corner = 4;         ///< radius of frames
+    double target = 28;       ///< least side of something to press
+    double textureStep = 6;   ///< between the lines of a texture
+    double textureDepth = 14; ///< a texture reaches this far outward from its bound
+    double corner = 4;        ///< radius of frames
 };
 
 /// Widths of pens in logical pixels at scale 1.
 struct Widths {
-    double hair = 1.0;         ///< grid, texture, leader
-    double data = 1.4;         ///< a compared run
-    double inHand = 2.0;       ///< the run in the hand, the head line
+    double hair = 1.0;   ///< grid, texture, leader
+    double data = 1.4;   ///< a compared run
+    double inHand = 2.0; ///< the run in the hand, the head line
     double selected = 2.25;
-    double lining = 7.5;       ///< a conduit's lining, water of `water` on top
+    double lining = 7.5; ///< a conduit's lining, water of `water` on top
     double water = 4.5;
     double focus = 3.0;
 };
@@ -69,15 +78,15 @@ struct Look {
     // The plant.
     QColor rock, rockEdge, lining, water, waterEdge, lake; ///< `lake`: the pale first reservoir
     QColor headLine, envelope, envelopeFill;
-    QColor limit, limitFill;        ///< bound and texture lines; fill behind the texture
+    QColor limit, limitFill; ///< bound and texture lines; fill behind the texture
     QColor ribbon, ribbonEdge;
 
     std::array<QColor, runColourCount> runs;
     std::array<QVector<qreal>, runColourCount> dashes; ///< in pen widths; used in print only
     std::array<QColor, markStateCount> marks;
 
-    Spacing space;                  ///< scaled
-    Widths width;                   ///< scaled
+    Spacing space; ///< scaled
+    Widths width;  ///< scaled
 
     const QColor& mark(MarkState state) const { return marks[static_cast<std::size_t>(state)]; }
     /// Pen of a compared run, 0: the one in the hand. Dashed in print only.

@@ -5,6 +5,7 @@
 
 #include <QPainter>
 #include <QPainterPath>
+
 #include <algorithm>
 
 namespace headroom::drawing {
@@ -20,10 +21,10 @@ struct Bowl {
 
 Bowl bowlIn(const QRectF& box) {
     const double side = std::min(box.width(), box.height());
-    const double wide = 0.72 * side;
+    const double wide = 0.78 * side;
     const double left = box.center().x() - wide / 2.0;
-    return {left, left + wide, box.center().y() - 0.14 * side, 0.42 * side,
-            std::max(1.2, side / 15.0)};
+    return {left, left + wide, box.center().y() - 0.15 * side, 0.45 * side,
+            std::max(1.2, std::min(side / 15.0, 1.0 + side / 40.0))};
 }
 
 QPainterPath body(const Bowl& bowl) {
@@ -143,14 +144,30 @@ void paintMark(QPainter& painter, const QRectF& box, MarkState state, const Look
     painter.save();
     painter.setRenderHint(QPainter::Antialiasing);
     switch (state) {
-    case MarkState::held: paintHeld(painter, bowl, colour, look); break;
-    case MarkState::tight: paintTight(painter, bowl, colour, look); break;
-    case MarkState::broken: paintBroken(painter, bowl, colour, look); break;
-    case MarkState::undecided: paintUndecided(painter, bowl, colour, look); break;
-    case MarkState::notValid: paintStruck(painter, bowl, colour, look); break;
-    case MarkState::notRun: outline(painter, bowl, colour, look); break;
-    case MarkState::outdated: outline(painter, bowl, colour, look, true); break;
-    case MarkState::running: paintRunning(painter, bowl, colour, look, progress); break;
+    case MarkState::held:
+        paintHeld(painter, bowl, colour, look);
+        break;
+    case MarkState::tight:
+        paintTight(painter, bowl, colour, look);
+        break;
+    case MarkState::broken:
+        paintBroken(painter, bowl, colour, look);
+        break;
+    case MarkState::undecided:
+        paintUndecided(painter, bowl, colour, look);
+        break;
+    case MarkState::notValid:
+        paintStruck(painter, bowl, colour, look);
+        break;
+    case MarkState::notRun:
+        outline(painter, bowl, colour, look);
+        break;
+    case MarkState::outdated:
+        outline(painter, bowl, colour, look, true);
+        break;
+    case MarkState::running:
+        paintRunning(painter, bowl, colour, look, progress);
+        break;
     case MarkState::notApplicable:
         painter.setPen(look.pen(colour, bowl.pen * 1.2));
         painter.drawLine(QPointF(bowl.middle() - 0.25 * bowl.width(), box.center().y()),
@@ -162,27 +179,40 @@ void paintMark(QPainter& painter, const QRectF& box, MarkState state, const Look
 
 MarkState markOf(results::Mark mark) {
     switch (mark) {
-    case results::Mark::held: return MarkState::held;
-    case results::Mark::tight: return MarkState::tight;
-    case results::Mark::undecided: return MarkState::undecided;
-    case results::Mark::broken: return MarkState::broken;
-    case results::Mark::notValid: return MarkState::notValid;
-    case results::Mark::notRun: return MarkState::notRun;
-    case results::Mark::notApplicable: return MarkState::notApplicable;
+    case results::Mark::held:
+        return MarkState::held;
+    case results::Mark::tight:
+        return MarkState::tight;
+    case results::Mark::undecided:
+        return MarkState::undecided;
+    case results::Mark::broken:
+        return MarkState::broken;
+    case results::Mark::notValid:
+        return MarkState::notValid;
+    case results::Mark::notRun:
+        return MarkState::notRun;
+    case results::Mark::notApplicable:
+        return MarkState::notApplicable;
     }
     return MarkState::notRun;
 }
 
 MarkState markOf(const studies::Cell& cell) {
     switch (cell.state) {
-    case studies::CellState::notApplicable: return MarkState::notApplicable;
-    case studies::CellState::notRun: return MarkState::notRun;
-    case studies::CellState::outdated: return MarkState::outdated;
+    case studies::CellState::notApplicable:
+        return MarkState::notApplicable;
+    case studies::CellState::notRun:
+        return MarkState::notRun;
+    case studies::CellState::outdated:
+        return MarkState::outdated;
     case studies::CellState::waiting:
-    case studies::CellState::running: return MarkState::running;
-    case studies::CellState::done: break;
+    case studies::CellState::running:
+        return MarkState::running;
+    case studies::CellState::done:
+        break;
     case studies::CellState::cutShort:
-    case studies::CellState::failed: break;
+    case studies::CellState::failed:
+        break;
     }
     const auto* worst = limits::worst(cell.verdicts);
     if (cell.state == studies::CellState::done) {
@@ -195,15 +225,24 @@ MarkState markOf(const studies::Cell& cell) {
 
 QString words(MarkState state) {
     switch (state) {
-    case MarkState::held: return QStringLiteral("held");
-    case MarkState::tight: return QStringLiteral("tight");
-    case MarkState::broken: return QStringLiteral("broken");
-    case MarkState::undecided: return QStringLiteral("undecided");
-    case MarkState::notValid: return QStringLiteral("not valid");
-    case MarkState::notRun: return QStringLiteral("not run");
-    case MarkState::outdated: return QStringLiteral("outdated");
-    case MarkState::running: return QStringLiteral("running");
-    case MarkState::notApplicable: return QStringLiteral("not applicable");
+    case MarkState::held:
+        return QStringLiteral("held");
+    case MarkState::tight:
+        return QStringLiteral("tight");
+    case MarkState::broken:
+        return QStringLiteral("broken");
+    case MarkState::undecided:
+        return QStringLiteral("undecided");
+    case MarkState::notValid:
+        return QStringLiteral("not valid");
+    case MarkState::notRun:
+        return QStringLiteral("not run");
+    case MarkState::outdated:
+        return QStringLiteral("outdated");
+    case MarkState::running:
+        return QStringLiteral("running");
+    case MarkState::notApplicable:
+        return QStringLiteral("not applicable");
     }
     return {};
 }

@@ -2,6 +2,7 @@
 #include "drawing/picture_export.h"
 
 #include <QPainter>
+
 #include <algorithm>
 #include <cmath>
 

@@ -5,6 +5,7 @@
 
 #include <QImage>
 #include <QSizeF>
+
 #include <functional>
 
 class QPainter;

@@ -1,6 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/chainage_map.h"
-
 #include "drawing/words.h"
 
 #include <algorithm>
@@ -24,8 +23,8 @@ struct Marks {
 };
 
 double chainageOf(const plant::Plant& plant, const plant::Reference& point) {
-    const bool known = point.collection == plant::Collection::points && point.resolved() &&
-                       point.index < plant.points.size();
+    const bool known = point.collection == plant::Collection::points && point.resolved()
+                       && point.index < plant.points.size();
     return known ? plant.points[point.index].chainage_m : std::nan("");
 }
 
@@ -93,9 +92,9 @@ std::vector<Span> spansOf(const Marks& marks, std::optional<double> lastGround_m
     }
     const double inlet = *marks.inlet_m;
     const bool tailrace = marks.outlet_m && marks.end_m > *marks.outlet_m + shortest_m;
-    const double bayEnd = tailrace ? *marks.outlet_m
-                                   : std::max({inlet + bayLength_m, marks.end_m,
-                                               lastGround_m.value_or(inlet)});
+    const double bayEnd =
+        tailrace ? *marks.outlet_m
+                 : std::max({inlet + bayLength_m, marks.end_m, lastGround_m.value_or(inlet)});
     addSpan(spans, Kind::bay, bayEnd, bayShare, inlet);
     if (tailrace) {
         const double room = 0.12 * (marks.end_m - *marks.outlet_m); // for the water it ends in

@@ -15,8 +15,13 @@ void paintTicks(QPainter& painter, const Scene& scene) {
     for (const auto& [y, words] : scene.ticks) {
         painter.setPen(scene.look.hairPen(scene.look.line));
         painter.drawLine(QPointF(scene.chart.left(), y), QPointF(scene.chart.right(), y));
-        Label label{words, QRectF(0, y - height / 2, scene.chart.left() - 6, height),
-                    TextSize::small, TextWeight::normal, true, false, {}};
+        Label label{words,
+                    QRectF(0, y - height / 2, scene.chart.left() - 6, height),
+                    TextSize::small,
+                    TextWeight::normal,
+                    true,
+                    false,
+                    {}};
         paintPlain(painter, label, scene.look, Qt::AlignRight);
     }
 }
@@ -29,7 +34,8 @@ void paintBands(QPainter& painter, const Scene& scene) {
         body.addPolygon(band.body);
         body.closeSubpath();
         painter.fillPath(body, band.toAxis ? look.envelopeFill : look.ribbon);
-        QPen pen = band.toAxis ? look.hairPen(look.envelope) : look.pen(look.ribbonEdge, look.width.data);
+        QPen pen =
+            band.toAxis ? look.hairPen(look.envelope) : look.pen(look.ribbonEdge, look.width.data);
         if (band.toAxis) {
             pen.setDashPattern({3, 3});
         }
@@ -39,7 +45,8 @@ void paintBands(QPainter& painter, const Scene& scene) {
     }
     painter.setClipping(false);
     painter.setPen(look.pen(look.text, look.width.hair));
-    painter.drawLine(QPointF(scene.chart.left(), scene.zero_y), QPointF(scene.chart.right(), scene.zero_y));
+    painter.drawLine(QPointF(scene.chart.left(), scene.zero_y),
+                     QPointF(scene.chart.right(), scene.zero_y));
 }
 
 void paintMarks(QPainter& painter, const Scene& scene) {
@@ -48,7 +55,8 @@ void paintMarks(QPainter& painter, const Scene& scene) {
     for (const auto& mark : scene.marks) {
         painter.setPen(look.hairPen(mark.colour));
         painter.drawLine(QPointF(mark.at.x(), scene.zero_y), mark.at);
-        painter.setPen(look.pen(mark.colour, mark.leading ? 2 * look.width.inHand : look.width.selected));
+        painter.setPen(
+            look.pen(mark.colour, mark.leading ? 2 * look.width.inHand : look.width.selected));
         painter.drawLine(mark.at - QPointF(half, 0), mark.at + QPointF(half, 0));
     }
 }
@@ -59,10 +67,12 @@ void paintRuler(QPainter& painter, const Scene& scene) {
         return;
     }
     painter.setPen(look.hairPen(look.muted));
-    painter.drawLine(QPointF(scene.chart.left(), scene.ruler_y), QPointF(scene.chart.right(), scene.ruler_y));
+    painter.drawLine(QPointF(scene.chart.left(), scene.ruler_y),
+                     QPointF(scene.chart.right(), scene.ruler_y));
     for (const auto& tick : scene.ruler) {
         painter.setPen(look.hairPen(look.muted));
-        painter.drawLine(QPointF(tick.x_px, scene.ruler_y), QPointF(tick.x_px, scene.ruler_y + look.space.unit));
+        painter.drawLine(QPointF(tick.x_px, scene.ruler_y),
+                         QPointF(tick.x_px, scene.ruler_y + look.space.unit));
         if (!tick.label.isEmpty()) {
             Label label{tick.label, tick.box, TextSize::small, TextWeight::normal, true, false, {}};
             paintPlain(painter, label, look, Qt::AlignLeft);
@@ -71,7 +81,8 @@ void paintRuler(QPainter& painter, const Scene& scene) {
     for (const double x : scene.map.breaks_px()) {
         const double unit = look.space.unit;
         painter.setPen(look.pen(look.sheet, 2 * look.width.inHand));
-        painter.drawLine(QPointF(x - unit, scene.ruler_y + unit), QPointF(x + unit, scene.ruler_y - unit));
+        painter.drawLine(QPointF(x - unit, scene.ruler_y + unit),
+                         QPointF(x + unit, scene.ruler_y - unit));
         painter.setPen(look.hairPen(look.text));
         for (const double aside : {-0.8 * unit, 0.8 * unit}) {
             painter.drawLine(QPointF(x - unit + aside, scene.ruler_y + unit),

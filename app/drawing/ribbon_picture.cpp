@@ -1,9 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "drawing/ribbon_scene.h"
-
 #include "drawing/axis_ticks.h"
 #include "drawing/head_bounds.h"
 #include "drawing/marks.h"
+#include "drawing/ribbon_scene.h"
 #include "drawing/shown.h"
 #include "drawing/words.h"
 
@@ -37,7 +36,8 @@ struct Margins {
 double nearest(const HeadBounds& bounds, int conduit, bool upper, double chainage, double head) {
     double best = none;
     for (const auto& line : bounds.lines) {
-        const bool judges = line.conduit == conduit && line.upper == upper && line.places.size() > 1;
+        const bool judges =
+            line.conduit == conduit && line.upper == upper && line.places.size() > 1;
         if (judges && line.covers(chainage)) {
             const double bound = line.effective_m(chainage);
             best = std::fmin(best, upper ? bound - head : head - bound); // fmin passes NaN by
@@ -53,17 +53,21 @@ std::vector<Margins> marginsOf(const Shown& what, const HeadBounds& bounds) {
     }
     for (const auto& envelope : what.run->envelopes) {
         const std::size_t count = envelope.chainage_m.size();
-        if (envelope.conduit < 0 || envelope.conduit >= what.variant->plant.conduits.size() ||
-            envelope.least_m.size() != count || envelope.greatest_m.size() != count) {
+        if (envelope.conduit < 0 || envelope.conduit >= what.variant->plant.conduits.size()
+            || envelope.least_m.size() != count || envelope.greatest_m.size() != count) {
             continue;
         }
-        const auto axis = axisOf(what.variant->plant, what.variant->plant.conduits[envelope.conduit]);
+        const auto axis =
+            axisOf(what.variant->plant, what.variant->plant.conduits[envelope.conduit]);
         Margins margins{envelope.conduit, envelope.chainage_m, {}, {}, {}};
         for (std::size_t i = 0; i < count; ++i) {
             const double at = envelope.chainage_m[i];
-            margins.upper_m.push_back(nearest(bounds, envelope.conduit, true, at, envelope.greatest_m[i]));
-            margins.lower_m.push_back(nearest(bounds, envelope.conduit, false, at, envelope.least_m[i]));
-            margins.axis_m.push_back(axis.empty() ? none : envelope.least_m[i] - elevationOn(axis, at));
+            margins.upper_m.push_back(
+                nearest(bounds, envelope.conduit, true, at, envelope.greatest_m[i]));
+            margins.lower_m.push_back(
+                nearest(bounds, envelope.conduit, false, at, envelope.least_m[i]));
+            margins.axis_m.push_back(axis.empty() ? none
+                                                  : envelope.least_m[i] - elevationOn(axis, at));
         }
         out.push_back(std::move(margins));
     }
@@ -111,7 +115,8 @@ void addBands(Scene& scene, const Margins& margins, const std::vector<double>& v
     addBand(scene, edge, toAxis);
 }
 
-std::vector<double> whereNone(const std::vector<double>& limits, const std::vector<double>& instead) {
+std::vector<double> whereNone(const std::vector<double>& limits,
+                              const std::vector<double>& instead) {
     std::vector<double> out;
     for (std::size_t i = 0; i < limits.size(); ++i) {
         // One station of overlap, so that the two bands meet.
@@ -122,7 +127,8 @@ std::vector<double> whereNone(const std::vector<double>& limits, const std::vect
     return out;
 }
 
-QString leastWords(const std::vector<double>& values, const std::vector<double>& chainage, const char* side) {
+QString leastWords(const std::vector<double>& values, const std::vector<double>& chainage,
+                   const char* side) {
     std::size_t best = values.size();
     for (std::size_t i = 0; i < values.size(); ++i) {
         if (std::isfinite(values[i]) && (best == values.size() || values[i] < values[best])) {
@@ -152,9 +158,10 @@ void addConduit(Making& making, const Margins& margins) {
         making.placer.avoid(scene.bands[i].edge, 1.0);
     }
     item.box = item.shape.boundingRect();
-    item.description = QStringLiteral("%1: %2; %3")
-                           .arg(text(name), leastWords(margins.upper_m, margins.chainage_m, "upper"),
-                                leastWords(margins.lower_m, margins.chainage_m, "lower"));
+    item.description =
+        QStringLiteral("%1: %2; %3")
+            .arg(text(name), leastWords(margins.upper_m, margins.chainage_m, "upper"),
+                 leastWords(margins.lower_m, margins.chainage_m, "lower"));
     making.items.push_back(std::move(item));
 }
 
@@ -172,10 +179,10 @@ std::optional<double> chainageOf(const plant::Plant& plant, const results::Place
 }
 
 bool onRibbon(const results::Verdict& verdict) {
-    const bool asHead = verdict.measure == Measure::level || verdict.measure == Measure::head ||
-                        verdict.measure == Measure::pressureHead;
-    return asHead && std::isfinite(verdict.margin) && verdict.mark != results::Mark::notApplicable &&
-           verdict.mark != results::Mark::notRun;
+    const bool asHead = verdict.measure == Measure::level || verdict.measure == Measure::head
+                        || verdict.measure == Measure::pressureHead;
+    return asHead && std::isfinite(verdict.margin) && verdict.mark != results::Mark::notApplicable
+           && verdict.mark != results::Mark::notRun;
 }
 
 void addMark(Making& making, const results::Verdict& verdict, bool leading) {
@@ -201,7 +208,8 @@ void addMark(Making& making, const results::Verdict& verdict, bool leading) {
     item.time_s = verdict.time_s;
     item.thing = {"limits", limits.name(verdict.limit)};
     item.box = bar;
-    item.description = spokenVerdict(text(limits.name(verdict.limit)), limits[verdict.limit], verdict);
+    item.description =
+        spokenVerdict(text(limits.name(verdict.limit)), limits[verdict.limit], verdict);
     if (const auto box = making.placer.place(places)) {
         scene.labels.push_back({words, *box, TextSize::small, weight, !leading, false, {}});
         item.label = words;
@@ -239,11 +247,12 @@ void chooseScale(Scene& scene, const std::vector<Margins>& all, const Shown& wha
     }
     scene.pixelsPerMetre = 0.46 * scene.chart.height() / most;
     const double half_m = 0.5 * scene.chart.height() / scene.pixelsPerMetre;
-    const int count = std::max(1, static_cast<int>(scene.chart.height() / 2.0 /
-                                                   (1.3 * scene.look.lineHeight(TextSize::small))));
+    const double line_m = 1.1 * scene.look.lineHeight(TextSize::small) / scene.pixelsPerMetre;
     scene.ticks.emplace_back(scene.zero_y, QStringLiteral("0"));
-    for (const double value : roundValues(0.0, half_m, count)) {
-        if (value > 0.0) {
+    double before = 0.0;
+    for (const double value : roundValues(0.0, half_m, 3)) {
+        if (value - before >= line_m && value + 0.5 * line_m <= half_m) {
+            before = value;
             const QString label = text(printNumber(Quantity::head, value, {}, 0));
             scene.ticks.emplace_back(scene.zero_y - value * scene.pixelsPerMetre, label);
             scene.ticks.emplace_back(scene.zero_y + value * scene.pixelsPerMetre, label);
@@ -254,10 +263,14 @@ void chooseScale(Scene& scene, const std::vector<Margins>& all, const Shown& wha
 void addCaption(Making& making, const QString& words, bool upper) {
     auto& scene = making.scene;
     const QSizeF size = textSize(words, scene.look.font(TextSize::small));
-    const double y = upper ? scene.chart.top() + 1 : scene.chart.bottom() - size.height() - 1;
+    const double outer = upper ? scene.chart.top() + 1 : scene.chart.bottom() - size.height() - 1;
+    const double inner = upper ? scene.zero_y - size.height() - 2 : scene.zero_y + 2;
     std::vector<QRectF> places;
     for (const double share : {0.02, 0.12, 0.25, 0.40, 0.55, 0.70}) {
-        places.push_back(QRectF(QPointF(scene.chart.left() + share * scene.chart.width(), y), size));
+        for (const double y : {outer, inner}) {
+            places.push_back(
+                QRectF(QPointF(scene.chart.left() + share * scene.chart.width(), y), size));
+        }
     }
     if (const auto box = making.placer.place(places)) {
         scene.labels.push_back({words, *box, TextSize::small, TextWeight::normal, true, false, {}});
@@ -339,10 +352,10 @@ void addRulerWords(Making& making) {
         const QSizeF size = textSize(words, scene.look.font(TextSize::small));
         const double middle = (scene.map.from_px(i) + scene.map.to_px(i)) / 2;
         const double right = making.input.size.width() - size.width();
-        const auto box = placer.place(
-            {QRectF(QPointF(middle - size.width() / 2, y), size),
-             QRectF(QPointF(std::min(scene.map.from_px(i), right), y), size),
-             QRectF(QPointF(scene.map.to_px(i) - size.width(), y), size)});
+        const auto box =
+            placer.place({QRectF(QPointF(middle - size.width() / 2, y), size),
+                          QRectF(QPointF(std::min(scene.map.from_px(i), right), y), size),
+                          QRectF(QPointF(scene.map.to_px(i) - size.width(), y), size)});
         if (!box) {
             continue;
         }
@@ -389,8 +402,8 @@ RibbonPicture ribbonPicture(const SectionInput& input) {
         lastGround = ground.back().first;
     }
     auto scene = std::make_shared<RibbonPicture::Scene>(
-        input.look, chainageMap(what.variant->plant, chart.left(), chart.right(), lead, input.scales,
-                                lastGround));
+        input.look, chainageMap(what.variant->plant, chart.left(), chart.right(), lead,
+                                input.scales, lastGround));
     scene->chart = chart;
     scene->zero_y = chart.center().y();
     scene->ruler_y = chart.bottom() + 0.5 * input.look.space.unit;
@@ -407,12 +420,16 @@ RibbonPicture ribbonPicture(const SectionInput& input) {
     for (const auto& conduit : margins) {
         addConduit(making, conduit);
     }
+    making.placer.avoid(QPolygonF{{chart.left(), scene->zero_y}, {chart.right(), scene->zero_y}},
+                        1.0);
     addMarks(making);
     if (making.what.run != nullptr) {
         addCaption(making, QStringLiteral("metres left to the upper limit"), true);
-        addCaption(making, QStringLiteral("metres left to the lower limit; pale: above the axis"), false);
+        addCaption(making, QStringLiteral("metres left to the lower limit; pale: above the axis"),
+                   false);
     } else {
-        addCaption(making, QStringLiteral("no run to show: metres left to the limits stand here"), true);
+        addCaption(making, QStringLiteral("no run to show: metres left to the limits stand here"),
+                   true);
     }
     addRuler(making);
     addRulerWords(making);

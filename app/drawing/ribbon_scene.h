@@ -8,19 +8,19 @@
 namespace headroom::drawing {
 
 struct RibbonBand {
-    QPolygonF edge;          ///< metres left along a conduit, in pixels
-    QPolygonF body;          ///< between the edge and the zero line
-    bool toAxis = false;     ///< no limit there: metres above the conduit's axis, pale
+    QPolygonF edge;      ///< metres left along a conduit, in pixels
+    QPolygonF body;      ///< between the edge and the zero line
+    bool toAxis = false; ///< no limit there: metres above the conduit's axis, pale
 };
 struct RibbonMark {
-    QPointF at;              ///< metres left at the place of one limit
+    QPointF at; ///< metres left at the place of one limit
     int limit = -1;
     QColor colour;
     bool leading = false;
 };
 struct RulerTick {
     double x_px = 0.0;
-    QString label;           ///< empty: a tick alone
+    QString label; ///< empty: a tick alone
     QRectF box;
 };
 
@@ -29,7 +29,7 @@ struct RibbonPicture::Scene {
 
     const Look& look;
     ChainageMap map;
-    QRectF chart;            ///< metres left
+    QRectF chart; ///< metres left
     double zero_y = 0.0;
     double pixelsPerMetre = 1.0;
     std::vector<std::pair<double, QString>> ticks; ///< y and what is written there

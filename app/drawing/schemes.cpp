@@ -97,9 +97,12 @@ Look print() {
 
 Look colours(Scheme scheme) {
     switch (scheme) {
-    case Scheme::light: return light();
-    case Scheme::dark: return dark();
-    case Scheme::print: return print();
+    case Scheme::light:
+        return light();
+    case Scheme::dark:
+        return dark();
+    case Scheme::print:
+        return print();
     }
     return light();
 }

@@ -11,7 +11,8 @@ namespace headroom::drawing::section {
 namespace {
 
 /// A label and the item that stands for it.
-void put(Making& making, Label label, plant::Path thing, const QString& description, int limit = -1) {
+void put(Making& making, Label label, plant::Path thing, const QString& description,
+         int limit = -1) {
     Item item;
     item.kind = ItemKind::label;
     item.thing = std::move(thing);
@@ -56,10 +57,12 @@ std::vector<QRectF> ringsAround(QPointF at, QSizeF size, double step) {
     std::vector<QRectF> out;
     for (const double distance : {2.2, 4.0, 7.0, 11.0, 16.0}) {
         const double d = distance * step;
-        for (const auto& [sx, sy] : {std::pair(-1, 1), {1, 1}, {-1, -1}, {1, -1}, {0, 1}, {0, -1}}) {
-            const double x = at.x() + (sx < 0   ? -d - size.width()
-                                       : sx > 0 ? d
-                                                : -size.width() / 2.0);
+        for (const auto& [sx, sy] :
+             {std::pair(-1, 1), {1, 1}, {-1, -1}, {1, -1}, {0, 1}, {0, -1}}) {
+            const double x = at.x()
+                             + (sx < 0   ? -d - size.width()
+                                : sx > 0 ? d
+                                         : -size.width() / 2.0);
             const double y = sy > 0 ? at.y() + d : at.y() - d - size.height();
             out.push_back(QRectF(QPointF(x, y), size));
         }
@@ -79,15 +82,18 @@ void labelLozenge(Making& making) {
     const QSizeF size = sizeOf(making, words, TextWeight::strong);
     const double pad = 2 * scene.look.space.unit;
     // The frame around the text takes room too.
-    auto candidates = ringsAround(lozenge.at, size + QSizeF(2 * pad, pad), 1.5 * scene.look.space.unit);
+    auto candidates =
+        ringsAround(lozenge.at, size + QSizeF(2 * pad, pad), 1.5 * scene.look.space.unit);
     const auto box = making.placer.place(candidates);
     if (!box) {
         ++making.leftOut;
         return;
     }
     const auto& name = scene.shown.variant->limits.name(lozenge.limit);
-    Label label{words, box->adjusted(pad, pad / 2, -pad, -pad / 2), TextSize::small,
-                TextWeight::strong, false, true, lozenge.at};
+    Label label{words,           box->adjusted(pad, pad / 2, -pad, -pad / 2),
+                TextSize::small, TextWeight::strong,
+                false,           true,
+                lozenge.at};
     put(making, label, {"limits", name}, spokenVerdict(text(name), limit, verdict), lozenge.limit);
     making.items.back().kind = ItemKind::lozenge;
     making.items.back().time_s = verdict.time_s;
@@ -111,9 +117,10 @@ void labelReservoirs(Making& making) {
         const double above = y - gap - first.height() - second.height();
         const double right = drawing.right_px - wide;
         const auto box = making.placer.place(
-            {at(drawing.left_px + gap, above), at(right - gap, above), at(drawing.right_px + gap, above),
-             at(drawing.left_px - wide - gap, above), at(drawing.left_px + gap, above - 4 * gap),
-             at(right - gap, above - 4 * gap), at(right - gap, above - 8 * gap)});
+            {at(drawing.left_px + gap, above), at(right - gap, above),
+             at(drawing.right_px + gap, above), at(drawing.left_px - wide - gap, above),
+             at(drawing.left_px + gap, above - 4 * gap), at(right - gap, above - 4 * gap),
+             at(right - gap, above - 8 * gap)});
         if (!box) {
             ++making.leftOut;
             continue;
@@ -121,8 +128,14 @@ void labelReservoirs(Making& making) {
         const plant::Path path = pathOf("reservoirs", name);
         const QString said = QStringLiteral("%1, water level %2").arg(text(name), level);
         put(making, {text(name), QRectF(box->topLeft(), first)}, path, said);
-        put(making, {level, QRectF(QPointF(box->left(), box->top() + first.height()), second),
-                     TextSize::small, TextWeight::normal, true, false, {}},
+        put(making,
+            {level,
+             QRectF(QPointF(box->left(), box->top() + first.height()), second),
+             TextSize::small,
+             TextWeight::normal,
+             true,
+             false,
+             {}},
             path, said);
     }
 }
@@ -145,14 +158,17 @@ void labelChambers(Making& making) {
         const auto& name = chambers.name(drawing.chamber);
         auto* moving = movingOf(scene, i);
         const QSizeF first = sizeOf(making, text(name));
-        const QSizeF second = moving != nullptr ? sizeOf(making, QStringLiteral("−8888.8 m")) : QSizeF();
+        const QSizeF second =
+            moving != nullptr ? sizeOf(making, QStringLiteral("−8888.8 m")) : QSizeF();
         const QSizeF both(std::max(first.width(), second.width()),
                           first.height() + std::max(0.0, second.height()));
         auto candidates = around(drawing.box(), both, gap);
         // Beside the shaft first, near its rim.
         const QRectF body = drawing.box();
-        candidates.insert(candidates.begin(), {QRectF(QPointF(body.right() + 2 * gap, body.top() + gap), both),
-                                               QRectF(QPointF(body.left() - 2 * gap - both.width(), body.top() + gap), both)});
+        candidates.insert(
+            candidates.begin(),
+            {QRectF(QPointF(body.right() + 2 * gap, body.top() + gap), both),
+             QRectF(QPointF(body.left() - 2 * gap - both.width(), body.top() + gap), both)});
         const auto box = making.placer.place(candidates);
         if (!box) {
             ++making.leftOut;
@@ -175,8 +191,12 @@ void labelUnits(Making& making) {
         const double gap = 0.5 * scene.look.space.unit;
         auto candidates = around(drawing.box(), size, gap);
         std::swap(candidates[0], candidates[1]); // below first
-        putAt(making, {text(name), {}, false, pathOf("units", name),
-                       QStringLiteral("%1, unit").arg(text(name))},
+        putAt(making,
+              {text(name),
+               {},
+               false,
+               pathOf("units", name),
+               QStringLiteral("%1, unit").arg(text(name))},
               candidates);
     }
 }
@@ -203,7 +223,8 @@ std::vector<QRectF> besideStretch(const QLineF& stretch, QSizeF size, double off
         const double beside = slope > 0.0 ? (off + 0.5 * size.height()) / slope + off : 1e9;
         if (slope < 0.5) {
             out.push_back(QRectF(QPointF(at.x() - size.width() / 2, at.y() + down), size));
-            out.push_back(QRectF(QPointF(at.x() - size.width() / 2, at.y() - down - size.height()), size));
+            out.push_back(
+                QRectF(QPointF(at.x() - size.width() / 2, at.y() - down - size.height()), size));
         } else {
             const double y = at.y() - size.height() / 2;
             out.push_back(QRectF(QPointF(at.x() - beside - size.width(), y), size));
@@ -218,11 +239,13 @@ void labelConduits(Making& making) {
     const auto& conduits = scene.shown.variant->plant.conduits;
     for (const auto& shape : scene.layout.conduits) {
         const auto& name = conduits.name(shape.conduit);
-        const QString words = text(name) + QLatin1Char(' ') + wholeAmount(Quantity::length, shape.length_m);
+        const QString words =
+            text(name) + QLatin1Char(' ') + wholeAmount(Quantity::length, shape.length_m);
         const double off = shape.halfWidth() + 1.5 * scene.look.space.unit;
-        putAt(making, {words, {}, false, pathOf("conduits", name),
-                       QStringLiteral("%1, conduit").arg(words)},
-              besideStretch(longestStretch(shape.line), sizeOf(making, words), off));
+        putAt(
+            making,
+            {words, {}, false, pathOf("conduits", name), QStringLiteral("%1, conduit").arg(words)},
+            besideStretch(longestStretch(shape.line), sizeOf(making, words), off));
     }
 }
 
@@ -239,9 +262,13 @@ void labelBounds(Making& making) {
         const QSizeF size = sizeOf(making, words);
         auto candidates = around(zone, size, scene.look.space.unit);
         std::rotate(candidates.begin(), candidates.begin() + 2, candidates.begin() + 4);
-        putAt(making, {words, {}, true, {"limits", limits.name(drawing.limit)},
-                       QStringLiteral("%1: limit %2").arg(text(limits.name(drawing.limit)), words),
-                       drawing.limit},
+        putAt(making,
+              {words,
+               {},
+               true,
+               {"limits", limits.name(drawing.limit)},
+               QStringLiteral("%1: limit %2").arg(text(limits.name(drawing.limit)), words),
+               drawing.limit},
               candidates);
     }
 }
@@ -256,10 +283,11 @@ QString hintWords(const plant::Variant& variant) {
         return {};
     }
     const QString dot = QStringLiteral(" · ");
-    return (level ? QStringLiteral("Level known") : QStringLiteral("no level yet")) + dot +
-           (way ? QStringLiteral("waterway drawn") : QStringLiteral("no waterway yet")) + dot +
-           (unit ? QStringLiteral("units %1").arg(plant.units.size()) : QStringLiteral("no unit yet")) +
-           dot + QStringLiteral("limits %1").arg(variant.limits.size());
+    return (level ? QStringLiteral("Level known") : QStringLiteral("no level yet")) + dot
+           + (way ? QStringLiteral("waterway drawn") : QStringLiteral("no waterway yet")) + dot
+           + (unit ? QStringLiteral("units %1").arg(plant.units.size())
+                   : QStringLiteral("no unit yet"))
+           + dot + QStringLiteral("limits %1").arg(variant.limits.size());
 }
 
 std::vector<QRectF> corners(const QRectF& plot, QSizeF size) {
@@ -302,9 +330,10 @@ void addLabels(Making& making, const HeadBounds&) {
     labelBounds(making);
     putCorner(making, hintWords(*making.scene.shown.variant));
     if (making.leftOut > 0) {
-        putCorner(making, making.leftOut == 1
-                              ? QStringLiteral("1 label left out for want of room")
-                              : QStringLiteral("%1 labels left out for want of room").arg(making.leftOut));
+        putCorner(making,
+                  making.leftOut == 1
+                      ? QStringLiteral("1 label left out for want of room")
+                      : QStringLiteral("%1 labels left out for want of room").arg(making.leftOut));
     }
 }
 

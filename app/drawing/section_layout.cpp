@@ -3,6 +3,7 @@
 #include "drawing/words.h"
 
 #include <QPainterPathStroker>
+
 #include <algorithm>
 
 /// The bodies of the Section as items: what they are, where they can be hit, what is said.
@@ -27,7 +28,8 @@ QPainterPath along(const QPolygonF& line, double width) {
     return stroker.createStroke(path);
 }
 
-void add(Making& making, ItemKind kind, plant::Path thing, QPainterPath shape, QString description) {
+void add(Making& making, ItemKind kind, plant::Path thing, QPainterPath shape,
+         QString description) {
     Item item;
     item.kind = kind;
     item.thing = std::move(thing);
@@ -111,7 +113,7 @@ void addChambers(Making& making) {
         const auto* channel = making.scene.shown.run == nullptr
                                   ? nullptr
                                   : making.scene.shown.run->find(
-                                        Measure::level, {results::Thing::chamber, drawing.chamber});
+                                      Measure::level, {results::Thing::chamber, drawing.chamber});
         if (channel != nullptr) {
             const auto position =
                 static_cast<std::size_t>(&drawing - making.scene.layout.chambers.data());
@@ -128,9 +130,11 @@ void addUnits(Making& making) {
         shape.addEllipse(drawing.centre, drawing.radius_px, drawing.radius_px);
         add(making, ItemKind::unit, pathOf("units", name), shape,
             QStringLiteral("%1, unit, centre line %2")
-                .arg(text(name), numberText(Quantity::elevation, making.scene.layout.scale.elevation_m(
-                                                                 drawing.centre.y()))));
+                .arg(text(name),
+                     numberText(Quantity::elevation,
+                                making.scene.layout.scale.elevation_m(drawing.centre.y()))));
         making.placer.avoid(drawing.box());
+        making.placer.avoid(wayThrough(drawing), making.scene.look.width.lining / 2);
     }
 }
 
@@ -154,8 +158,9 @@ void addBodies(Making& making) {
         const double y = making.scene.layout.plot.bottom();
         item.box = QRectF(x - 8, y - 12, 16, 12);
         item.shape.addRect(item.box);
-        item.description = QStringLiteral("Break mark: ") +
-                           making.scene.layout.map.compressionWords(making.scene.layout.map.spanAt(x));
+        item.description =
+            QStringLiteral("Break mark: ")
+            + making.scene.layout.map.compressionWords(making.scene.layout.map.spanAt(x));
         making.placer.avoid(item.box);
         making.items.push_back(std::move(item));
     }

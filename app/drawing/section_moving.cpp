@@ -4,6 +4,7 @@
 
 #include <QPainter>
 #include <QPainterPath>
+
 #include <algorithm>
 #include <cmath>
 #include <numbers>
@@ -26,13 +27,14 @@ QPainterPath petal() {
 
 double turnsAt(const Turning& turning, double interval_s, double time_s) {
     const double last = static_cast<double>(turning.turns.size() - 1);
-    const double place =
-        std::isfinite(time_s) && interval_s > 0.0 ? std::clamp(time_s / interval_s, 0.0, last) : 0.0;
+    const double place = std::isfinite(time_s) && interval_s > 0.0
+                             ? std::clamp(time_s / interval_s, 0.0, last)
+                             : 0.0;
     const auto before = static_cast<std::size_t>(place);
     const std::size_t after = std::min(before + 1, turning.turns.size() - 1);
     const double share = place - static_cast<double>(before);
-    return static_cast<double>(turning.turns[before]) * (1.0 - share) +
-           static_cast<double>(turning.turns[after]) * share;
+    return static_cast<double>(turning.turns[before]) * (1.0 - share)
+           + static_cast<double>(turning.turns[after]) * share;
 }
 
 void paintRosette(QPainter& painter, const UnitDrawing& unit, double turns, const Look& look) {
@@ -104,11 +106,46 @@ void paintLevels(QPainter& painter, const Scene& scene, double time_s) {
         painter.drawLine(QPointF(drawing.x_px - half, y), QPointF(drawing.x_px + half, y));
         painter.restore();
         if (!moving.labelBox.isNull()) {
-            Label label{numberText(Quantity::elevation, level), moving.labelBox, TextSize::small,
-                        TextWeight::normal, true, false, {}};
+            Label label{numberText(Quantity::elevation, level),
+                        moving.labelBox,
+                        TextSize::small,
+                        TextWeight::normal,
+                        true,
+                        false,
+                        {}};
             paintPlain(painter, label, look, Qt::AlignLeft);
         }
     }
+}
+
+/// Leaves out corners that the eye does not see: a thick line with few corners is quick.
+QPolygonF withoutStraight(const QPolygonF& line) {
+    constexpr double seen_px = 0.35;
+    QPolygonF out;
+    qsizetype from = 0;
+    while (from < line.size()) {
+        out << line[from];
+        // As far as one straight line stays close to all corners passed, within a cone of slopes.
+        double least = -1e300, most = 1e300;
+        qsizetype end = from + 1;
+        for (; end < line.size(); ++end) {
+            const double dx = std::max(line[end].x() - line[from].x(), 1e-9);
+            const double dy = line[end].y() - line[from].y();
+            if (dy / dx < least || dy / dx > most) {
+                break;
+            }
+            least = std::max(least, (dy - seen_px) / dx);
+            most = std::min(most, (dy + seen_px) / dx);
+        }
+        from = end == from + 1 ? end : end - 1;
+        if (end == line.size()) {
+            break;
+        }
+    }
+    if (!line.isEmpty() && out.back() != line.back()) {
+        out << line.back();
+    }
+    return out;
 }
 
 void paintHeadLines(QPainter& painter, const Scene& scene, double time_s) {
@@ -124,12 +161,29 @@ void paintHeadLines(QPainter& painter, const Scene& scene, double time_s) {
                 shape << QPointF(line.x_px[i], scene.layout.scale.y_px(head));
             }
         }
-        // Separate segments: a thick poly-line is many times slower.
-        QVector<QLineF> segments;
-        for (qsizetype i = 1; i < shape.size(); ++i) {
-            segments.append(QLineF(shape[i - 1], shape[i]));
+        QPainterPath path;
+        path.addPolygon(withoutStraight(shape));
+        painter.drawPath(path);
+    }
+}
+
+void paintLozenges(QPainter& painter, const Scene& scene) {
+    const auto& look = scene.look;
+    for (const auto& drawing : scene.lozenges) {
+        const double half = (drawing.leading ? 5.5 : 4.0) * look.scale;
+        if (drawing.computed) {
+            QPen pen = look.hairPen(look.mark(drawing.mark));
+            pen.setDashPattern({2, 2});
+            painter.setPen(pen);
+            painter.drawLine(*drawing.computed, drawing.at);
         }
-        painter.drawLines(segments);
+        const QPolygonF shape{{drawing.at.x(), drawing.at.y() - half},
+                              {drawing.at.x() + half, drawing.at.y()},
+                              {drawing.at.x(), drawing.at.y() + half},
+                              {drawing.at.x() - half, drawing.at.y()}};
+        painter.setPen(look.pen(look.sheet, look.width.data));
+        painter.setBrush(look.mark(drawing.mark));
+        painter.drawPolygon(shape);
     }
 }
 
@@ -148,10 +202,22 @@ void SectionPicture::paintMoving(QPainter& painter, double time_s) const {
     section::paintLevels(painter, scene, time_s);
     section::paintRosettes(painter, scene, time_s);
     section::paintHeadLines(painter, scene, time_s);
+    section::paintLozenges(painter, scene);
     if (!scene.clockBox.isNull()) {
-        Label label{QStringLiteral("head line at ") + numberText(Quantity::time, time_s), scene.clockBox,
-                    TextSize::small, TextWeight::normal, true, false, {}};
+        Label label{QStringLiteral("head line at ") + numberText(Quantity::time, time_s),
+                    scene.clockBox,
+                    TextSize::small,
+                    TextWeight::normal,
+                    true,
+                    false,
+                    {}};
         paintPlain(painter, label, scene.look, Qt::AlignRight);
+    }
+    painter.setClipping(false);
+    for (const auto& label : scene.labels) {
+        if (label.framed) {
+            paintLabel(painter, label, scene.look);
+        }
     }
     painter.restore();
 }

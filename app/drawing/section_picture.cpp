@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "drawing/section_scene.h"
-
 #include "drawing/axis_ticks.h"
+#include "drawing/section_scene.h"
 #include "drawing/words.h"
 
 #include <algorithm>
@@ -16,8 +15,8 @@ plant::Path pathOf(const char* collection, const std::string& name) {
 }
 
 bool selects(const plant::Path& selected, const plant::Path& thing) {
-    return selected.size() >= thing.size() && !thing.empty() &&
-           std::equal(thing.begin(), thing.end(), selected.begin());
+    return selected.size() >= thing.size() && !thing.empty()
+           && std::equal(thing.begin(), thing.end(), selected.begin());
 }
 
 namespace {
@@ -80,9 +79,9 @@ SectionPicture sectionPicture(const SectionInput& input) {
     Shown what = shown(input.snapshot, input.inHand, input.selection);
     const auto bounds = headBounds(*what.variant, what.loadClass, what.verdicts);
     const auto plot = plotArea(input.size, input.look, 2.0, 2.0);
-    auto layout = waterwayLayout({what.variant->plant, input.snapshot.project().ground,
-                                  what.level_m(), section::elevationsOf(what, bounds), plot,
-                                  input.look, input.scales});
+    auto layout =
+        waterwayLayout({what.variant->plant, input.snapshot.project().ground, what.level_m(),
+                        section::elevationsOf(what, bounds), plot, input.look, input.scales});
     auto scene = std::make_shared<SectionPicture::Scene>(input.look, input.size, std::move(layout));
     scene->shown = std::move(what);
     const auto& plant = scene->shown.variant->plant;

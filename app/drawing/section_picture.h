@@ -8,6 +8,7 @@
 #include "studies/board.h"
 
 #include <QSizeF>
+
 #include <memory>
 
 class QPainter;
@@ -23,17 +24,16 @@ struct SectionInput {
     Scales scales = Scales::three;
 };
 
-/// What the three ways out of an empty project are called; each is an item of kind label.
-inline constexpr const char* drawPlantWords = "Draw a plant";
-inline constexpr const char* pasteTableWords = "Paste a table";
+/// What the ways out of an empty project are called; each is an item of kind label.
 inline constexpr const char* openDemoWords = "Open a demo plant";
+inline constexpr const char* openProjectWords = "Open a project";
 
 /// The plant's longitudinal section as data. Holds what it shows: neither snapshot nor cell need
 /// to outlive it.
 class SectionPicture {
 public:
     Items items;
-    int labelsLeftOut = 0;            ///< names that found no room; said in the picture
+    int labelsLeftOut = 0; ///< names that found no room; said in the picture
 
     /// Everything that does not move with the cursor (for a pixmap), and what does.
     void paintStill(QPainter& painter) const;

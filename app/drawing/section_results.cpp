@@ -14,10 +14,10 @@ namespace {
 
 using results::Thing;
 
-constexpr double placeHalf_px = 16.0;    ///< half width of a bound at a single place
+constexpr double placeHalf_px = 16.0; ///< half width of a bound at a single place
 constexpr double chamberBeside_px = 12.0;
 constexpr double lozengeHalf_px = 5.5;
-constexpr double eyeTurns_1s = 0.5;      ///< turns a second of the rosette at rated speed
+constexpr double eyeTurns_1s = 0.5; ///< turns a second of the rosette at rated speed
 
 // --- envelope and head line ---------------------------------------------------------------------
 
@@ -67,13 +67,14 @@ void addEnvelope(Making& making, const results::Envelope& envelope) {
     item.box = item.shape.boundingRect();
     const auto most = std::max_element(envelope.greatest_m.begin(), envelope.greatest_m.end());
     const auto least = std::min_element(envelope.least_m.begin(), envelope.least_m.end());
-    item.description = QStringLiteral("Envelope of heads along %1, %2 to %3")
-                           .arg(text(conduits.name(envelope.conduit)),
-                                numberText(Quantity::elevation, *least), numberText(Quantity::elevation, *most));
+    item.description =
+        QStringLiteral("Envelope of heads along %1, %2 to %3")
+            .arg(text(conduits.name(envelope.conduit)), numberText(Quantity::elevation, *least),
+                 numberText(Quantity::elevation, *most));
     // Behind the bodies: a conduit or chamber inside the band is hit first.
-    const auto front = std::find_if(making.items.begin(), making.items.end(), [](const Item& other) {
-        return other.kind != ItemKind::ground;
-    });
+    const auto front =
+        std::find_if(making.items.begin(), making.items.end(),
+                     [](const Item& other) { return other.kind != ItemKind::ground; });
     making.items.insert(front, std::move(item));
     making.placer.avoid(high, 1.0);
     making.placer.avoid(low, 1.0);
@@ -88,8 +89,8 @@ Texture textureOf(const plant::Limit& limit) {
     return timed ? Texture::rules : Texture::hatch;
 }
 
-void addBound(Making& making, int limit, const QPolygonF& line, bool upper, bool guide, double value,
-              Quantity quantity) {
+void addBound(Making& making, int limit, const QPolygonF& line, bool upper, bool guide,
+              double value, Quantity quantity) {
     auto& scene = making.scene;
     const auto& limits = scene.shown.variant->limits;
     BoundDrawing drawing{limit, line, {}, textureOf(limits[limit]), guide};
@@ -129,14 +130,16 @@ void addBoundLine(Making& making, const BoundLine& line) {
         return;
     }
     if (whole.size() > 1) {
-        addBound(making, line.places.back().limit, whole, line.upper, true, 0.0, Quantity::elevation);
+        addBound(making, line.places.back().limit, whole, line.upper, true, 0.0,
+                 Quantity::elevation);
     }
     const double half = placeHalf_px * scene.look.scale;
     for (qsizetype i = 0; i < whole.size(); ++i) {
         const auto& place = line.places[static_cast<std::size_t>(i)];
         if (!isChamberLevel(limits[place.limit])) { // chambers draw their own
             const QPolygonF here{whole[i] - QPointF(half, 0), whole[i] + QPointF(half, 0)};
-            addBound(making, place.limit, here, line.upper, false, place.head_m, Quantity::elevation);
+            addBound(making, place.limit, here, line.upper, false, place.head_m,
+                     Quantity::elevation);
         }
     }
 }
@@ -147,9 +150,8 @@ void addChamberBound(Making& making, const ChamberBound& bound) {
     for (const auto& drawing : scene.layout.chambers) {
         if (drawing.chamber == bound.chamber) {
             const double half = drawing.halfWidth_px(y) + chamberBeside_px * scene.look.scale;
-            addBound(making, bound.limit,
-                     {{drawing.x_px - half, y}, {drawing.x_px + half, y}}, bound.upper, false,
-                     bound.level_m, Quantity::elevation);
+            addBound(making, bound.limit, {{drawing.x_px - half, y}, {drawing.x_px + half, y}},
+                     bound.upper, false, bound.level_m, Quantity::elevation);
         }
     }
 }
@@ -168,7 +170,8 @@ std::optional<QPointF> bodyPlace(const Scene& scene, const results::Place& place
         }
     }
     for (const auto& conduit : scene.layout.conduits) {
-        if (place.thing == Thing::conduit && conduit.conduit == place.index && !conduit.line.isEmpty()) {
+        if (place.thing == Thing::conduit && conduit.conduit == place.index
+            && !conduit.line.isEmpty()) {
             return conduit.line[conduit.line.size() / 2];
         }
     }
@@ -176,7 +179,8 @@ std::optional<QPointF> bodyPlace(const Scene& scene, const results::Place& place
 }
 
 /// Chainage and axis elevation of a point, chamber or place on a conduit.
-std::optional<std::pair<double, double>> stands(const plant::Plant& plant, const results::Place& place) {
+std::optional<std::pair<double, double>> stands(const plant::Plant& plant,
+                                                const results::Place& place) {
     int point = place.thing == Thing::point ? place.index : -1;
     if (place.thing == Thing::chamber && place.index < plant.chambers.size()) {
         point = plant.chambers[place.index].at.index;
@@ -196,8 +200,8 @@ std::optional<std::pair<double, double>> stands(const plant::Plant& plant, const
 std::optional<LozengeDrawing> lozengeOf(const Scene& scene, const results::Verdict& verdict) {
     LozengeDrawing out{verdict.limit, {}, {}, markOf(verdict.mark), false};
     const auto& plant = scene.shown.variant->plant;
-    const bool asHead = verdict.measure == Measure::level || verdict.measure == Measure::head ||
-                        verdict.measure == Measure::pressureHead;
+    const bool asHead = verdict.measure == Measure::level || verdict.measure == Measure::head
+                        || verdict.measure == Measure::pressureHead;
     const auto where = stands(plant, verdict.place);
     if (asHead && where) {
         const double above = verdict.measure == Measure::pressureHead ? where->second : 0.0;
@@ -223,8 +227,8 @@ std::optional<LozengeDrawing> lozengeOf(const Scene& scene, const results::Verdi
 }
 
 bool worthALozenge(results::Mark mark) {
-    return mark == results::Mark::broken || mark == results::Mark::tight ||
-           mark == results::Mark::undecided;
+    return mark == results::Mark::broken || mark == results::Mark::tight
+           || mark == results::Mark::undecided;
 }
 
 void addLozenges(Making& making) {

@@ -21,7 +21,7 @@ struct BoundDrawing {
     int limit = -1;
     QPolygonF line, zone;
     Texture texture = Texture::hatch;
-    bool guide = false;    ///< straight between places: thin and broken, it does not judge there
+    bool guide = false; ///< straight between places: thin and broken, it does not judge there
 };
 struct LozengeDrawing {
     int limit = -1;
@@ -32,17 +32,17 @@ struct LozengeDrawing {
 };
 struct HeadLine {
     const results::Envelope* envelope = nullptr;
-    std::vector<int> stations;  ///< those that are drawn, at most one a pixel or so
+    std::vector<int> stations; ///< those that are drawn, at most one a pixel or so
     std::vector<double> x_px;
 };
 struct MovingLevel {
-    std::size_t chamber = 0;    ///< position among the layout's chambers
+    std::size_t chamber = 0; ///< position among the layout's chambers
     const results::Channel* channel = nullptr;
-    QRectF labelBox;            ///< kept free for the level at the cursor; null: no room
+    QRectF labelBox; ///< kept free for the level at the cursor; null: no room
 };
 struct Turning {
     std::size_t unit = 0;
-    std::vector<float> turns;   ///< turned until each recording instant, slowed down for the eye
+    std::vector<float> turns; ///< turned until each recording instant, slowed down for the eye
 };
 
 /// All that the painters need; made once, then only read.
@@ -63,12 +63,12 @@ struct SectionPicture::Scene {
     std::vector<BoundDrawing> bounds;
     std::vector<LozengeDrawing> lozenges;
     std::vector<Label> labels;
-    QPainterPath highlight;     ///< outline of what is selected
+    QPainterPath highlight; ///< outline of what is selected
 
     std::vector<HeadLine> headLines;
     std::vector<MovingLevel> levels;
     std::vector<Turning> turning;
-    QRectF clockBox;            ///< kept free for "head line at 151.0 s"
+    QRectF clockBox; ///< kept free for "head line at 151.0 s"
 };
 
 /// The steps of making a Section, in this order.
@@ -84,7 +84,7 @@ struct Making {
     int leftOut = 0;
 };
 
-void addBodies(Making& making);     ///< ground, waters, conduits, chambers, units as items
+void addBodies(Making& making); ///< ground, waters, conduits, chambers, units as items
 void addResults(Making& making, const HeadBounds& bounds); ///< envelope, bounds, lozenges, motion
 void addLabels(Making& making, const HeadBounds& bounds);
 void makeEmpty(Making& making);
@@ -93,7 +93,8 @@ std::vector<double> elevationsOf(const Shown& shown, const HeadBounds& bounds);
 /// Value of a channel at a time, straight between instants; `atRest` without a trace.
 double valueAt(const results::Channel& channel, double interval_s, double time_s);
 /// Head at a station at a time.
-double headAt(const results::Envelope& envelope, double interval_s, std::size_t station, double time_s);
+double headAt(const results::Envelope& envelope, double interval_s, std::size_t station,
+              double time_s);
 /// Path of a thing in the project: {"plant", "chambers", "Surge shaft"}.
 plant::Path pathOf(const char* collection, const std::string& name);
 /// Whether the selected path is this thing or something in it.

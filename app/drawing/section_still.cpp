@@ -3,6 +3,7 @@
 #include "drawing/words.h"
 
 #include <QPainter>
+
 #include <algorithm>
 #include <cmath>
 
@@ -19,6 +20,12 @@ QPainterPath areaOf(const QPolygonF& polygon) {
     return path;
 }
 
+QPainterPath pathAlong(const QPolygonF& line) {
+    QPainterPath path;
+    path.addPolygon(line);
+    return path;
+}
+
 void paintAxis(QPainter& painter, const Scene& scene) {
     const auto& plot = scene.layout.plot;
     painter.setPen(scene.look.hairPen(scene.look.line));
@@ -27,8 +34,13 @@ void paintAxis(QPainter& painter, const Scene& scene) {
     }
     const double height = scene.look.lineHeight(TextSize::small);
     for (const auto& tick : scene.ticks) {
-        Label label{tick.label, QRectF(0, tick.at_px - height / 2, plot.left() - 6, height),
-                    TextSize::small, TextWeight::normal, true, false, {}};
+        Label label{tick.label,
+                    QRectF(0, tick.at_px - height / 2, plot.left() - 6, height),
+                    TextSize::small,
+                    TextWeight::normal,
+                    true,
+                    false,
+                    {}};
         paintPlain(painter, label, scene.look, Qt::AlignRight);
     }
 }
@@ -49,7 +61,7 @@ void paintRock(QPainter& painter, const Scene& scene) {
     for (const auto& shape : layout.conduits) {
         QPen pen = scene.look.pen(scene.look.rock, 2 * shape.halfWidth() + 22 * scene.look.scale);
         pen.setCapStyle(Qt::RoundCap);
-        painter.strokePath([&] { QPainterPath p; p.addPolygon(shape.line); return p; }(), pen);
+        painter.strokePath(pathAlong(shape.line), pen);
     }
 }
 
@@ -73,12 +85,6 @@ void paintWaters(QPainter& painter, const Scene& scene) {
     }
 }
 
-QPainterPath pathAlong(const QPolygonF& line) {
-    QPainterPath path;
-    path.addPolygon(line);
-    return path;
-}
-
 void paintConduits(QPainter& painter, const Scene& scene) {
     // All linings first, then all water, so that bores open into each other.
     for (const bool water : {false, true}) {
@@ -91,12 +97,7 @@ void paintConduits(QPainter& painter, const Scene& scene) {
         }
         for (const auto& unit : scene.layout.units) {
             const double wide = water ? scene.look.width.water : scene.look.width.lining;
-            QPainterPath way(unit.inlet);
-            way.lineTo(unit.centre.x() - 1.6 * unit.radius_px, unit.centre.y());
-            way.lineTo(unit.centre);
-            way.lineTo(unit.centre.x() + 1.6 * unit.radius_px, unit.centre.y());
-            way.lineTo(unit.outlet);
-            painter.strokePath(way, scene.look.pen(colour, wide));
+            painter.strokePath(pathAlong(wayThrough(unit)), scene.look.pen(colour, wide));
         }
     }
 }
@@ -199,28 +200,9 @@ void paintBreaks(QPainter& painter, const Scene& scene) {
         painter.drawLine(QPointF(x - unit, y), QPointF(x + unit, y - 2.6 * unit));
         painter.setPen(look.hairPen(look.text));
         for (const double aside : {-0.8 * unit, 0.8 * unit}) {
-            painter.drawLine(QPointF(x - unit + aside, y), QPointF(x + unit + aside, y - 2.6 * unit));
+            painter.drawLine(QPointF(x - unit + aside, y),
+                             QPointF(x + unit + aside, y - 2.6 * unit));
         }
-    }
-}
-
-void paintLozenges(QPainter& painter, const Scene& scene) {
-    const auto& look = scene.look;
-    for (const auto& drawing : scene.lozenges) {
-        const double half = (drawing.leading ? 5.5 : 4.0) * look.scale;
-        if (drawing.computed) {
-            QPen pen = look.hairPen(look.mark(drawing.mark));
-            pen.setDashPattern({2, 2});
-            painter.setPen(pen);
-            painter.drawLine(*drawing.computed, drawing.at);
-        }
-        const QPolygonF shape{{drawing.at.x(), drawing.at.y() - half},
-                              {drawing.at.x() + half, drawing.at.y()},
-                              {drawing.at.x(), drawing.at.y() + half},
-                              {drawing.at.x() - half, drawing.at.y()}};
-        painter.setPen(look.pen(look.sheet, look.width.data));
-        painter.setBrush(look.mark(drawing.mark));
-        painter.drawPolygon(shape);
     }
 }
 
@@ -276,10 +258,11 @@ void SectionPicture::paintStill(QPainter& painter) const {
         section::paintUnits(painter, scene);
         section::paintBreaks(painter, scene);
         section::paintHighlight(painter, scene);
-        section::paintLozenges(painter, scene);
     }
     for (const auto& label : scene.labels) {
-        paintLabel(painter, label, scene.look);
+        if (!label.framed) { // the lozenge's own lies above what moves
+            paintLabel(painter, label, scene.look);
+        }
     }
     painter.restore();
 }

@@ -10,12 +10,12 @@ QString listOfThings(const Scene& scene) {
     QStringList parts;
     const auto& plant = scene.shown.variant->plant;
     for (const auto& drawing : scene.layout.reservoirs) {
-        parts << text(plant.reservoirs.name(drawing.reservoir)) + QStringLiteral(" at ") +
-                     numberText(Quantity::elevation, drawing.level_m);
+        parts << text(plant.reservoirs.name(drawing.reservoir)) + QStringLiteral(" at ")
+                     + numberText(Quantity::elevation, drawing.level_m);
     }
     for (const auto& shape : scene.layout.conduits) {
-        parts << text(plant.conduits.name(shape.conduit)) + QLatin1Char(' ') +
-                     wholeAmount(Quantity::length, shape.length_m);
+        parts << text(plant.conduits.name(shape.conduit)) + QLatin1Char(' ')
+                     + wholeAmount(Quantity::length, shape.length_m);
     }
     for (const auto& drawing : scene.layout.chambers) {
         parts << text(plant.chambers.name(drawing.chamber));
@@ -32,9 +32,10 @@ QString levelsAt(const Scene& scene, double time_s) {
     for (const auto& moving : scene.levels) {
         const auto& drawing = scene.layout.chambers[moving.chamber];
         const double level = valueAt(*moving.channel, scene.shown.run->recordInterval_s, time_s);
-        out += QStringLiteral(" At %1 the water in %2 stands at %3.")
-                   .arg(numberText(Quantity::time, time_s), text(plant.chambers.name(drawing.chamber)),
-                        numberText(Quantity::elevation, level));
+        out +=
+            QStringLiteral(" At %1 the water in %2 stands at %3.")
+                .arg(numberText(Quantity::time, time_s), text(plant.chambers.name(drawing.chamber)),
+                     numberText(Quantity::elevation, level));
     }
     return out;
 }
@@ -43,7 +44,8 @@ QString levelsAt(const Scene& scene, double time_s) {
 
 QString describe(const Scene& scene, double time_s) {
     if (scene.empty) {
-        return QStringLiteral("Empty project: no waterway is drawn yet. Start where the water does.");
+        return QStringLiteral(
+            "Empty project: no waterway is drawn yet. Start where the water does.");
     }
     QString out = QStringLiteral("Longitudinal section of %1: %2.")
                       .arg(text(scene.shown.variant->name), listOfThings(scene));
@@ -56,9 +58,9 @@ QString describe(const Scene& scene, double time_s) {
     for (const auto& lozenge : scene.lozenges) {
         if (lozenge.leading) {
             const auto& limits = scene.shown.variant->limits;
-            out += QLatin1Char(' ') + spokenVerdict(text(limits.name(lozenge.limit)),
-                                                    limits[lozenge.limit],
-                                                    *scene.shown.verdict(lozenge.limit));
+            out += QLatin1Char(' ')
+                   + spokenVerdict(text(limits.name(lozenge.limit)), limits[lozenge.limit],
+                                   *scene.shown.verdict(lozenge.limit));
         }
     }
     return out;

@@ -16,10 +16,10 @@ struct CellId {
 
 /// The one selection of the window. Parts show it and ask to change it; no part knows another.
 struct Selection {
-    std::vector<CellId> shown;  ///< runs compared, the first is the one in the hand; at most six
-    int limit = -1;             ///< position in the variant's limits of the run in the hand
-    double time_s = 0.0;        ///< cursor
-    plant::Path thing;          ///< thing or value under the slip, empty if none
+    std::vector<CellId> shown; ///< runs compared, the first is the one in the hand; at most six
+    int limit = -1;            ///< position in the variant's limits of the run in the hand
+    double time_s = 0.0;       ///< cursor
+    plant::Path thing;         ///< thing or value under the slip, empty if none
     bool operator==(const Selection&) const = default;
 
     CellId inHand() const { return shown.empty() ? CellId{} : shown.front(); }

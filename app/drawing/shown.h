@@ -11,9 +11,9 @@ namespace headroom::drawing {
 
 /// What a picture of one run shows: the variant, its study, and what is known of the run.
 struct Shown {
-    int option = -1;                       ///< clamped to what the project has
+    int option = -1; ///< clamped to what the project has
     std::shared_ptr<const plant::Variant> variant;
-    const plant::Study* study = nullptr;   ///< nullptr: the project has none
+    const plant::Study* study = nullptr; ///< nullptr: the project has none
     plant::LoadClass loadClass = plant::LoadClass::normal;
     std::shared_ptr<const results::Run> run; ///< nullptr: geometry only
     std::vector<results::Verdict> verdicts;  ///< empty without a run

@@ -9,6 +9,7 @@
 #include "units/text.h"
 
 #include <QPainter>
+
 #include <algorithm>
 #include <cmath>
 #include <numeric>
@@ -19,9 +20,9 @@ struct StripBar {
     int limit = -1;
     MarkState mark = MarkState::notRun;
     bool selected = false;
-    bool measured = false;       ///< there is a share to draw
-    double share = 0.0;          ///< m; 1: at rest, 0: at the limit
-    double whisker = 0.0;        ///< U as a share
+    bool measured = false; ///< there is a share to draw
+    double share = 0.0;    ///< m; 1: at rest, 0: at the limit
+    double whisker = 0.0;  ///< U as a share
     QRectF row, markBox, track;
     Label letter, name, value;
 };
@@ -32,7 +33,7 @@ struct StripPicture::Scene {
     std::vector<StripBar> bars;
     Label heading, legend;
     std::vector<Label> counts;
-    double zeroShare = 0.2;      ///< of a track: where the limit stands
+    double zeroShare = 0.2; ///< of a track: where the limit stands
 };
 
 namespace {
@@ -63,8 +64,8 @@ std::vector<int> worstFirst(const Shown& what) {
 }
 
 bool measured(const results::Verdict& verdict) {
-    return verdict.mark != results::Mark::notRun && verdict.mark != results::Mark::notApplicable &&
-           std::isfinite(verdict.share) && std::isfinite(verdict.extreme);
+    return verdict.mark != results::Mark::notRun && verdict.mark != results::Mark::notApplicable
+           && std::isfinite(verdict.share) && std::isfinite(verdict.extreme);
 }
 
 /// U in shares: by the distance that makes up one share.
@@ -79,7 +80,7 @@ QString valueWords(const plant::Limit& limit, const results::Verdict* verdict) {
         const auto state = verdict == nullptr ? MarkState::notRun : markOf(verdict->mark);
         return words(state);
     }
-    return amountOf(valueQuantity(limit), verdict->extreme, verdict->bound);
+    return extremeOfBound(limit, *verdict);
 }
 
 QString spoken(const QString& letter, const QString& name, const plant::Limit& limit,
@@ -108,12 +109,13 @@ void placeBar(Making& making, StripBar& bar, const QRectF& row) {
                          look.space.mark);
     const double left = bar.markBox.right() + gap;
     const double wide = textSize(bar.value.text, look.font(TextSize::small)).width();
-    const double letter = textSize(QStringLiteral("mm"), look.font(TextSize::small)).width();
+    const double letter = textSize(bar.letter.text, look.font(TextSize::small)).width() + 1.5 * gap;
     bar.value.box = QRectF(std::max(left, row.right() - gap - wide), first, wide, line);
     bar.letter.box = QRectF(left, first, letter, line);
     bar.name.box = QRectF(left + letter, first,
                           std::max(1.0, bar.value.box.left() - 2 * gap - left - letter), line);
-    bar.track = QRectF(left, first + line + 0.4 * gap, std::max(1.0, row.right() - gap - left), 1.8 * gap);
+    bar.track =
+        QRectF(left, first + line + 0.4 * gap, std::max(1.0, row.right() - gap - left), 1.8 * gap);
 }
 
 void addBar(Making& making, int limit, const QRectF& row) {
@@ -163,12 +165,18 @@ void addHeading(Making& making, double height) {
     const auto& look = making.input.look;
     const double gap = look.space.unit, wide = making.input.size.width();
     const QString legend = QStringLiteral("0 = limit · full = at rest");
-    const double legendWide = std::min(textSize(legend, look.font(TextSize::small)).width(), 0.7 * wide);
+    const double legendWide =
+        std::min(textSize(legend, look.font(TextSize::small)).width(), 0.7 * wide);
     making.scene.heading = {QStringLiteral("Headroom"),
                             QRectF(gap, 0, std::max(1.0, wide - legendWide - 4 * gap), height),
                             TextSize::heading, TextWeight::strong};
-    making.scene.legend = {legend, QRectF(wide - legendWide - gap, 0, legendWide, height),
-                           TextSize::small, TextWeight::normal, true, false, {}};
+    making.scene.legend = {legend,
+                           QRectF(wide - legendWide - gap, 0, legendWide, height),
+                           TextSize::small,
+                           TextWeight::normal,
+                           true,
+                           false,
+                           {}};
 }
 
 void addRows(Making& making, double top) {
@@ -182,7 +190,9 @@ void addRows(Making& making, double top) {
         height = std::max(leastRow * look.space.bar, count > 0 ? room / count : height);
     }
     const bool all = count * height <= room + 0.5;
-    const auto fitting = [&](double space) { return std::max(0, static_cast<int>(space / height)); };
+    const auto fitting = [&](double space) {
+        return std::max(0, static_cast<int>(space / height));
+    };
     picture.rowsShown = all ? count : fitting(room - 2 * line);
     picture.firstRow = std::clamp(making.input.firstRow, 0, std::max(0, count - picture.rowsShown));
     double y = top;
@@ -200,7 +210,8 @@ void addRows(Making& making, double top) {
     }
     const int below = count - picture.firstRow - picture.rowsShown;
     if (below > 0) {
-        addCount(making, QStringLiteral("%1 more below").arg(below), QRectF(look.space.unit, y, wide, line));
+        addCount(making, QStringLiteral("%1 more below").arg(below),
+                 QRectF(look.space.unit, y, wide, line));
     }
     if (count == 0) {
         addCount(making, QStringLiteral("No limits yet."), QRectF(look.space.unit, y, wide, line));
@@ -266,7 +277,8 @@ void StripPicture::paint(QPainter& painter) const {
         if (bar.selected) {
             painter.setPen(look.pen(look.accent, look.width.data));
             painter.setBrush(look.selection);
-            painter.drawRoundedRect(bar.row.adjusted(1, 1, -1, -1), look.space.corner, look.space.corner);
+            painter.drawRoundedRect(bar.row.adjusted(1, 1, -1, -1), look.space.corner,
+                                    look.space.corner);
         }
         paintMark(painter, bar.markBox, bar.mark, look);
         paintPlain(painter, bar.letter, look, Qt::AlignLeft);

@@ -7,6 +7,7 @@
 #include "studies/board.h"
 
 #include <QSizeF>
+
 #include <memory>
 #include <vector>
 
@@ -26,9 +27,9 @@ struct StripInput {
 /// One bar a limit, worst first: full = at rest, zero = limit, whisker = U.
 class StripPicture {
 public:
-    Items items;         ///< bars that are seen, in order; the counts of the others as labels
+    Items items;            ///< bars that are seen, in order; the counts of the others as labels
     std::vector<int> order; ///< limits, worst first, all of them
-    int firstRow = 0;    ///< after clamping
+    int firstRow = 0;       ///< after clamping
     int rowsShown = 0;
     void paint(QPainter& painter) const;
 

@@ -4,6 +4,7 @@
 #include <QPainter>
 #include <QPainterPath>
 #include <QVector>
+
 #include <algorithm>
 #include <cmath>
 
@@ -24,7 +25,8 @@ QVector<QLineF> linesOver(const QRectF& box, Texture texture, double step) {
     lines.reserve(count);
     for (int i = 0; i < count; ++i) {
         const double x = first + i * step;
-        lines.append(QLineF(x - slant, box.bottom(), x, box.top()).translated(slant > 0 ? step : 0, 0));
+        lines.append(
+            QLineF(x - slant, box.bottom(), x, box.top()).translated(slant > 0 ? step : 0, 0));
     }
     return lines;
 }

@@ -20,12 +20,33 @@ constexpr double threadOffset_px = 11.0;
 using plant::Collection;
 
 const plant::Point* pointOf(const plant::Plant& plant, const plant::Reference& reference) {
-    const bool known = reference.collection == Collection::points && reference.resolved() &&
-                       reference.index < plant.points.size();
+    const bool known = reference.collection == Collection::points && reference.resolved()
+                       && reference.index < plant.points.size();
     return known ? &plant.points[reference.index] : nullptr;
 }
 
 // --- scale --------------------------------------------------------------------------------------
+
+/// Raises the top for the names above the waters, lowers the bottom for rosettes and their names.
+void leaveRoom(ElevationScale& scale, const LayoutInput& in) {
+    const double line = in.look.lineHeight(TextSize::small), gap = in.look.space.unit;
+    const double height = scale.bottom_px - scale.top_px;
+    const double above = std::min(2 * line, 0.2 * height);
+    const double below = std::min(rosetteRadius_px * in.look.scale + line + gap, 0.2 * height);
+    for (const double level : in.level_m) {
+        if (std::isfinite(level) && (scale.high_m - level) * scale.pixelsPerMetre() < above) {
+            scale.high_m = level + above / (height - above) * std::max(level - scale.low_m, 1.0);
+        }
+    }
+    for (const auto& [name, unit] : in.plant.units) {
+        const auto* inlet = pointOf(in.plant, unit.from);
+        const double centre =
+            unit.centreline_m.value_or(inlet != nullptr ? inlet->elevation_m : scale.high_m);
+        if (std::isfinite(centre) && (centre - scale.low_m) * scale.pixelsPerMetre() < below) {
+            scale.low_m = centre - below / (height - below) * std::max(scale.high_m - centre, 1.0);
+        }
+    }
+}
 
 ElevationScale elevationScale(const LayoutInput& in) {
     double low = std::numeric_limits<double>::infinity(), high = -low;
@@ -60,8 +81,9 @@ ElevationScale elevationScale(const LayoutInput& in) {
         high = low + 100.0;
     }
     const double room = in.look.space.unit;
-    ElevationScale scale{low, high, in.plot.bottom() - 6 * room, in.plot.top() + 5 * room};
+    ElevationScale scale{low, high, in.plot.bottom() - 3 * room, in.plot.top() + 5 * room};
     scale.bottom_px = std::max(scale.bottom_px, scale.top_px + 1.0);
+    leaveRoom(scale, in);
     return scale;
 }
 
@@ -124,13 +146,15 @@ std::vector<BoreShape> boresOf(const WaterwayLayout& layout, const plant::Condui
 double lengthAlong(const plant::Rows& axis) {
     double length = 0.0;
     for (std::size_t i = 1; i < axis.size(); ++i) {
-        length += std::hypot(axis[i].first - axis[i - 1].first, axis[i].second - axis[i - 1].second);
+        length +=
+            std::hypot(axis[i].first - axis[i - 1].first, axis[i].second - axis[i - 1].second);
     }
     return length;
 }
 
 /// Whether two lines lie upon each other over most of their common width.
-bool hides(const plant::Rows& a, const plant::Rows& b, const WaterwayLayout& layout, double near_px) {
+bool hides(const plant::Rows& a, const plant::Rows& b, const WaterwayLayout& layout,
+           double near_px) {
     const double from = std::max(a.front().first, b.front().first);
     const double to = std::min(a.back().first, b.back().first);
     if (layout.map.x_px(to) - layout.map.x_px(from) < 2 * near_px) {
@@ -139,7 +163,8 @@ bool hides(const plant::Rows& a, const plant::Rows& b, const WaterwayLayout& lay
     int close = 0;
     for (int i = 1; i <= 5; ++i) {
         const double at = from + (to - from) * i / 6.0;
-        const double apart = layout.scale.y_px(elevationOn(a, at)) - layout.scale.y_px(elevationOn(b, at));
+        const double apart =
+            layout.scale.y_px(elevationOn(a, at)) - layout.scale.y_px(elevationOn(b, at));
         close += std::abs(apart) < near_px ? 1 : 0;
     }
     return close >= 4;
@@ -158,11 +183,11 @@ void layConduits(WaterwayLayout& layout, const LayoutInput& in) {
             return hides(other, axis, layout, in.look.width.lining);
         });
         laid.push_back(axis);
-        const QPointF along = layout.at(axis.back().first, axis.back().second) -
-                              layout.at(axis.front().first, axis.front().second);
+        const QPointF along = layout.at(axis.back().first, axis.back().second)
+                              - layout.at(axis.front().first, axis.front().second);
         const double length = std::max(1.0, std::hypot(along.x(), along.y()));
-        const QPointF offset = QPointF(-along.y(), along.x()) / length *
-                               (static_cast<double>(threads) * threadOffset_px * in.look.scale);
+        const QPointF offset = QPointF(-along.y(), along.x()) / length
+                               * (static_cast<double>(threads) * threadOffset_px * in.look.scale);
         ConduitShape shape;
         shape.conduit = i;
         shape.bores = boresOf(layout, conduit, axis, offset, in.look);
@@ -232,12 +257,12 @@ void layUnits(WaterwayLayout& layout, const LayoutInput& in) {
         UnitDrawing drawing;
         drawing.unit = i;
         drawing.inlet = layout.at(inlet->chainage_m, inlet->elevation_m);
-        drawing.centre = {left + 0.32 * (right - left),
+        drawing.centre = {left + 0.28 * (right - left),
                           layout.scale.y_px(unit.centreline_m.value_or(inlet->elevation_m))};
         const auto* outlet = pointOf(in.plant, unit.to);
         drawing.outlet = outlet != nullptr
                              ? layout.at(outlet->chainage_m, outlet->elevation_m)
-                             : QPointF(left + 0.78 * (right - left), drawing.centre.y());
+                             : QPointF(left + 0.60 * (right - left), drawing.centre.y());
         layout.units.push_back(drawing);
     }
     // Units at one height stand on shelves, none before another.
@@ -307,19 +332,28 @@ void layWater(WaterwayLayout& layout, ReservoirDrawing& drawing, double mouth_y,
     drawing.water << QPointF(drawing.right_px, level) << QPointF(drawing.left_px, level);
 }
 
+/// Where the ground left of a mouth first rises above the water.
+double shoreLeftOf(const WaterwayLayout& layout, QPointF mouth, double level_y, double furthest) {
+    double shore = mouth.x();
+    for (double x = mouth.x(); x > furthest && heightOf(layout.ground, x) > level_y; x -= 1.0) {
+        shore = x;
+    }
+    return shore;
+}
+
 bool beginsHere(const plant::Plant& plant, int point) {
-    return std::any_of(plant.conduits.begin(), plant.conduits.end(), [&](const auto& item) {
-        return item.second.from.index == point;
-    });
+    return std::any_of(plant.conduits.begin(), plant.conduits.end(),
+                       [&](const auto& item) { return item.second.from.index == point; });
 }
 
 /// Height of the lowest unit that discharges straight into a water, for its mouth.
-std::optional<QPointF> outletInto(const WaterwayLayout& layout, const plant::Plant& plant, int water) {
+std::optional<QPointF> outletInto(const WaterwayLayout& layout, const plant::Plant& plant,
+                                  int water) {
     std::optional<QPointF> found;
     for (const auto& drawing : layout.units) {
         const auto& to = plant.units[drawing.unit].to;
-        if (to.collection == Collection::reservoirs && to.index == water &&
-            (!found || drawing.outlet.y() > found->y())) {
+        if (to.collection == Collection::reservoirs && to.index == water
+            && (!found || drawing.outlet.y() > found->y())) {
             found = drawing.outlet;
         }
     }
@@ -341,13 +375,19 @@ void layReservoirs(WaterwayLayout& layout, const LayoutInput& in) {
             const QPointF mouth = layout.at(point->chainage_m, point->elevation_m);
             drawing.tail = !beginsHere(in.plant, reservoir.at.index);
             const bool first = mouth.x() - layout.plot.left() < 1.6 * lead;
-            drawing.left_px = drawing.tail ? mouth.x() : first ? layout.plot.left() : mouth.x() - lead;
+            drawing.left_px = drawing.tail ? mouth.x()
+                              : first      ? layout.plot.left()
+                                           : mouth.x() - lead;
             drawing.right_px = drawing.tail ? layout.plot.right() : mouth.x();
             layWater(layout, drawing, mouth.y(), !drawing.tail, in.look);
         } else if (outlet) {
             drawing.tail = true;
-            drawing.left_px = outlet->x();
             drawing.right_px = layout.plot.right();
+            drawing.left_px = outlet->x();
+            if (layout.groundGiven) {
+                drawing.left_px = shoreLeftOf(layout, *outlet, layout.scale.y_px(drawing.level_m),
+                                              layout.plot.left());
+            }
             layWater(layout, drawing, outlet->y(), false, in.look);
         } else {
             continue;
@@ -382,6 +422,12 @@ double ConduitShape::halfWidth() const {
         widest = std::max(widest, bore.lining_px);
     }
     return widest / 2.0;
+}
+
+QPolygonF wayThrough(const UnitDrawing& unit) {
+    const double beside = 1.6 * unit.radius_px;
+    return {unit.inlet, unit.centre - QPointF(beside, 0), unit.centre,
+            unit.centre + QPointF(beside, 0), unit.outlet};
 }
 
 double ChamberDrawing::halfWidth_px(double y_px) const {
@@ -437,10 +483,16 @@ WaterwayLayout waterwayLayout(const LayoutInput& in) {
     if (in.ground.size() >= 2) {
         lastGround = in.ground.back().first;
     }
-    WaterwayLayout layout{in.plot,
-                          chainageMap(in.plant, in.plot.left(), in.plot.right(), lead, in.scales,
-                                      lastGround),
-                          elevationScale(in), false, {}, {}, {}, {}, {}};
+    WaterwayLayout layout{
+        in.plot,
+        chainageMap(in.plant, in.plot.left(), in.plot.right(), lead, in.scales, lastGround),
+        elevationScale(in),
+        false,
+        {},
+        {},
+        {},
+        {},
+        {}};
     layGround(layout, in);
     layConduits(layout, in);
     layChambers(layout, in);

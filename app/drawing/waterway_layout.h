@@ -7,13 +7,14 @@
 
 #include <QPolygonF>
 #include <QRectF>
+
 #include <vector>
 
 namespace headroom::drawing {
 
 /// Elevation ↔ picture; elevation grows upward.
 struct ElevationScale {
-    double low_m = 0.0, high_m = 1.0;   ///< high_m > low_m
+    double low_m = 0.0, high_m = 1.0; ///< high_m > low_m
     double bottom_px = 1.0, top_px = 0.0;
 
     double pixelsPerMetre() const { return (bottom_px - top_px) / (high_m - low_m); }
@@ -30,16 +31,16 @@ struct BoreShape {
 };
 struct ConduitShape {
     int conduit = -1;
-    QPolygonF line;              ///< the whole axis, offset included
+    QPolygonF line; ///< the whole axis, offset included
     std::vector<BoreShape> bores;
-    double length_m = 0.0;       ///< surveyed, else along the axis
+    double length_m = 0.0; ///< surveyed, else along the axis
     QRectF box() const { return line.boundingRect(); }
     double halfWidth() const;
 };
 struct ChamberDrawing {
     int chamber = -1;
     double x_px = 0.0, axis_y_px = 0.0; ///< where it stands on the waterway
-    QPolygonF left, right;       ///< walls from the floor up, same elevations
+    QPolygonF left, right;              ///< walls from the floor up, same elevations
     QPolygonF outline;
     bool throttled = false;
     double halfWidth_px(double y_px) const; ///< of the bore at a height, straight between rows
@@ -53,12 +54,15 @@ struct UnitDrawing {
         return {centre.x() - radius_px, centre.y() - radius_px, 2 * radius_px, 2 * radius_px};
     }
 };
+/// The water's way from a unit's inlet through the rosette to its outlet.
+QPolygonF wayThrough(const UnitDrawing& unit);
+
 struct ReservoirDrawing {
     int reservoir = -1;
     double level_m = 0.0;
     bool tail = false;
     double left_px = 0.0, right_px = 0.0;
-    QPolygonF water, bed;        ///< bed: what the rock takes as its edge under the water
+    QPolygonF water, bed; ///< bed: what the rock takes as its edge under the water
 };
 
 /// Where everything of a plant lies in the Section.
@@ -67,7 +71,7 @@ struct WaterwayLayout {
     ChainageMap map;
     ElevationScale scale;
     bool groundGiven = false;
-    QPolygonF ground;            ///< surface from the left edge to the right
+    QPolygonF ground; ///< surface from the left edge to the right
     std::vector<ConduitShape> conduits;
     std::vector<ChamberDrawing> chambers;
     std::vector<UnitDrawing> units;
@@ -81,8 +85,8 @@ struct WaterwayLayout {
 struct LayoutInput {
     const plant::Plant& plant;
     const plant::Rows& ground;
-    std::vector<double> level_m;    ///< of each reservoir as it stands in the study shown
-    std::vector<double> show_m;     ///< further elevations that must be in sight
+    std::vector<double> level_m; ///< of each reservoir as it stands in the study shown
+    std::vector<double> show_m;  ///< further elevations that must be in sight
     QRectF plot;
     const Look& look;
     Scales scales = Scales::three;

@@ -2,6 +2,7 @@
 #include "drawing/words.h"
 
 #include "limits/place.h"
+#include "limits/rounded.h"
 #include "units/measure.h"
 #include "units/text.h"
 
@@ -15,20 +16,36 @@ const QChar thinSpace(0x2009), trueMinus(0x2212);
 
 QString word(results::Mark mark) {
     switch (mark) {
-    case results::Mark::held: return QStringLiteral("held");
-    case results::Mark::tight: return QStringLiteral("tight");
-    case results::Mark::undecided: return QStringLiteral("undecided");
-    case results::Mark::broken: return QStringLiteral("broken");
-    case results::Mark::notValid: return QStringLiteral("not valid");
-    case results::Mark::notRun: return QStringLiteral("not run");
-    case results::Mark::notApplicable: return QStringLiteral("not applicable");
+    case results::Mark::held:
+        return QStringLiteral("held");
+    case results::Mark::tight:
+        return QStringLiteral("tight");
+    case results::Mark::undecided:
+        return QStringLiteral("undecided");
+    case results::Mark::broken:
+        return QStringLiteral("broken");
+    case results::Mark::notValid:
+        return QStringLiteral("not valid");
+    case results::Mark::notRun:
+        return QStringLiteral("not run");
+    case results::Mark::notApplicable:
+        return QStringLiteral("not applicable");
     }
     return {};
 }
 
+QString withUnit(Quantity quantity, const std::string& number) {
+    const QString symbol = text(info(quantity).symbol);
+    return symbol.isEmpty() ? text(number) : text(number) + thinSpace + symbol;
+}
+
+QString extremeWords(const plant::Limit& limit, const results::Verdict& verdict) {
+    return text(limits::extremeText(valueQuantity(limit), verdict.extreme, verdict.bound));
+}
+
 bool hasValue(const results::Verdict& verdict) {
-    return verdict.mark != results::Mark::notRun && verdict.mark != results::Mark::notApplicable &&
-           std::isfinite(verdict.extreme) && std::isfinite(verdict.margin);
+    return verdict.mark != results::Mark::notRun && verdict.mark != results::Mark::notApplicable
+           && std::isfinite(verdict.extreme) && std::isfinite(verdict.margin);
 }
 
 } // namespace
@@ -44,7 +61,7 @@ QString numberText(Quantity quantity, double si) {
 QString wholeAmount(Quantity quantity, double si) {
     QString digits = text(printNumber(quantity, si, {}, 0));
     const int first = digits.startsWith(trueMinus) ? 1 : 0;
-    for (qsizetype at = digits.size() - 3; at > first && digits.size() - first > 4; at -= 3) {
+    for (qsizetype at = digits.size() - 3; at > first; at -= 3) {
         digits.insert(at, thinSpace);
     }
     const QString symbol = text(info(quantity).symbol);
@@ -60,8 +77,8 @@ QString percent(double share) {
         return QStringLiteral("–");
     }
     // A share that is not zero never reads as lying on the other side of the limit.
-    const double rounded = share < 0.0 ? std::min(std::round(share * 100.0), -1.0)
-                                       : std::floor(share * 100.0);
+    const double rounded =
+        share < 0.0 ? std::min(std::round(share * 100.0), -1.0) : std::floor(share * 100.0);
     const QString digits = QString::number(std::abs(rounded), 'f', 0);
     return rounded < 0.0 ? trueMinus + digits : digits;
 }
@@ -76,34 +93,50 @@ Quantity marginQuantity(const plant::Limit& limit) {
 }
 
 QString marginWords(const plant::Limit& limit, const results::Verdict& verdict) {
-    const QString distance = numberText(marginQuantity(limit), std::abs(verdict.margin));
+    // Rounded as everywhere: towards the limit, so that no verdict looks better than it is.
+    const QString distance = withUnit(marginQuantity(limit),
+                                      limits::marginNumber(marginQuantity(limit), verdict.margin));
     if (verdict.margin >= 0.0) {
-        return verdict.margin > 0.0 ? distance + QStringLiteral(" inside") : QStringLiteral("at the limit");
+        return verdict.margin > 0.0 ? distance + QStringLiteral(" inside")
+                                    : QStringLiteral("at the limit");
     }
     return distance + (verdict.upper ? QStringLiteral(" above") : QStringLiteral(" below"));
 }
 
+QString extremeOfBound(const plant::Limit& limit, const results::Verdict& verdict) {
+    const Quantity quantity = valueQuantity(limit);
+    QString number = extremeWords(limit, verdict);
+    const QString unit = thinSpace + text(info(quantity).symbol);
+    if (number.endsWith(unit)) {
+        number.chop(unit.size());
+    }
+    return number + QStringLiteral(" of ") + numberText(quantity, verdict.bound);
+}
+
 QString lozengeWords(const plant::Limit& limit, const results::Verdict& verdict) {
-    return numberText(valueQuantity(limit), verdict.extreme) + QStringLiteral(" at ") +
-           timeWords(verdict.time_s) + QStringLiteral(", ") + marginWords(limit, verdict);
+    return extremeWords(limit, verdict) + QStringLiteral(" at ") + timeWords(verdict.time_s)
+           + QStringLiteral(", ") + marginWords(limit, verdict);
 }
 
 QString timeWords(double time_s) {
     // A whole second is enough once minutes have passed.
-    return time_s >= 100.0 ? wholeAmount(Quantity::time, time_s) : numberText(Quantity::time, time_s);
+    return time_s >= 100.0 ? wholeAmount(Quantity::time, time_s)
+                           : numberText(Quantity::time, time_s);
 }
 
 QString spokenVerdict(const QString& name, const plant::Limit& limit,
                       const results::Verdict& verdict) {
     QString out = name + QStringLiteral(": ") + word(verdict.mark);
     if (hasValue(verdict)) {
-        out += QStringLiteral(", ") + numberText(valueQuantity(limit), verdict.extreme) +
-               QStringLiteral(" at ") + timeWords(verdict.time_s) + QStringLiteral(", limit ") +
-               numberText(valueQuantity(limit), verdict.bound) + QStringLiteral(", ") +
-               marginWords(limit, verdict);
+        out += QStringLiteral(", ") + extremeWords(limit, verdict) + QStringLiteral(" at ")
+               + timeWords(verdict.time_s) + QStringLiteral(", limit ")
+               + numberText(valueQuantity(limit), verdict.bound) + QStringLiteral(", ")
+               + marginWords(limit, verdict);
         if (verdict.uncertainty > 0.0) {
-            out += QStringLiteral(", uncertain by ") +
-                   numberText(marginQuantity(limit), verdict.uncertainty);
+            out +=
+                QStringLiteral(", uncertain by ")
+                + withUnit(marginQuantity(limit),
+                           limits::uncertaintyNumber(marginQuantity(limit), verdict.uncertainty));
         }
     }
     out += QLatin1Char('.');
@@ -133,20 +166,28 @@ QString limitLetter(const plant::Project& project, const plant::Variant& variant
 
 QString classLetter(plant::LoadClass loadClass) {
     switch (loadClass) {
-    case plant::LoadClass::normal: return QStringLiteral("N");
-    case plant::LoadClass::exceptional: return QStringLiteral("X");
-    case plant::LoadClass::extreme: return QStringLiteral("E");
-    case plant::LoadClass::catastrophic: return QStringLiteral("C");
+    case plant::LoadClass::normal:
+        return QStringLiteral("N");
+    case plant::LoadClass::exceptional:
+        return QStringLiteral("X");
+    case plant::LoadClass::extreme:
+        return QStringLiteral("E");
+    case plant::LoadClass::catastrophic:
+        return QStringLiteral("C");
     }
     return {};
 }
 
 QString className(plant::LoadClass loadClass) {
     switch (loadClass) {
-    case plant::LoadClass::normal: return QStringLiteral("normal");
-    case plant::LoadClass::exceptional: return QStringLiteral("exceptional");
-    case plant::LoadClass::extreme: return QStringLiteral("extreme");
-    case plant::LoadClass::catastrophic: return QStringLiteral("catastrophic");
+    case plant::LoadClass::normal:
+        return QStringLiteral("normal");
+    case plant::LoadClass::exceptional:
+        return QStringLiteral("exceptional");
+    case plant::LoadClass::extreme:
+        return QStringLiteral("extreme");
+    case plant::LoadClass::catastrophic:
+        return QStringLiteral("catastrophic");
     }
     return {};
 }

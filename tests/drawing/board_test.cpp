@@ -1,10 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/board_picture.h"
-#include "picture_checks.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <algorithm>
+
+#include "picture_checks.h"
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -17,11 +18,19 @@ struct Shot {
     BoardPicture picture;
 };
 
-Shot sample(QSizeF size, plant::Project project = test::sampleProject(), int row = 0, int column = 0) {
+Shot sample(QSizeF size, plant::Project project = test::sampleProject(), int row = 0,
+            int column = 0) {
     test::startGui();
     auto snapshot = test::snapshotOf(std::move(project));
     auto cells = test::sampleCells(*snapshot);
-    auto picture = boardPicture({*snapshot, cells, {{{1, 4}, {-1, 4}}, 0, 0, {}}, size, look(Scheme::light), row, column, 1});
+    auto picture = boardPicture({*snapshot,
+                                 cells,
+                                 {{{1, 4}, {-1, 4}}, 0, 0, {}},
+                                 size,
+                                 look(Scheme::light),
+                                 row,
+                                 column,
+                                 1});
     return {std::move(snapshot), std::move(cells), std::move(picture)};
 }
 
@@ -77,8 +86,8 @@ TEST_CASE("Board: what is out of sight is counted", "[drawing][limit]") {
     CHECK(shot.picture.firstColumn == 3);
     const auto& last = shot.picture.items.back();
     CHECK(last.kind == ItemKind::label);
-    CHECK_THAT(last.label.toStdString(), ContainsSubstring("2 studies above"));
-    CHECK_THAT(last.label.toStdString(), ContainsSubstring("more options right"));
+    CHECK_THAT(last.label.toStdString(), ContainsSubstring("2 more above"));
+    CHECK_THAT(last.label.toStdString(), ContainsSubstring("more to the right"));
     const auto far = sample({336, 220}, project, 99, 99);
     CHECK(far.picture.firstRow + far.picture.rowsShown == 8);
     CHECK(far.picture.firstColumn + far.picture.columnsShown == 14);
@@ -86,12 +95,15 @@ TEST_CASE("Board: what is out of sight is counted", "[drawing][limit]") {
 
 TEST_CASE("Board: a cell is read out in full", "[drawing][messages]") {
     const auto shot = sample({336, 380});
-    const auto cell = std::find_if(shot.picture.items.begin(), shot.picture.items.end(), [](const Item& item) {
-        return item.kind == ItemKind::cell && item.option == -1 && item.study == 0;
-    });
+    const auto cell =
+        std::find_if(shot.picture.items.begin(), shot.picture.items.end(), [](const Item& item) {
+            return item.kind == ItemKind::cell && item.option == -1 && item.study == 0;
+        });
     REQUIRE(cell != shot.picture.items.end());
     const auto words = cell->description.toStdString();
-    CHECK_THAT(words, ContainsSubstring("Full rejection, As built: broken, share left −6 per cent, worst limit a"));
+    CHECK_THAT(words,
+               ContainsSubstring(
+                   "Full rejection, As built: broken, share left −6 per cent, worst limit a"));
     CHECK_THAT(words, ContainsSubstring("456.1\u2009m at 151\u2009s"));
     CHECK(cell->limit == 0);
 }

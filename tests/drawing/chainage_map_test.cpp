@@ -1,9 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/chainage_map.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <cmath>
+
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -17,7 +18,8 @@ ChainageMap mapOf(const plant::Project& project, double width, Scales scales = S
 } // namespace
 
 TEST_CASE("ChainageMap: there and back again, inside and beyond", "[drawing][invariant]") {
-    for (const auto& project : {test::sampleProject(), test::branchedProject(), test::startedProject()}) {
+    for (const auto& project :
+         {test::sampleProject(), test::branchedProject(), test::startedProject()}) {
         for (const double width : {300.0, 866.0, 3800.0}) {
             for (const Scales scales : {Scales::three, Scales::one}) {
                 const auto map = mapOf(project, width, scales);

@@ -1,16 +1,18 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/look.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <QFontDatabase>
 #include <QFontInfo>
 #include <QFontMetricsF>
 
-#include <fstream>
+#include <cmath>
 #include <filesystem>
+#include <fstream>
 #include <regex>
 #include <set>
+
+#include "sample.h"
 
 using namespace headroom::drawing;
 
@@ -30,7 +32,8 @@ double leastApart(const std::vector<QColor>& colours) {
     for (const Vision vision : visions) {
         for (std::size_t i = 0; i < colours.size(); ++i) {
             for (std::size_t j = i + 1; j < colours.size(); ++j) {
-                least = std::min(least, colourDistance(seenWith(vision, colours[i]), seenWith(vision, colours[j])));
+                least = std::min(least, colourDistance(seenWith(vision, colours[i]),
+                                                       seenWith(vision, colours[j])));
             }
         }
     }
@@ -46,7 +49,7 @@ std::vector<QColor> markColours(const Look& the) {
 
 TEST_CASE("Look: measures of colour agree with known values", "[drawing][analytic]") {
     // Black against white is 21:1 by the definition of WCAG 2.1.
-    CHECK_THAT(contrast(QColor(0, 0, 0), QColor(255, 255, 255)), WithinAbs(21.0, 1e-6));
+    CHECK_THAT(contrast(QColor(0, 0, 0), QColor(255, 255, 255)), WithinAbs(21.0, 1e-4));
     // White has L* = 100, black 0, by the definition of CIELAB.
     CHECK_THAT(colourDistance(QColor(0, 0, 0), QColor(255, 255, 255)), WithinAbs(100.0, 0.02));
     // Grey has no hue to lose: every dichromat sees it as it is.
@@ -58,7 +61,8 @@ TEST_CASE("Look: measures of colour agree with known values", "[drawing][analyti
 TEST_CASE("Look: text is readable on every ground it stands on", "[drawing][invariant]") {
     for (const Scheme scheme : schemes) {
         const Look the = look(scheme);
-        for (const QColor& ground : {the.sheet, the.titleBlock, the.lane, the.selection, the.rock, the.water}) {
+        for (const QColor& ground :
+             {the.sheet, the.titleBlock, the.lane, the.selection, the.rock, the.water}) {
             CAPTURE(static_cast<int>(scheme), ground.name().toStdString());
             CHECK(contrast(the.text, ground) >= forText);
             CHECK(contrast(the.muted, ground) >= forText);
@@ -74,13 +78,15 @@ TEST_CASE("Look: marks, runs and lines stand out from their grounds", "[drawing]
         const Look the = look(scheme);
         for (const QColor& ground : {the.sheet, the.titleBlock, the.selection}) {
             for (const QColor& mark : markColours(the)) {
-                CAPTURE(static_cast<int>(scheme), ground.name().toStdString(), mark.name().toStdString());
+                CAPTURE(static_cast<int>(scheme), ground.name().toStdString(),
+                        mark.name().toStdString());
                 CHECK(contrast(mark, ground) >= forMarks);
             }
         }
         for (const QColor& ground : {the.sheet, the.lane}) {
             for (const QColor& run : the.runs) {
-                CAPTURE(static_cast<int>(scheme), ground.name().toStdString(), run.name().toStdString());
+                CAPTURE(static_cast<int>(scheme), ground.name().toStdString(),
+                        run.name().toStdString());
                 CHECK(contrast(run, ground) >= forMarks);
             }
         }
@@ -123,7 +129,8 @@ TEST_CASE("Look: no mark is green and none is plain red", "[drawing][invariant]"
 
 TEST_CASE("Look: digits are of equal width and signs are in the font", "[drawing][invariant]") {
     test::startGui();
-    for (const TextSize size : {TextSize::small, TextSize::body, TextSize::heading, TextSize::sentence}) {
+    for (const TextSize size :
+         {TextSize::small, TextSize::body, TextSize::heading, TextSize::sentence}) {
         const QFontMetricsF metrics(look(Scheme::light).font(size));
         const double wide = metrics.horizontalAdvance(QLatin1Char('0'));
         for (char digit = '1'; digit <= '9'; ++digit) {
@@ -143,7 +150,8 @@ TEST_CASE("Look: print has dashes for all runs but the one in the hand", "[drawi
     for (int run = 1; run < runColourCount; ++run) {
         const auto pen = paper.runPen(run);
         CHECK(pen.style() == Qt::CustomDashLine);
-        patterns.insert({pen.dashPattern().begin(), pen.dashPattern().end()});
+        const auto pattern = pen.dashPattern();
+        patterns.insert({pattern.begin(), pattern.end()});
         CHECK(look(Scheme::light).runPen(run).style() == Qt::SolidLine);
     }
     CHECK(patterns.size() == runColourCount - 1);

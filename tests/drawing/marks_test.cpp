@@ -1,11 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/marks.h"
 #include "drawing/picture_export.h"
-#include "picture_checks.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <QPainter>
+
+#include "picture_checks.h"
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -20,7 +21,8 @@ QImage markAlone(MarkState state, double side, const Look& the, double progress 
 
 } // namespace
 
-TEST_CASE("Marks: nine shapes that differ without any colour, from 14 px on", "[drawing][invariant]") {
+TEST_CASE("Marks: nine shapes that differ without any colour, from 14 px on",
+          "[drawing][invariant]") {
     test::startGui();
     for (const Scheme scheme : {Scheme::light, Scheme::dark, Scheme::print}) {
         // One tint for all, so that only the shape can tell them apart.
@@ -32,14 +34,16 @@ TEST_CASE("Marks: nine shapes that differ without any colour, from 14 px on", "[
                     CAPTURE(side, a, b);
                     // A dashed rim differs from a whole one by its gaps alone; all others by far more.
                     CHECK(test::differing(markAlone(static_cast<MarkState>(a), side, plain),
-                                          markAlone(static_cast<MarkState>(b), side, plain)) > 0.012);
+                                          markAlone(static_cast<MarkState>(b), side, plain))
+                          > 0.012);
                 }
             }
         }
     }
 }
 
-TEST_CASE("Marks: each stays inside its box, but for drops and lid by a little", "[drawing][limit]") {
+TEST_CASE("Marks: each stays inside its box, but for drops and lid by a little",
+          "[drawing][limit]") {
     test::startGui();
     const Look& the = look(Scheme::light);
     for (int state = 0; state < markStateCount; ++state) {
@@ -64,7 +68,8 @@ TEST_CASE("Marks: progress moves the line of a running mark", "[drawing][invaria
     test::startGui();
     const Look& the = look(Scheme::light);
     CHECK(test::differing(markAlone(MarkState::running, 28, the, 0.1),
-                          markAlone(MarkState::running, 28, the, 0.9)) > 0.005);
+                          markAlone(MarkState::running, 28, the, 0.9))
+          > 0.005);
 }
 
 TEST_CASE("Marks: a cell shows its worst verdict only when it is done", "[drawing][invariant]") {
@@ -75,9 +80,12 @@ TEST_CASE("Marks: a cell shows its worst verdict only when it is done", "[drawin
     CHECK(markOf(cell) == MarkState::undecided);
     using studies::CellState;
     const std::pair<CellState, MarkState> states[] = {
-        {CellState::notRun, MarkState::notRun},     {CellState::outdated, MarkState::outdated},
-        {CellState::running, MarkState::running},   {CellState::waiting, MarkState::running},
-        {CellState::cutShort, MarkState::notValid}, {CellState::failed, MarkState::notValid},
+        {CellState::notRun, MarkState::notRun},
+        {CellState::outdated, MarkState::outdated},
+        {CellState::running, MarkState::running},
+        {CellState::waiting, MarkState::running},
+        {CellState::cutShort, MarkState::notValid},
+        {CellState::failed, MarkState::notValid},
         {CellState::notApplicable, MarkState::notApplicable}};
     for (const auto& [state, mark] : states) {
         cell.state = state;
@@ -97,12 +105,14 @@ TEST_CASE("Marks: sheet of all marks for people", "[drawing][files]") {
             for (int state = 0; state < markStateCount; ++state) {
                 double y = 10;
                 for (const double side : {14.0, 18.0, 28.0, 48.0}) {
-                    paintMark(painter, QRectF(20 + 82 * state, y, side, side), static_cast<MarkState>(state), the, 0.4);
+                    paintMark(painter, QRectF(20 + 82 * state, y, side, side),
+                              static_cast<MarkState>(state), the, 0.4);
                     y += side + 14;
                 }
                 painter.setFont(the.font(TextSize::small));
                 painter.setPen(the.text);
-                painter.drawText(QPointF(12 + 82 * state, 215), words(static_cast<MarkState>(state)));
+                painter.drawText(QPointF(12 + 82 * state, 215),
+                                 words(static_cast<MarkState>(state)));
             }
         });
         test::keep(image, scheme == Scheme::dark ? "marks_dark" : "marks_light");

@@ -6,6 +6,7 @@
 #include <QDir>
 #include <QFontMetricsF>
 #include <QPainter>
+
 #include <cmath>
 
 namespace headroom::drawing::test {
@@ -13,12 +14,20 @@ namespace headroom::drawing::test {
 namespace {
 
 bool printed(const Item& item) {
-    return !item.label.isEmpty() && item.kind != ItemKind::bar && item.kind != ItemKind::cell &&
-           item.kind != ItemKind::ribbon;
+    return !item.label.isEmpty() && item.kind != ItemKind::bar && item.kind != ItemKind::cell
+           && item.kind != ItemKind::ribbon;
 }
 
 bool isTitle(const Item& item) {
     return item.kind == ItemKind::columnTitle;
+}
+
+/// Boxes may touch. Slanted titles are compared by their shapes.
+bool over(const Item& a, const Item& b) {
+    if (isTitle(a) || isTitle(b)) {
+        return a.shape.intersects(b.shape);
+    }
+    return a.box.adjusted(0.5, 0.5, -0.5, -0.5).intersects(b.box.adjusted(0.5, 0.5, -0.5, -0.5));
 }
 
 } // namespace
@@ -38,11 +47,12 @@ QString faults(const Items& items, QSizeF size, const Look& look) {
         if (!picture.contains(item.box)) {
             out += QStringLiteral("“%1” leaves the picture; ").arg(item.label);
         }
-        if (!isTitle(item) && metrics.horizontalAdvance(item.label) > item.box.width() + 1.5) {
+        if (!isTitle(item) && item.kind != ItemKind::rowTitle
+            && metrics.horizontalAdvance(item.label) > item.box.width() + 1.5) {
             out += QStringLiteral("“%1” is wider than its box; ").arg(item.label);
         }
         for (std::size_t j = i + 1; j < items.size(); ++j) {
-            if (printed(items[j]) && item.shape.intersects(items[j].shape)) {
+            if (printed(items[j]) && over(item, items[j])) {
                 out += QStringLiteral("“%1” lies over “%2”; ").arg(item.label, items[j].label);
             }
         }

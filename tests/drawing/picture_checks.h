@@ -1,10 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "drawing/look.h"
 #include "drawing/picture.h"
 
 #include <QImage>
 #include <QString>
+
 #include <functional>
 
 class QPainter;
@@ -13,7 +15,7 @@ namespace headroom::drawing::test {
 
 /// "" if all is well, else what is wrong: an item without description, a box outside the picture,
 /// a label wider than its box, two labels over each other.
-QString faults(const Items& items, QSizeF size, const struct headroom::drawing::Look& look);
+QString faults(const Items& items, QSizeF size, const Look& look);
 
 /// Share of pixels that differ by more than a shade.
 double differing(const QImage& a, const QImage& b);

@@ -1,10 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/ribbon_picture.h"
-#include "picture_checks.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <algorithm>
+
+#include "picture_checks.h"
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -28,7 +29,8 @@ TEST_CASE("Ribbon: says where least is left, and stands below the Section", "[dr
         });
     };
     REQUIRE(find("Penstock") != ribbon.items.end());
-    CHECK_THAT(find("Penstock")->description.toStdString(), ContainsSubstring("left to the upper limit"));
+    CHECK_THAT(find("Penstock")->description.toStdString(),
+               ContainsSubstring("left to the upper limit"));
     REQUIRE(find("Headrace") != ribbon.items.end());
     CHECK_THAT(find("Headrace")->description.toStdString(), ContainsSubstring("no upper limit"));
     REQUIRE(find("Shaft, lowest") != ribbon.items.end());

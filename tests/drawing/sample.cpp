@@ -54,9 +54,12 @@ plant::Chamber shaft(plant::Reference at, double floor, double rim, double area)
 
 void addLimits(plant::Project& project) {
     auto& limits = project.limits;
-    limits.add("Shaft, lowest", limit(Measure::level, to(Collection::chambers, "Surge shaft", 0), 458.0, {}));
-    limits.add("Spiral head, highest", limit(Measure::head, to(Collection::units, "U1", 0), {}, 590.0, 3.0));
-    limits.add("Shaft, highest", limit(Measure::level, to(Collection::chambers, "Surge shaft", 0), {}, 534.0));
+    limits.add("Shaft, lowest",
+               limit(Measure::level, to(Collection::chambers, "Surge shaft", 0), 458.0, {}));
+    limits.add("Spiral head, highest",
+               limit(Measure::head, to(Collection::units, "U1", 0), {}, 590.0, 3.0));
+    limits.add("Shaft, highest",
+               limit(Measure::level, to(Collection::chambers, "Surge shaft", 0), {}, 534.0));
     limits.add("Speed, highest", limit(Measure::speed, to(Collection::units, "U1", 0), {}, 1.5));
     auto bend = limit(Measure::head, to(Collection::conduits, "Penstock", 1), 455.0, {});
     bend.at.alongConduit = true;
@@ -64,8 +67,9 @@ void addLimits(plant::Project& project) {
     limits.add("Top bend, lowest", bend);
     limits.add("Draft tube, lowest",
                limit(Measure::draftPressureHead, to(Collection::units, "U1", 0), -6.0, {}));
-    limits.add("Tunnel pressure rate",
-               limit(Measure::pressureRate, to(Collection::points, "Shaft foot", 1), {}, 10.0 / 60.0));
+    limits.add(
+        "Tunnel pressure rate",
+        limit(Measure::pressureRate, to(Collection::points, "Shaft foot", 1), {}, 10.0 / 60.0));
     auto rate = limit(Measure::openingRate, to(Collection::units, "U1", 0), {}, 0.33);
     rate.timeRule = plant::TimeRule::cumulative;
     rate.allowed_s = 20.0;
@@ -106,9 +110,12 @@ results::Envelope envelope(const plant::Plant& plant, int index, double low_m) {
     for (int i = 0; i < stations; ++i) {
         const double share = i / (stations - 1.0);
         const double chainage = from.chainage_m + share * (end.chainage_m - from.chainage_m);
-        const double swing = 40.0 * std::min(1.0, std::max(0.0, chainage / 5000.0));
-        const double hammer = chainage > 5000.0 ? 0.1 * (chainage - 5000.0) : 0.0;
-        const double rest = std::max(restHead(chainage), end.elevation_m + 5.0);
+        const double swing = from.elevation_m < 300.0
+                                 ? 6.0 * (1.0 - share)
+                                 : 40.0 * std::min(1.0, std::max(0.0, chainage / 5000.0));
+        const bool tail = from.elevation_m < 300.0;
+        const double hammer = chainage > 5000.0 && !tail ? 0.1 * (chainage - 5000.0) : 0.0;
+        const double rest = tail ? 272.0 : std::max(restHead(chainage), end.elevation_m + 5.0);
         out.chainage_m.push_back(chainage);
         out.elevation_m.push_back(from.elevation_m + share * (end.elevation_m - from.elevation_m));
         out.rest_m.push_back(rest);
@@ -166,21 +173,25 @@ plant::Project sampleProject() {
     plant::Reservoir tail;
     tail.level_m = 270.0;
     plant.reservoirs.add("Tailwater", tail);
-    plant.conduits.add("Headrace", conduit(plant, "Intake", "Shaft foot", {{1800, 466.7}, {3600, 458.4}}, 6.38));
-    plant.conduits.add("Penstock", conduit(plant, "Shaft foot", "U1 inlet", {{5030, 452}, {5250, 262}}, 3.9));
+    plant.conduits.add(
+        "Headrace", conduit(plant, "Intake", "Shaft foot", {{1800, 466.7}, {3600, 458.4}}, 6.38));
+    plant.conduits.add("Penstock",
+                       conduit(plant, "Shaft foot", "U1 inlet", {{5030, 452}, {5250, 262}}, 3.9));
     plant.conduits[1].length_m = 650.0;
-    plant.chambers.add("Surge shaft", shaft(to(Collection::points, "Shaft foot", 1), 455.0, 536.0, 50.27));
+    plant.chambers.add("Surge shaft",
+                       shaft(to(Collection::points, "Shaft foot", 1), 455.0, 536.0, 50.27));
     plant::Unit unit;
     unit.from = to(Collection::points, "U1 inlet", 2);
     unit.to = to(Collection::reservoirs, "Tailwater", 1);
     unit.centreline_m = 262.0;
     plant.units.add("U1", unit);
-    project.ground = {{-700, 505}, {-600, 480}, {-300, 470}, {-20, 472}, {60, 500}, {300, 548}, {900, 575},
-                      {1600, 560}, {2300, 592}, {3100, 570}, {3800, 588}, {4500, 572}, {5000, 538},
-                      {5060, 520}, {5230, 355}, {5320, 312}, {5450, 296}, {5560, 290}, {5600, 284},
-                      {5640, 284}, {5645, 262}, {5760, 262}};
+    project.ground = {{-700, 505}, {-600, 480}, {-300, 470}, {-20, 472},  {60, 500},   {300, 548},
+                      {900, 575},  {1600, 560}, {2300, 592}, {3100, 570}, {3800, 588}, {4500, 572},
+                      {5000, 538}, {5060, 520}, {5230, 355}, {5320, 312}, {5450, 296}, {5560, 290},
+                      {5600, 284}, {5640, 284}, {5645, 262}, {5760, 262}};
     addLimits(project);
-    for (const char* name : {"Two-stage closing", "Wider shaft", "Larger throttle", "Reload not before 300 s"}) {
+    for (const char* name :
+         {"Two-stage closing", "Wider shaft", "Larger throttle", "Reload not before 300 s"}) {
         project.options.add(name);
     }
     addStudies(project);
@@ -194,10 +205,12 @@ plant::Project branchedProject() {
     plant.points.add("U3 inlet", {5579.0, 262.0});
     plant.points.add("Draft end", {5660.0, 262.0});
     plant.points.add("Outfall", {8200.0, 264.0});
-    plant.conduits.add("Penstock 2", conduit(plant, "Shaft foot", "U2 inlet", {{5030, 452}, {5250, 262}}, 2.2));
+    plant.conduits.add("Penstock 2",
+                       conduit(plant, "Shaft foot", "U2 inlet", {{5030, 452}, {5250, 262}}, 2.2));
     plant.conduits.add("Tailrace", conduit(plant, "Draft end", "Outfall", {}, 7.0));
     plant.chambers.add("Lower chamber",
-                       shaft(to(Collection::points, "Draft end", plant.points.indexOf("Draft end")), 264.0, 290.0, 400.0));
+                       shaft(to(Collection::points, "Draft end", plant.points.indexOf("Draft end")),
+                             264.0, 290.0, 400.0));
     plant.reservoirs[1].at = to(Collection::points, "Outfall", plant.points.indexOf("Outfall"));
     for (const char* name : {"U2", "U3"}) {
         plant::Unit unit = plant.units[0];
@@ -271,9 +284,9 @@ studies::Cell doneCell(const studies::Snapshot& snapshot, int option, int study)
     stored->run = stored->repeat = sampleRun(variant.plant);
     cell.stored = stored;
     const double shares[] = {-0.06, 0.04, 0.30, 0.03, 0.42, 0.55, 0.61, 0.66};
-    const results::Mark marks[] = {results::Mark::broken, results::Mark::tight, results::Mark::held,
-                                   results::Mark::undecided, results::Mark::held, results::Mark::held,
-                                   results::Mark::held, results::Mark::held};
+    const results::Mark marks[] = {
+        results::Mark::broken, results::Mark::tight, results::Mark::held, results::Mark::undecided,
+        results::Mark::held,   results::Mark::held,  results::Mark::held, results::Mark::held};
     for (int i = 0; i < variant.limits.size(); ++i) {
         const auto& limit = variant.limits[i];
         const auto row = static_cast<std::size_t>(i) % std::size(shares);
@@ -305,9 +318,9 @@ studies::Cell doneCell(const studies::Snapshot& snapshot, int option, int study)
 
 std::vector<studies::Cell> sampleCells(const studies::Snapshot& snapshot) {
     using studies::CellState;
-    const CellState states[] = {CellState::done,    CellState::done,    CellState::running,
-                                CellState::outdated, CellState::notRun, CellState::waiting,
-                                CellState::done,    CellState::cutShort, CellState::failed,
+    const CellState states[] = {CellState::done,         CellState::done,     CellState::running,
+                                CellState::outdated,     CellState::notRun,   CellState::waiting,
+                                CellState::done,         CellState::cutShort, CellState::failed,
                                 CellState::notApplicable};
     std::vector<studies::Cell> cells;
     int count = 0;

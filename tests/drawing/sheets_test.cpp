@@ -4,11 +4,12 @@
 #include "drawing/ribbon_picture.h"
 #include "drawing/section_picture.h"
 #include "drawing/strip_picture.h"
-#include "picture_checks.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <QPainter>
+
+#include "picture_checks.h"
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -16,11 +17,14 @@ using namespace headroom::drawing;
 /// The pictures together as they stand in the window, written for people to look at.
 namespace {
 
-QImage sheet(const plant::Project& project, Scheme scheme, double scale, bool results, QSizeF size) {
+QImage sheet(const plant::Project& project, Scheme scheme, double scale, bool results,
+             QSizeF size) {
     test::startGui();
     const auto snapshot = test::snapshotOf(project);
-    auto cells = snapshot->studies() > 0 ? test::sampleCells(*snapshot) : std::vector<studies::Cell>{};
-    const auto cell = results && snapshot->studies() > 0 ? test::doneCell(*snapshot, -1, 4) : studies::Cell{};
+    auto cells =
+        snapshot->studies() > 0 ? test::sampleCells(*snapshot) : std::vector<studies::Cell>{};
+    const auto cell =
+        results && snapshot->studies() > 0 ? test::doneCell(*snapshot, -1, 4) : studies::Cell{};
     const studies::Cell* inHand = results ? &cell : nullptr;
     const Look& the = look(scheme, scale);
     const Selection selection{{{-1, 4}, {1, 4}}, 0, 151.0, {}};

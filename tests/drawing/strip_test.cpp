@@ -1,11 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/strip_picture.h"
 #include "limits/judge.h"
-#include "picture_checks.h"
-#include "sample.h"
 #include "support/catch.h"
 
 #include <algorithm>
+
+#include "picture_checks.h"
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -22,14 +23,14 @@ Shot sample(QSizeF size, int firstRow = 0) {
     test::startGui();
     auto snapshot = test::snapshotOf(test::sampleProject());
     auto cell = test::doneCell(*snapshot, -1, 4);
-    auto picture = stripPicture({*snapshot, &cell, {{{-1, 4}}, 3, 0, {}}, size, look(Scheme::light), firstRow});
+    auto picture = stripPicture(
+        {*snapshot, &cell, {{{-1, 4}}, 3, 0, {}}, size, look(Scheme::light), firstRow});
     return {std::move(snapshot), std::move(cell), std::move(picture)};
 }
 
 int bars(const Items& items) {
-    return static_cast<int>(std::count_if(items.begin(), items.end(), [](const Item& item) {
-        return item.kind == ItemKind::bar;
-    }));
+    return static_cast<int>(std::count_if(
+        items.begin(), items.end(), [](const Item& item) { return item.kind == ItemKind::bar; }));
 }
 
 } // namespace
@@ -38,12 +39,15 @@ TEST_CASE("Strip: worst first, every limit, value of bound with its unit", "[dra
     const auto shot = sample({336, 360});
     REQUIRE(shot.picture.order.size() == 8);
     for (std::size_t i = 1; i < shot.picture.order.size(); ++i) {
-        const auto at = [&](std::size_t k) { return shot.cell.verdicts[static_cast<std::size_t>(shot.picture.order[k])]; };
+        const auto at = [&](std::size_t k) {
+            return shot.cell.verdicts[static_cast<std::size_t>(shot.picture.order[k])];
+        };
         CHECK_FALSE(limits::worse(at(i), at(i - 1)));
     }
     CHECK(bars(shot.picture.items) == 8);
     CHECK(shot.picture.items.front().limit == 0);
-    CHECK_THAT(shot.picture.items.front().label.toStdString(), ContainsSubstring("456.1 of 458.0\u2009m"));
+    CHECK_THAT(shot.picture.items.front().label.toStdString(),
+               ContainsSubstring("456.1 of 458.0\u2009m"));
     CHECK_THAT(shot.picture.items.front().description.toStdString(), ContainsSubstring("broken"));
     CHECK(test::faults(shot.picture.items, {336, 360}, look(Scheme::light)).toStdString() == "");
 }
@@ -55,7 +59,8 @@ TEST_CASE("Strip: what finds no room is counted, and can be scrolled to", "[draw
     CHECK(last.label.toStdString() == std::to_string(8 - top.picture.rowsShown) + " more below");
     const auto end = sample({336, 170}, 99);
     CHECK(end.picture.firstRow == 8 - end.picture.rowsShown);
-    CHECK(end.picture.items.front().label.toStdString() == std::to_string(end.picture.firstRow) + " more above");
+    CHECK(end.picture.items.front().label.toStdString()
+          == std::to_string(end.picture.firstRow) + " more above");
     CHECK(bars(end.picture.items) == end.picture.rowsShown);
 }
 

@@ -1,7 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/words.h"
-#include "sample.h"
 #include "support/catch.h"
+
+#include <cmath>
+
+#include "sample.h"
 
 using namespace headroom;
 using namespace headroom::drawing;
@@ -9,7 +12,7 @@ using namespace headroom::drawing;
 TEST_CASE("Words: numbers keep unit, thin space and true minus", "[drawing][messages]") {
     CHECK(numberText(Quantity::elevation, -3.94).toStdString() == "−3.9\u2009m");
     CHECK(amountOf(Quantity::elevation, 456.13, 458.0).toStdString() == "456.1 of 458.0\u2009m");
-    CHECK(wholeAmount(Quantity::chainage, 5000.0).toStdString() == "5000\u2009m");
+    CHECK(wholeAmount(Quantity::chainage, 5000.0).toStdString() == "5\u2009000\u2009m");
     CHECK(wholeAmount(Quantity::chainage, 12345.0).toStdString() == "12\u2009345\u2009m");
     CHECK(wholeAmount(Quantity::count, -12345.0).toStdString() == "−12\u2009345");
     CHECK(timeWords(151.2).toStdString() == "151\u2009s");
@@ -25,7 +28,8 @@ TEST_CASE("Words: a share never rounds to the other side of the limit", "[drawin
     CHECK(percent(std::nan("")).toStdString() == "–");
 }
 
-TEST_CASE("Words: letters of limits go on after z and follow the name over options", "[drawing][invariant]") {
+TEST_CASE("Words: letters of limits go on after z and follow the name over options",
+          "[drawing][invariant]") {
     plant::Project project;
     plant::Variant variant;
     for (int i = 0; i < 60; ++i) {
