@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "studies/plausibility.h"
+#include "studies/rest_state.h"
 
 #include "small_project.h"
 
