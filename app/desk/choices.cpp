@@ -30,6 +30,25 @@ void follow(Selection& next, const results::Verdict& verdict) {
     }
 }
 
+/// What stays compared when a cell comes into the hand. The old one gives way, but the base stays
+/// beside an option; options compared on one study go along to another study.
+std::vector<CellId> comparedWith(const Selection& now, CellId cell) {
+    const CellId old = now.inHand();
+    const bool oneStudy = std::all_of(now.shown.begin(), now.shown.end(),
+                                      [&](CellId id) { return id.study == old.study; });
+    std::vector<CellId> kept;
+    for (auto id : now.shown) {
+        const bool givesWay = id == old && !(id.option == -1 && cell.option != -1);
+        if (oneStudy) {
+            id.study = cell.study;
+        }
+        if (id != cell && !givesWay) {
+            kept.push_back(id);
+        }
+    }
+    return kept;
+}
+
 } // namespace
 
 const results::Verdict* verdictOf(const BoardModel& board, const Selection& now) {
@@ -47,10 +66,7 @@ const results::Verdict* verdictOf(const BoardModel& board, const Selection& now)
 
 Selection withCell(const BoardModel& board, const Selection& now, CellId cell) {
     Selection next = now;
-    std::erase(next.shown, cell);
-    if (!next.shown.empty() && now.inHand() != cell && next.shown.front() == now.inHand()) {
-        next.shown.erase(next.shown.begin());
-    }
+    next.shown = comparedWith(now, cell);
     next.shown.insert(next.shown.begin(), cell);
     const auto* at = board.cell(cell);
     const auto* worst = at == nullptr ? nullptr : limits::worst(at->verdicts);
@@ -123,11 +139,19 @@ Selection unasked(const BoardModel& board, const Selection& now) {
     }
     Selection next = now;
     next.shown = {*worst};
+    std::vector<std::pair<double, CellId>> others; // by what is left of their worst limit
     for (int option = 0; option < board.snapshot().options(); ++option) {
         const auto* cell = board.cell({option, worst->study});
-        const bool shows = cell != nullptr && cell->state == studies::CellState::done;
-        if (shows && option != worst->option && next.shown.size() < comparedUnasked) {
-            next.shown.push_back({option, worst->study});
+        const auto* verdict = cell == nullptr ? nullptr : limits::worst(cell->verdicts);
+        if (verdict != nullptr && cell->state == studies::CellState::done && option != worst->option) {
+            others.emplace_back(-verdict->share, CellId{option, worst->study});
+        }
+    }
+    std::stable_sort(others.begin(), others.end(),
+                     [](const auto& a, const auto& b) { return a.first < b.first; });
+    for (const auto& [share, cell] : others) {
+        if (next.shown.size() < comparedUnasked) {
+            next.shown.push_back(cell);
         }
     }
     return withCell(board, next, *worst);

@@ -9,7 +9,8 @@ namespace headroom::desk {
 
 using drawing::Selection;
 
-/// A cell comes into the hand: its worst limit and that limit's time with it.
+/// A cell comes into the hand, its worst limit and that limit's time with it. The run that was in
+/// the hand gives way unless it is the base's; options compared on one study follow to another.
 Selection withCell(const BoardModel& board, const Selection& now, CellId cell);
 /// A limit is chosen; the cursor goes to its extreme in the run in the hand.
 Selection withLimit(const BoardModel& board, const Selection& now, int limit);
@@ -22,7 +23,7 @@ CellId nextProblem(const BoardModel& board, CellId from);
 /// The cell whose verdict is worst among those judged, the base's first; nothing if none is.
 std::optional<CellId> worstCell(const BoardModel& board);
 /// What is shown while the user has not chosen anything: the base's worst cell so far, and the
-/// same study in other options.
+/// same study in the two options that leave most.
 Selection unasked(const BoardModel& board, const Selection& now);
 /// Drops what is not there any more after the project changed.
 Selection fitted(const BoardModel& board, Selection now);

@@ -26,6 +26,8 @@ public:
     const std::filesystem::path& path() const { return path_; }
     QString name() const; ///< file's name without its endings; "no project" if there is none
     bool open() const { return opened_; }
+    /// Whether the file's content is in the tree; else it is not written over.
+    bool readable() const { return readable_; }
     bool changed() const { return !undo_.isClean(); }
     QUndoStack& undo() { return undo_; }
 

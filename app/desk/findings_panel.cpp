@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "desk/findings_panel.h"
 
+#include "desk/two_column_delegate.h"
 #include "desk/words.h"
 #include "units/text.h"
 
@@ -72,6 +73,8 @@ FindingsPanel::FindingsPanel(Workbench& bench, QWidget* parent)
     list_->setObjectName(QStringLiteral("findingsList"));
     list_->setAccessibleName(tr("List of findings"));
     list_->setUniformItemSizes(true);
+    list_->setItemDelegate(new TwoColumnDelegate(list_));
+    list_->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
     text_->setObjectName(QStringLiteral("findingsText"));
     text_->setWordWrap(true);
     text_->setAlignment(Qt::AlignTop | Qt::AlignLeft);
@@ -112,6 +115,11 @@ Findings FindingsPanel::all() const {
     auto found = bench_.document().findings();
     sortWorstFirst(found);
     auto run = ofRun(bench_.cellInHand());
+    std::erase_if(run, [&](const Finding& finding) { // what stops a cell is often the project's
+        return std::any_of(found.begin(), found.end(), [&](const Finding& known) {
+            return known.message == finding.message && known.subject == finding.subject;
+        });
+    });
     sortWorstFirst(run);
     found.insert(found.end(), run.begin(), run.end());
     return found;
@@ -142,13 +150,13 @@ void FindingsPanel::refresh() {
             subject = finding.place ? placeWords(finding) : tr("project");
         }
         auto line = QStringLiteral("%1 · %2").arg(severityWord(finding.severity()), subject);
+        auto* item = new QListWidgetItem(line + QStringLiteral(" · ") + text(whatText(finding)), list_);
         if (finding.time_s) {
-            line += QStringLiteral(" · ") + text(print(Quantity::time, *finding.time_s));
+            item->setData(TwoColumnDelegate::detailRole, text(print(Quantity::time, *finding.time_s)));
         }
-        list_->addItem(line + QStringLiteral(" · ") + text(whatText(finding)));
     }
     heading_->setText(found.empty() ? tr("Nothing to report")
-                                    : tr("Findings: %1, errors: %2").arg(found.size()).arg(errors()));
+                                    : findingsWords(count(), errors()));
     list_->setCurrentRow(std::clamp(row, 0, static_cast<int>(found.size()) - 1));
     showText(list_->currentRow());
 }

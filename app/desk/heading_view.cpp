@@ -52,22 +52,27 @@ void HeadingView::refresh() {
     update();
 }
 
+QString HeadingView::changeWords() const {
+    const auto& snapshot = bench_.snapshot();
+    const auto base = text(snapshot.optionName(-1));
+    const int option = bench_.optionInHand();
+    return option < 0 ? tr("changes go into %1").arg(base)
+                      : tr("changes go into %1, not into %2").arg(text(snapshot.optionName(option)), base);
+}
+
 QString HeadingView::projectWords() const {
     auto& document = bench_.document();
     if (!document.open()) {
-        return tr("Headroom · no project");
+        return tr("Headroom  ·  no project");
+    }
+    if (!document.readable()) {
+        return document.name();
     }
     const auto& snapshot = bench_.snapshot();
     auto title = text(snapshot.project().title);
     title = title.isEmpty() ? document.name() : title;
     title += document.changed() ? tr(" (not saved)") : QString();
-    const auto base = text(snapshot.optionName(-1));
-    const int option = bench_.optionInHand();
-    if (option < 0) {
-        return tr("%1  ·  changes go into %2").arg(title, base);
-    }
-    return tr("%1  ·  changes go into %2, not into %3")
-        .arg(title, text(snapshot.optionName(option)), base);
+    return title + QStringLiteral("  ·  ") + changeWords();
 }
 
 QString HeadingView::sentence() const {
@@ -85,7 +90,7 @@ std::vector<HeadingView::Key> HeadingView::keys() const {
         const double textWidth = QFontMetricsF(look.font(TextSize::body, weight)).horizontalAdvance(name) + 2.0;
         const double wide = (keyLine_px + keyGap_px) * look.scale + textWidth;
         x -= wide;
-        if (x < width() * 0.35 || name.isEmpty()) {
+        if (x < width() * 0.4 || name.isEmpty()) {
             break; // the names at the left have the right of way
         }
         keys.insert(keys.begin(), {shown[back], QRectF(x, 2.0, wide, look.lineHeight(TextSize::body) + 6.0), name});
@@ -112,7 +117,12 @@ void HeadingView::paintTopLine(QPainter& painter, const std::vector<Key>& keys) 
     const QRectF line(edge_px * look.scale, 2.0 + look.space.unit, right - edge_px * look.scale, look.lineHeight(TextSize::body) + 2.0);
     painter.setFont(look.font(TextSize::body));
     painter.setPen(look.muted);
-    const auto words = QFontMetricsF(painter.font()).elidedText(projectWords(), Qt::ElideRight, line.width());
+    // Where changes go has the right of way before the project's title.
+    const QFontMetricsF metrics(painter.font());
+    const bool all = metrics.horizontalAdvance(projectWords()) <= line.width() || !bench_.document().open() ||
+                     !bench_.document().readable();
+    const auto saved = bench_.document().changed() ? tr("not saved  ·  ") : QString();
+    const auto words = metrics.elidedText(all ? projectWords() : saved + changeWords(), Qt::ElideRight, line.width());
     painter.drawText(line, Qt::AlignLeft | Qt::AlignVCenter, words);
     for (std::size_t i = 0; i < keys.size(); ++i) {
         const auto& shown = bench_.now().shown;

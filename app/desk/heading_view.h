@@ -15,6 +15,7 @@ public:
     explicit HeadingView(Workbench& bench, QWidget* parent = nullptr);
 
     QString projectWords() const;  ///< "Dorvane: one-second reserve · changes go into Wider shaft, not into As built"
+    QString changeWords() const;   ///< "changes go into Wider shaft, not into As built"
     QString sentence() const;      ///< the verdict sentence as shown
     QSize sizeHint() const override;
 

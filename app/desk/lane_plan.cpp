@@ -22,6 +22,20 @@ constexpr double padding = 0.06;      // of the range, at each end
 
 QString tr(const char* words) { return QCoreApplication::translate("desk", words); }
 
+/// A lane's name stands in a narrow gutter.
+QString shortName(Measure measure) {
+    switch (measure) {
+    case Measure::level: return tr("Level");
+    case Measure::head: return tr("Head");
+    case Measure::terminalPower: return tr("Power");
+    case Measure::draftPressureHead: return tr("Draft tube");
+    case Measure::frequency: return tr("Frequency");
+    case Measure::frequencyRate: return tr("Freq. rate");
+    case Measure::pressureRate: return tr("Head rate");
+    default: return text(info(measure).label);
+    }
+}
+
 /// Collects lanes without showing a thing twice.
 class Planner {
 public:
@@ -62,6 +76,11 @@ public:
             for (const auto& bound : lane.bounds) {
                 lane.chosen = lane.chosen || bound.limit == limit;
             }
+        }
+        std::erase_if(lanes, [this](const Lane& lane) { // nothing to see there, unless asked for
+            return run_ != nullptr && !lane.chosen && !recorded(lane.measure, lane.place);
+        });
+        for (auto& lane : lanes) {
             if (lane.chosen) { // pressing it again keeps the chosen limit
                 std::stable_partition(lane.bounds.begin(), lane.bounds.end(),
                                       [limit](const LaneBound& b) { return b.limit == limit; });
@@ -107,7 +126,7 @@ private:
         Lane lane;
         lane.measure = measure;
         lane.place = place;
-        lane.name = text(info(measure).label);
+        lane.name = shortName(measure);
         lane.where = text(limits::nameOf(place, variant_.plant));
         lane.bounds = boundsOf(measure, place);
         lanes.push_back(std::move(lane));
@@ -120,11 +139,12 @@ private:
             if (limit.measure != measure || !at || !(*at == place)) {
                 continue;
             }
+            const bool timed = limit.timeRule != plant::TimeRule::momentary;
             if (const auto least = limits::boundFor(limit.least, loadClass_)) {
-                bounds.push_back({i, false, least->value});
+                bounds.push_back({i, false, least->value, timed});
             }
             if (const auto greatest = limits::boundFor(limit.greatest, loadClass_)) {
-                bounds.push_back({i, true, greatest->value});
+                bounds.push_back({i, true, greatest->value, timed});
             }
         }
         return bounds;

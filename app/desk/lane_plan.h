@@ -16,6 +16,7 @@ struct LaneBound {
     int limit = -1;
     bool upper = true;
     double value = 0.0;
+    bool timed = false;             ///< may be passed for some time
 };
 
 struct Lane {

@@ -2,10 +2,12 @@
 #include "desk/lanes.h"
 
 #include "desk/lane_layers.h"
+#include "desk/picture_view.h"
 #include "desk/words.h"
 #include "drawing/label_placer.h"
 #include "drawing/texture.h"
 
+#include <QBasicTimer>
 #include <QKeyEvent>
 #include <QMouseEvent>
 #include <QPainter>
@@ -19,13 +21,16 @@ namespace headroom::desk {
 
 namespace {
 
-constexpr double leastLane_px = 52.0, axis_px = 34.0, between_px = 7.0;
+constexpr double leastLane_px = 50.0, axis_px = 30.0, between_px = 7.0;
+constexpr double gutterLine_px = 14.0;
+constexpr double nameClear_px = 1.0; // least room around a run's name, less its trace's slope
 constexpr double shortestView_s = 0.05;
 constexpr double wheelFactor = 0.85; // of the time range, one notch
 constexpr double keyStep = 0.01;     // of the time range, one arrow key
 constexpr int dragStart_px = 4;
 
-const QString background = QStringLiteral("background"), traceLayer = QStringLiteral("main");
+const QString background = QStringLiteral("background"), gridLayer = QStringLiteral("grid");
+const QString traceLayer = QStringLiteral("main");
 const QString overLayer = QStringLiteral("over"), cursorLayer = QStringLiteral("cursor");
 
 using drawing::TextSize;
@@ -41,11 +46,14 @@ struct Lanes::Hidden {
     std::vector<QCPAxisRect*> rects;
     std::vector<LaneRange> ranges;
     double cursor_s = 0.0;
+    QBasicTimer cursorTimer;
     double from_s = 0.0, to_s = 1.0;
     bool allTime = true;
     std::optional<QPointF> pressedAt;
     double pressedFrom_s = 0.0;
     bool dragging = false;
+    std::vector<QRectF> names; ///< of runs, as painted last
+    bool ring = false; ///< the keyboard brought the focus here
 
     QRectF rect(std::size_t lane) const { return QRectF(rects[lane]->rect()); }
     double x(double time_s) const { return rects.front()->axis(QCPAxis::atBottom)->coordToPixel(time_s); }
@@ -69,7 +77,8 @@ Lanes::Lanes(QWidget* parent) : QWidget(parent), hidden_(std::make_unique<Hidden
     plot->addLayer(overLayer);
     plot->addLayer(cursorLayer);
     plot->layer(cursorLayer)->setMode(QCPLayer::lmBuffered);
-    new PaintLayer(plot, background, [this](QPainter& painter) { paintStill(painter); });
+    new PaintLayer(plot, gridLayer, [this](QPainter& painter) { paintStill(painter); });
+    new PaintLayer(plot, overLayer, [this](QPainter& painter) { paintOver(painter); });
     new PaintLayer(plot, cursorLayer, [this](QPainter& painter) { paintMoving(painter); });
     plot->installEventFilter(this);
     plot->setMouseTracking(true);
@@ -127,7 +136,8 @@ void Lanes::rebuild() {
             ticker->setTickCount(time ? 8 : h.lanes[i].chosen ? 4 : 2);
             axis->setTicker(ticker);
             axis->setTickLabels(shown);
-            axis->setTicks(shown && time);
+            axis->setTicks(shown); // labels come with ticks; those of values have no length
+            axis->setTickLength(0, time ? 4 : 0);
             axis->setSubTicks(false);
             axis->setBasePen(Qt::NoPen);
             axis->setTickPen(look.hairPen(look.line));
@@ -183,16 +193,39 @@ void Lanes::applyRanges() {
         h.rects[i]->axis(QCPAxis::atLeft)->setRange(fromSi(quantity, h.ranges[i].low), fromSi(quantity, h.ranges[i].high));
         h.rects[i]->axis(QCPAxis::atBottom)->setRange(h.from_s, h.to_s);
     }
-    h.plot->replot(QCustomPlot::rpQueuedReplot);
+    replotLater();
 }
 
+/// A plot without room has nothing to paint into.
+void Lanes::replotLater() {
+    if (!hidden_->plot->viewport().isEmpty()) {
+        hidden_->plot->replot(QCustomPlot::rpQueuedReplot);
+    }
+}
+
+/// Only the cursor's own layer is painted again, at the next turn of the event loop.
 void Lanes::setCursor(double time_s) {
     hidden_->cursor_s = time_s;
-    hidden_->plot->layer(cursorLayer)->replot();
-    hidden_->plot->update();
+    if (!hidden_->cursorTimer.isActive()) {
+        hidden_->cursorTimer.start(0, this);
+    }
+}
+
+void Lanes::timerEvent(QTimerEvent* event) {
+    if (event->timerId() != hidden_->cursorTimer.timerId()) {
+        return QWidget::timerEvent(event);
+    }
+    hidden_->cursorTimer.stop();
+    if (!hidden_->plot->viewport().isEmpty()) {
+        hidden_->plot->layer(cursorLayer)->replot();
+        hidden_->plot->update();
+    }
 }
 
 std::optional<double> Lanes::value(int lane, int run) const {
+    if (lane >= static_cast<int>(hidden_->lanes.size()) || run >= static_cast<int>(hidden_->runs.size())) {
+        return std::nullopt;
+    }
     const auto& at = hidden_->lanes[static_cast<std::size_t>(lane)];
     const auto& traces = hidden_->runs[static_cast<std::size_t>(run)].traces;
     const int channel = traces ? traces->indexOf(at.measure, at.place) : -1;
@@ -207,7 +240,8 @@ QString Lanes::valueText(int lane, int run) const {
 int Lanes::lanesThatFit() const {
     const double scale = hidden_->look->scale;
     const double room = height() - axis_px * scale;
-    return std::max(1, static_cast<int>((room + between_px) / ((leastLane_px * scale) + between_px)) - 1);
+    const double least = leastLane_px * scale;
+    return std::max(1, static_cast<int>((room - least + between_px) / (least + between_px)));
 }
 
 QRectF Lanes::laneRect(int lane) const {
@@ -265,7 +299,8 @@ void Lanes::paintLane(QPainter& painter, int lane) {
         const double edge = bound.upper ? box.top() : box.bottom();
         const QPolygonF line{QPointF(box.left(), y), QPointF(box.right(), y)};
         const double depth = std::min(std::abs(edge - y), look.space.textureDepth);
-        drawing::paintTexture(painter, drawing::zoneBeside(line, depth, bound.upper), drawing::Texture::hatch, look);
+        drawing::paintTexture(painter, drawing::zoneBeside(line, depth, bound.upper),
+                              bound.timed ? drawing::Texture::rules : drawing::Texture::hatch, look);
         painter.setPen(look.pen(look.limit, look.width.data));
         painter.drawPolyline(line);
     }
@@ -280,6 +315,84 @@ void Lanes::paintLane(QPainter& painter, int lane) {
     });
     if (!anything) {
         painter.drawText(inner, Qt::AlignCenter, h.runs.empty() || !h.runs.front().traces ? tr("not run yet") : tr("not recorded here"));
+    }
+}
+
+/// Names at the compared traces, where they stand apart, and what is outdated; in the tall lane.
+void Lanes::paintOver(QPainter& painter) {
+    auto& h = *hidden_;
+    painter.setRenderHint(QPainter::Antialiasing);
+    h.names.clear();
+    for (std::size_t lane = 0; lane < h.lanes.size(); ++lane) {
+        if (!h.lanes[lane].chosen) {
+            continue;
+        }
+        for (std::size_t run = 0; h.runs.size() > 1 && run < h.runs.size(); ++run) {
+            paintRunName(painter, lane, run);
+        }
+        if (!h.runs.empty() && h.runs.front().stale) {
+            painter.setFont(h.look->font(TextSize::small, TextWeight::strong));
+            painter.setPen(h.look->text);
+            painter.drawText(h.rect(lane).adjusted(6, 2, -6, -2), Qt::AlignTop | Qt::AlignLeft,
+                             tr("outdated: run for earlier inputs"));
+        }
+    }
+}
+
+/// Heights of a lane's traces over a stretch of pixels, for finding room between them.
+std::vector<double> Lanes::heights(std::size_t lane, std::size_t run, double left, double right) const {
+    constexpr int looks = 9;
+    const auto& h = *hidden_;
+    const auto& traces = h.runs[run].traces;
+    const int channel = traces ? traces->indexOf(h.lanes[lane].measure, h.lanes[lane].place) : -1;
+    std::vector<double> found;
+    for (int i = 0; channel >= 0 && i < looks; ++i) {
+        const double time_s = timeAt(left + (right - left) * i / (looks - 1));
+        const double value = fromSi(h.lanes[lane].quantity(), traces->valueAt(channel, time_s));
+        found.push_back(h.rects[lane]->axis(QCPAxis::atLeft)->coordToPixel(value));
+    }
+    return found;
+}
+
+/// The name of one run close to its trace, where no other trace, bound or edge is in the way.
+void Lanes::paintRunName(QPainter& painter, std::size_t lane, std::size_t run) {
+    auto& h = *hidden_;
+    const auto box = h.rect(lane);
+    painter.setFont(h.look->font(TextSize::small));
+    const QSizeF size(QFontMetricsF(painter.font()).horizontalAdvance(h.runs[run].name) + 4, h.look->lineHeight(TextSize::small) - 2);
+    std::vector<double> bounds;
+    for (const auto& bound : h.lanes[lane].bounds) {
+        bounds.push_back(h.rects[lane]->axis(QCPAxis::atLeft)->coordToPixel(fromSi(h.lanes[lane].quantity(), bound.value)));
+    }
+    std::optional<QRectF> best;
+    double bestClear = nameClear_px;
+    for (double x = box.left() + 8; x + size.width() < box.right() - 8; x += 12) {
+        const auto own = heights(lane, run, x, x + size.width());
+        if (own.empty()) {
+            return;
+        }
+        const auto [low, high] = std::minmax_element(own.begin(), own.end());
+        for (const double top : {*low - size.height() - 2, *high + 2}) {
+            const QRectF place(QPointF(x, top), size);
+            double clear = std::min(place.top() - box.top(), box.bottom() - place.bottom());
+            const auto keepOff = [&](double y) { clear = std::min(clear, std::max(place.top() - y, y - place.bottom())); };
+            std::for_each(bounds.begin(), bounds.end(), keepOff);
+            for (std::size_t other = 0; other < h.runs.size(); ++other) {
+                const auto ys = other == run ? std::vector<double>{} : heights(lane, other, x, x + size.width());
+                std::for_each(ys.begin(), ys.end(), keepOff);
+            }
+            const double slope = *high - *low; // a name beside a steep stretch is far from its trace
+            const bool free = std::none_of(h.names.begin(), h.names.end(), [&](const QRectF& name) { return name.intersects(place); });
+            if (free && slope < size.height() && clear - slope > bestClear) {
+                bestClear = clear - slope;
+                best = place;
+            }
+        }
+    }
+    if (best) {
+        h.names.push_back(best->adjusted(-4, -2, 4, 2));
+        painter.setPen(run == 0 ? h.look->text : h.look->runs[run]);
+        painter.drawText(*best, Qt::AlignCenter, h.runs[run].name);
     }
 }
 
@@ -301,9 +414,9 @@ void Lanes::paintMoving(QPainter& painter) {
     }
     painter.setPen(look.muted);
     painter.setFont(look.font(TextSize::small));
-    painter.drawText(QRectF(last.right() + 8, last.bottom() + 2, look.space.laneGutter - 8, look.lineHeight(TextSize::small) + 2),
+    painter.drawText(QRectF(last.right() + 24, last.bottom() + 3, look.space.laneGutter - 8, look.lineHeight(TextSize::small) + 2),
                      Qt::AlignLeft | Qt::AlignVCenter, tr("s after start"));
-    if (hasFocus()) {
+    if (hasFocus() && h.ring) {
         painter.setPen(look.pen(look.focus, look.width.focus));
         painter.drawRoundedRect(QRectF(rect()).adjusted(1.5, 1.5, -1.5, -1.5), look.space.corner, look.space.corner);
     }
@@ -315,21 +428,22 @@ void Lanes::paintGutter(QPainter& painter, int lane) {
     const auto& look = *h.look;
     const auto index = static_cast<std::size_t>(lane);
     const auto box = h.rect(index);
-    const double line = look.lineHeight(TextSize::small) - 1.0;
-    QRectF row(box.right() + 8, box.top() - 2, look.space.laneGutter - 10, line);
+    const double line = gutterLine_px * look.scale; // closer than running text: one block a lane
+    QRectF row(box.right() + 8, box.top() - 3, look.space.laneGutter - 10, line);
     painter.setFont(look.font(TextSize::small, TextWeight::strong));
     painter.setPen(look.text);
     const QFontMetricsF metrics(painter.font());
     painter.drawText(row, Qt::AlignLeft | Qt::AlignVCenter, metrics.elidedText(h.lanes[index].name, Qt::ElideRight, row.width()));
     painter.setFont(look.font(TextSize::small));
     row.translate(0, line);
-    const int room = static_cast<int>((box.bottom() + 4 - row.top()) / line);
+    const double bottom = box.bottom() + between_px;
+    const int room = static_cast<int>((bottom - row.top()) / line);
     if (room > static_cast<int>(h.runs.size())) {
         painter.setPen(look.muted);
         painter.drawText(row, Qt::AlignLeft | Qt::AlignVCenter, QFontMetricsF(painter.font()).elidedText(h.lanes[index].where, Qt::ElideRight, row.width()));
         row.translate(0, line);
     }
-    for (std::size_t run = 0; run < h.runs.size() && row.bottom() <= box.bottom() + 5; ++run) {
+    for (std::size_t run = 0; run < h.runs.size() && row.bottom() <= bottom; ++run) {
         painter.setPen(run == 0 ? look.text : look.runs[run]);
         painter.drawText(row, Qt::AlignLeft | Qt::AlignVCenter, valueText(lane, static_cast<int>(run)));
         row.translate(0, line);
@@ -360,12 +474,16 @@ void Lanes::setTimeRange(double from_s, double to_s) {
     for (auto* rect : h.rects) {
         rect->axis(QCPAxis::atBottom)->setRange(h.from_s, h.to_s);
     }
-    h.plot->replot(QCustomPlot::rpQueuedReplot);
+    replotLater();
 }
 
 void Lanes::showAllTime() { setTimeRange(0.0, longest_s()); }
 
-void Lanes::paintNow() { hidden_->plot->replot(QCustomPlot::rpImmediateRefresh); }
+void Lanes::paintNow() {
+    if (!hidden_->plot->viewport().isEmpty()) {
+        hidden_->plot->replot(QCustomPlot::rpImmediateRefresh);
+    }
+}
 
 void Lanes::zoomTime(double factor, double around_s) {
     const auto& h = *hidden_;
@@ -387,6 +505,17 @@ void Lanes::stepCursor(int samples) {
         setTimeRange(time_s - span / 2.0, time_s + span / 2.0);
     }
     emit timePressed(time_s, -1);
+}
+
+void Lanes::focusInEvent(QFocusEvent* event) {
+    QWidget::focusInEvent(event);
+    hidden_->ring = byKeyboard(event->reason());
+    setCursor(hidden_->cursor_s);
+}
+
+void Lanes::focusOutEvent(QFocusEvent* event) {
+    QWidget::focusOutEvent(event);
+    setCursor(hidden_->cursor_s);
 }
 
 void Lanes::resizeEvent(QResizeEvent* event) {

@@ -56,6 +56,9 @@ protected:
     void resizeEvent(QResizeEvent* event) override;
     void keyPressEvent(QKeyEvent* event) override;
     bool eventFilter(QObject* watched, QEvent* event) override;
+    void timerEvent(QTimerEvent* event) override;
+    void focusInEvent(QFocusEvent* event) override;
+    void focusOutEvent(QFocusEvent* event) override;
 
 private:
     struct Hidden;
@@ -65,7 +68,11 @@ private:
     void setTimeRange(double from_s, double to_s);
     bool handleMouse(QEvent* event);
     void paintStill(QPainter& painter);
+    void paintOver(QPainter& painter);
+    std::vector<double> heights(std::size_t lane, std::size_t run, double left, double right) const;
+    void paintRunName(QPainter& painter, std::size_t lane, std::size_t run);
     void paintMoving(QPainter& painter);
+    void replotLater();
     void paintLane(QPainter& painter, int lane);
     void paintGutter(QPainter& painter, int lane);
     int laneAt(double y_px) const;

@@ -27,9 +27,9 @@ namespace headroom::desk {
 
 namespace {
 
-constexpr int ribbonHeight_px = 112;
+constexpr int ribbonHeight_px = 108;
 constexpr int usualWidth_px = 1280, usualHeight_px = 800;
-constexpr double sectionShare = 0.60; // of the picture's height, Ribbon included
+constexpr double sectionShare = 0.555; // of the picture's height, Ribbon included
 
 } // namespace
 
@@ -125,6 +125,8 @@ void MainWindow::connectParts() {
                 bench_.pressThing(item.thing);
             } else if (item.label == QLatin1String(drawing::openDemoWords)) {
                 perform(CommandId::openDemo);
+            } else if (item.label == QLatin1String(drawing::openProjectWords)) {
+                perform(CommandId::open);
             }
         });
     }
@@ -211,12 +213,13 @@ QRectF MainWindow::placeFor(const plant::Path& path) const {
 void MainWindow::showFindings(bool shown) {
     findings_->refresh();
     placePanels();
+    if (!shown && findings_->isVisible()) { // before hiding, which would hand the focus on by Tab
+        section_->setFocus(Qt::OtherFocusReason);
+    }
     findings_->setVisible(shown);
     if (shown) {
         findings_->raise();
         findings_->choose(0);
-    } else {
-        section_->setFocus(Qt::OtherFocusReason);
     }
 }
 
@@ -228,7 +231,7 @@ void MainWindow::reportInternalError(const QString& what) {
 void MainWindow::placePanels() {
     const QPoint corner = lanes_->isVisible() ? lanes_->mapTo(this, QPoint(0, 0)) : section_->mapTo(this, QPoint(0, section_->height() / 2));
     const int bottom = status_->geometry().top();
-    findings_->setGeometry(corner.x() + 8, corner.y(), titleBlock_->x() - corner.x() - 16, std::max(120, bottom - corner.y() - 6));
+    findings_->setGeometry(corner.x() + 2, corner.y(), titleBlock_->x() - corner.x() - 4, std::max(120, bottom - corner.y() - 2));
 }
 
 /// Selects and shows what a finding is about; an option's change is shown with it in the hand.
@@ -271,7 +274,7 @@ void MainWindow::moveFocus(int steps) {
     for (int step = 1; step <= count; ++step) {
         auto* next = regions[static_cast<std::size_t>(((here + steps * step) % count + count) % count)];
         if (next->isVisible()) {
-            next->setFocus(Qt::TabFocusReason);
+            next->setFocus(Qt::ShortcutFocusReason);
             return;
         }
     }

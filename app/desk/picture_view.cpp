@@ -15,6 +15,11 @@ PictureView::PictureView(QWidget* parent)
     setMouseTracking(true);
 }
 
+bool byKeyboard(Qt::FocusReason reason) {
+    return reason == Qt::TabFocusReason || reason == Qt::BacktabFocusReason ||
+           reason == Qt::ShortcutFocusReason;
+}
+
 QString PictureView::description() const {
     QStringList parts;
     for (const auto& item : items()) {
@@ -48,7 +53,7 @@ void PictureView::itemsChanged() {
 }
 
 void PictureView::paintFocus(QPainter& painter) const {
-    if (!hasFocus()) {
+    if (!hasFocus() || !ring_) {
         return;
     }
     const double half = look_->width.focus / 2.0;
@@ -89,6 +94,7 @@ void PictureView::resizeEvent(QResizeEvent* event) {
 
 void PictureView::focusInEvent(QFocusEvent* event) {
     QWidget::focusInEvent(event);
+    ring_ = byKeyboard(event->reason());
     update();
 }
 void PictureView::focusOutEvent(QFocusEvent* event) {

@@ -43,7 +43,11 @@ protected:
 
 private:
     const drawing::Look* look_;
+    bool ring_ = false; ///< the keyboard brought the focus here
 };
+
+/// Whether focus that came for this reason is shown by a ring: the keyboard moved it.
+bool byKeyboard(Qt::FocusReason reason);
 
 /// Lets the screen reader see the items as children; once, before the first window.
 void installAccessiblePictures();

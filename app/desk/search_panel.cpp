@@ -2,6 +2,7 @@
 #include "desk/search_panel.h"
 
 #include "desk/thing_values.h"
+#include "desk/two_column_delegate.h"
 #include "desk/words.h"
 
 #include <QCoreApplication>
@@ -26,6 +27,21 @@ bool fits(const QString& text, const QStringList& words) {
     });
 }
 
+/// The chosen thing's values first, then what options may change, then the rest; the number of
+/// the file's format is nothing to enter.
+std::vector<EditableValue> inReadingOrder(std::vector<EditableValue> values, const plant::Path& thing) {
+    std::erase_if(values, [](const EditableValue& value) {
+        return value.path.size() == 1 && value.field->kind == plant::FieldKind::whole;
+    });
+    const auto rank = [&](const EditableValue& value) {
+        const auto* top = plant::rowOf(plant::projectFields(), value.path.front());
+        const bool ofThing = !thing.empty() && thingPath(value.path) == thingPath(thing);
+        return ofThing ? 0 : top != nullptr && top->varies && value.path.size() > 2 ? 1 : 2;
+    };
+    std::stable_sort(values.begin(), values.end(), [&](const auto& a, const auto& b) { return rank(a) < rank(b); });
+    return values;
+}
+
 } // namespace
 
 SearchPanel::SearchPanel(Workbench& bench, QWidget* parent)
@@ -35,6 +51,8 @@ SearchPanel::SearchPanel(Workbench& bench, QWidget* parent)
     list_->setObjectName(QStringLiteral("searchList"));
     list_->setFocusPolicy(Qt::NoFocus);
     list_->setUniformItemSizes(true);
+    list_->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    list_->setItemDelegate(new TwoColumnDelegate(list_));
     auto* layout = new QVBoxLayout(this);
     layout->addWidget(line_);
     layout->addWidget(list_);
@@ -72,6 +90,7 @@ void SearchPanel::open(What what) {
 
 void SearchPanel::close() {
     if (isVisible()) {
+        line_->clearFocus(); // else hiding would hand the focus on as if by Tab
         hide();
         emit closed();
     }
@@ -90,7 +109,7 @@ void SearchPanel::fill() {
         return;
     }
     const auto& variant = bench_.snapshot().variant(bench_.optionInHand());
-    for (const auto& value : allValues(bench_.snapshot().project(), variant)) {
+    for (const auto& value : inReadingOrder(allValues(bench_.snapshot().project(), variant), bench_.now().thing)) {
         Entry entry;
         const auto thing = thingName(value.path);
         entry.text = thing + QStringLiteral(", ") + value.label.toLower();
@@ -113,7 +132,8 @@ void SearchPanel::filter(const QString& typed) {
         const auto& entry = entries_[i];
         if (fits(entry.text, words)) {
             shown_.push_back(i);
-            list_->addItem(entry.detail.isEmpty() ? entry.text : entry.text + QStringLiteral("    ") + entry.detail);
+            auto* item = new QListWidgetItem(entry.text, list_);
+            item->setData(TwoColumnDelegate::detailRole, entry.detail);
         }
     }
     list_->setCurrentRow(0);

@@ -85,6 +85,7 @@ void Slip::open(const plant::Path& path, const QRectF& place, const QString& typ
 
 void Slip::close() {
     if (isVisible()) {
+        line_->clearFocus(); // else hiding would hand the focus on as if by Tab
         hide();
         emit closed();
     }

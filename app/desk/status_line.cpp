@@ -61,14 +61,6 @@ QString StatusLine::tagWords() const {
     return stored ? tr("run %1").arg(traceTag(stored->fingerprint)) : QString();
 }
 
-QString StatusLine::findingsWords() const {
-    if (count_ == 0) {
-        return tr("no findings");
-    }
-    return errors_ > 0 ? tr("%1 findings, %2 errors").arg(count_).arg(errors_)
-                       : count_ == 1 ? tr("1 finding") : tr("%1 findings").arg(count_);
-}
-
 void StatusLine::setFindings(int count, int errors) {
     count_ = count;
     errors_ = errors;
@@ -100,7 +92,7 @@ void StatusLine::paintEvent(QPaintEvent*) {
     };
     addRight(caution());
     addRight(tagWords());
-    findingsBox_ = addRight(findingsWords());
+    findingsBox_ = addRight(findingsWords(count_, errors_));
     painter.setPen(look.text);
     const double left = edge_px * look.scale;
     const auto words = said_.isEmpty() ? cursorWords() : said_;

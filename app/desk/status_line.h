@@ -32,8 +32,6 @@ protected:
     void mousePressEvent(QMouseEvent* event) override;
 
 private:
-    QString findingsWords() const;
-
     Workbench& bench_;
     const Lanes& lanes_;
     QString said_;

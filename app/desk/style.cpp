@@ -35,10 +35,10 @@ QPalette paletteFor(const drawing::Look& look) {
 
 QString styleSheetFor(const drawing::Look& look) {
     const auto sheet = QStringLiteral(R"(
-QPushButton { background: @lane@; color: @text@; border: 1px solid @line@; border-radius: 4px; padding: 2px 12px; }
+QPushButton { background: @lane@; color: @text@; border: 1px solid @line@; border-radius: 4px; padding: 2px 10px; }
 QPushButton:hover { border-color: @accent@; }
-QPushButton:focus { border: 2px solid @focus@; padding: 1px 11px; }
-QPushButton[alarming="true"] { border: 2px solid @limit@; padding: 1px 11px; }
+QPushButton:focus { border: 2px solid @focus@; padding: 1px 9px; }
+QPushButton[alarming="true"] { border: 2px solid @limit@; padding: 1px 9px; }
 QPushButton:disabled { color: @muted@; background: @titleBlock@; }
 QPushButton#runDue { background: @accent@; color: @onAccent@; border-color: @accent@; }
 QPushButton#runDue:disabled { background: @titleBlock@; color: @muted@; border-color: @line@; }
@@ -49,11 +49,15 @@ QLabel#slipResult, QLabel#slipFacts { color: @muted@; }
 QFrame#findings, QFrame#search { background: @lane@; border: 1px solid @line@; border-radius: 5px; }
 QFrame#search { border: 2px solid @focus@; }
 QListWidget { background: @lane@; color: @text@; border: none; outline: none; }
-QListWidget::item { padding: 3px 6px; }
-QListWidget::item:selected { background: @selection@; color: @text@; }
+QListWidget::item { padding: 3px 6px; border: none; color: @text@; }
+QListWidget::item:selected { background: @selection@; color: @text@; border: none; padding: 3px 6px; }
 QLineEdit#searchLine { background: transparent; border: none; border-bottom: 1px solid @line@; padding: 6px; color: @text@; }
 QSplitter::handle { background: @sheet@; }
 QSplitter::handle:hover { background: @line@; }
+QScrollBar:vertical { background: @lane@; width: 10px; margin: 0; }
+QScrollBar::handle:vertical { background: @line@; border-radius: 4px; min-height: 24px; margin: 1px; }
+QScrollBar::add-line:vertical, QScrollBar::sub-line:vertical { height: 0; }
+QScrollBar::add-page:vertical, QScrollBar::sub-page:vertical { background: none; }
 QToolTip { background: @lane@; color: @text@; border: 1px solid @line@; padding: 3px; }
 )");
     return filled(sheet, {{"lane", look.lane}, {"text", look.text}, {"line", look.line},

@@ -50,6 +50,9 @@ void TitleBlock::showLook() {
         button->setFont(look.font(TextSize::body, button == run_ ? drawing::TextWeight::strong : drawing::TextWeight::normal));
         button->setMinimumHeight(static_cast<int>(look.space.target) + 4);
     }
+    // Either of its two texts fits the main button, so that its neighbours stay where they are.
+    const QFontMetrics metrics(run_->font());
+    run_->setMinimumWidth(std::max(metrics.horizontalAdvance(tr("Run what is due")), metrics.horizontalAdvance(tr("Cancel runs"))) + 30);
     arrange();
     update();
 }

@@ -84,6 +84,17 @@ QString pathWords(const plant::Path& path) {
     return words;
 }
 
+QString findingsWords(int count, int errors) {
+    if (count == 0) {
+        return tr("no findings");
+    }
+    auto words = count == 1 ? tr("1 finding") : tr("%1 findings").arg(count);
+    if (errors > 0) {
+        words += errors == 1 ? tr(", 1 error") : tr(", %1 errors").arg(errors);
+    }
+    return words;
+}
+
 QString traceTag(const plant::Fingerprint& fingerprint) {
     // Letters and digits that are not taken for each other.
     constexpr std::string_view letters = "ACDEFGHJKLMNPQRTUVWXY";

@@ -23,6 +23,9 @@ QString thingName(const plant::Path& path);
 /// The part of a path that names a thing: plant/chambers/Surge shaft; the whole if none.
 plant::Path thingPath(const plant::Path& path);
 
+/// "no findings", "1 finding", "6 findings, 1 error".
+QString findingsWords(int count, int errors);
+
 /// Short tag of a run, printed beside what comes from it: "7Q-0418".
 QString traceTag(const plant::Fingerprint& fingerprint);
 

@@ -47,7 +47,10 @@ QString Workbench::runName(CellId cell) const {
 
 QString Workbench::sentence() const {
     if (!document_.open()) {
-        return tr("Start where the water does.");
+        return tr("No project is open. Open the demo plant, or a project of your own (Ctrl+O).");
+    }
+    if (!document_.readable()) {
+        return tr("The file could not be read; the findings say where and why.");
     }
     const auto* cell = cellInHand();
     if (cell == nullptr) {

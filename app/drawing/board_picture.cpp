@@ -19,9 +19,10 @@ namespace {
 using Scene = BoardPicture::Scene;
 
 constexpr double narrowest = 40.0, easy = 48.0, widest = 66.0; ///< columns
-constexpr double narrowMark = 0.36;                            ///< share of the cell's width
-constexpr double leastRow = 0.86;                              ///< share of the usual height
-constexpr double slantedMost_px = 84.0;                        ///< longest slanted line
+constexpr double classWidth = 5.0;      ///< gap and letter of the class, in units
+constexpr double narrowMark = 0.36;     ///< share of the cell's width
+constexpr double leastRow = 0.86;       ///< share of the usual height
+constexpr double slantedMost_px = 84.0; ///< longest slanted line
 
 struct Making {
     const BoardInput& input;
@@ -99,6 +100,39 @@ double headingHeight(const Look& look) {
     return look.lineHeight(TextSize::small);
 }
 
+/// Falling towards its column: the room needed lies left, over the names of the studies, so that
+/// the last name cannot run off at the right.
+void laySlanted(const Making& making, BoardColumn& column, const QFont& font, double longest) {
+    const auto& look = making.input.look;
+    const double angle = slant_deg * std::numbers::pi / 180.0;
+    const double high = look.lineHeight(TextSize::small) * static_cast<double>(column.lines.size());
+    column.pivot = {column.column.center().x() - 0.5 * high * std::sin(angle),
+                    making.top - 0.5 * look.space.unit};
+    const double room = column.pivot.x() / std::cos(angle) - 2;
+    const QFontMetricsF metrics(font);
+    for (auto& words : column.lines) {
+        words = metrics.elidedText(words, Qt::ElideRight, std::min(room, longest + 1));
+    }
+    QTransform turn;
+    turn.translate(column.pivot.x(), column.pivot.y());
+    turn.rotate(slant_deg);
+    const double wide = widthOf(column.lines, font);
+    column.shape.addPolygon(turn.map(QPolygonF(QRectF(-wide, -high, wide, high))));
+    column.shape.closeSubpath();
+}
+
+void layLevel(const Making& making, BoardColumn& column, const QFont& font) {
+    const auto& look = making.input.look;
+    const double line = look.lineHeight(TextSize::small);
+    double y = making.top - look.space.unit - line * static_cast<double>(column.lines.size());
+    for (const auto& words : column.lines) {
+        const double wide = textSize(words, font).width();
+        column.boxes.push_back(QRectF(column.column.center().x() - wide / 2, y, wide, line));
+        column.shape.addRect(column.boxes.back());
+        y += line;
+    }
+}
+
 void addColumn(Making& making, int position, const Header& header) {
     const auto& look = making.input.look;
     const int option = making.picture.firstColumn + position - 1;
@@ -110,36 +144,14 @@ void addColumn(Making& making, int position, const Header& header) {
     column.slanted = header.slanted;
     const QFont font =
         look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
-    const double line = look.lineHeight(TextSize::small);
     column.lines = twoLines(name, font);
-    Item item;
     if (column.slanted) {
-        // Falling towards its column: the room needed lies left, over the names of the studies, so
-        // that the last name cannot run off at the right.
-        const double angle = slant_deg * std::numbers::pi / 180.0;
-        const double high = line * static_cast<double>(column.lines.size());
-        column.pivot = {column.column.center().x() - 0.5 * high * std::sin(angle),
-                        making.top - 0.5 * look.space.unit};
-        const double room = column.pivot.x() / std::cos(angle) - 2;
-        const QFontMetricsF metrics(font);
-        for (auto& words : column.lines) {
-            words = metrics.elidedText(words, Qt::ElideRight, std::min(room, header.longest + 1));
-        }
-        QTransform turn;
-        turn.translate(column.pivot.x(), column.pivot.y());
-        turn.rotate(slant_deg);
-        const double wide = widthOf(column.lines, font);
-        item.shape.addPolygon(turn.map(QPolygonF(QRectF(-wide, -high, wide, high))));
-        item.shape.closeSubpath();
+        laySlanted(making, column, font, header.longest);
     } else {
-        double y = making.top - look.space.unit - line * static_cast<double>(column.lines.size());
-        for (const auto& words : column.lines) {
-            const double wide = textSize(words, font).width();
-            column.boxes.push_back(QRectF(column.column.center().x() - wide / 2, y, wide, line));
-            item.shape.addRect(column.boxes.back());
-            y += line;
-        }
+        layLevel(making, column, font);
     }
+    Item item;
+    item.shape = column.shape;
     item.kind = ItemKind::columnTitle;
     item.option = option;
     item.thing = option < 0
@@ -216,6 +228,25 @@ QString spokenCell(const Making& making, CellId id, const studies::Cell* cell) {
     return out;
 }
 
+/// A share over the letter of its limit; the two lines may touch, they never overlap.
+void labelCell(const Making& making, BoardCell& cell, const QRectF& frame,
+               const results::Verdict& worst) {
+    const auto& look = making.input.look;
+    const auto& snapshot = making.input.snapshot;
+    const double line = look.lineHeight(TextSize::small);
+    const double step = std::min(line, (frame.height() - 2) / 2);
+    const double first = frame.center().y() - step;
+    const double left = cell.markBox.right() + 0.5 * look.space.unit;
+    const QString share = percent(worst.share);
+    // A long share comes nearer to the mark rather than being cut.
+    const double needed = textSize(share, look.font(TextSize::small)).width();
+    const double from = std::min(left, frame.right() - needed);
+    cell.share = {share, QRectF(from, first, frame.right() - from, step)};
+    cell.letter =
+        quietLabel(limitLetter(snapshot.project(), snapshot.variant(cell.id.option), worst.limit),
+                   QRectF(left, first + step, std::max(1.0, frame.right() - left), step));
+}
+
 void addCell(Making& making, CellId id, const QRectF& frame) {
     const auto& look = making.input.look;
     const auto* cell = cellOf(making.input, id);
@@ -237,40 +268,43 @@ void addCell(Making& making, CellId id, const QRectF& frame) {
     const double gap = 0.5 * look.space.unit;
     out.markBox = QRectF(frame.left() + gap, frame.center().y() - side / 2, side, side);
     const auto* worst = cell == nullptr ? nullptr : limits::worst(cell->verdicts);
-    QString shownShare, letter;
-    if (worst != nullptr && hasShare(*cell, *worst)) {
-        shownShare = percent(worst->share);
-        letter = limitLetter(making.input.snapshot.project(),
-                             making.input.snapshot.variant(id.option), worst->limit);
+    const bool known = worst != nullptr && hasShare(*cell, *worst);
+    if (known) {
+        labelCell(making, out, frame, *worst);
     }
-    const double line = look.lineHeight(TextSize::small);
-    const double left = out.markBox.right() + gap;
-    // A share over its letter; the two lines may touch, they never overlap.
-    const double step = std::min(line, (frame.height() - 2) / 2);
-    const double first = frame.center().y() - step;
-    const double wide = std::max(1.0, frame.right() - left);
-    out.share = {shownShare, QRectF(left, first, wide, step), TextSize::small};
-    out.letter = {letter,
-                  QRectF(left, first + step, wide, step),
-                  TextSize::small,
-                  TextWeight::normal,
-                  true,
-                  false,
-                  {}};
     Item item;
     item.kind = ItemKind::cell;
     item.option = id.option;
     item.study = id.study;
     item.box = frame;
     item.shape.addRect(frame);
-    item.label = shownShare;
+    item.label = out.share.text;
     item.description = spokenCell(making, id, cell);
-    item.limit = worst != nullptr && !shownShare.isEmpty() ? worst->limit : -1;
+    item.limit = known ? worst->limit : -1;
     making.picture.items.push_back(std::move(item));
     making.scene.cells.push_back(std::move(out));
 }
 
 // --- rows ---------------------------------------------------------------------------------------
+
+/// A study's name on one line, or folded on two.
+std::vector<Label> rowName(const Making& making, const QString& name, const QRectF& row,
+                           TextWeight weight) {
+    const auto& look = making.input.look;
+    const double line = look.lineHeight(TextSize::small), gap = look.space.unit;
+    const QFont font = look.font(TextSize::small, weight);
+    const double left = classWidth * gap, wide = std::max(1.0, making.left - left - gap);
+    const bool fits = textSize(name, font).width() <= wide;
+    const auto lines = fits ? std::vector<QString>{name} : twoLines(name, font);
+    const double step = std::min(line, (row.height() - 2) / static_cast<double>(lines.size()));
+    double top = row.center().y() - step * static_cast<double>(lines.size()) / 2;
+    std::vector<Label> out;
+    for (const auto& words : lines) {
+        out.push_back({words, QRectF(left, top, wide, step), TextSize::small, weight});
+        top += step;
+    }
+    return out;
+}
 
 void addRow(Making& making, int study, double y) {
     const auto& look = making.input.look;
@@ -281,28 +315,12 @@ void addRow(Making& making, int study, double y) {
     row.row = QRectF(0, y, making.input.size.width(), making.height);
     row.selected =
         !making.input.selection.shown.empty() && making.input.selection.inHand().study == study;
-    const double middle = y + (making.height - line) / 2, letter = 4 * gap;
+    const double middle = y + (making.height - line) / 2;
     const auto weight = row.selected ? TextWeight::strong : TextWeight::normal;
-    row.letter = {classLetter(studies[study].loadClass),
-                  QRectF(gap, middle, letter, line),
-                  TextSize::small,
-                  TextWeight::normal,
-                  true,
-                  false,
-                  {}};
+    row.letter = quietLabel(classLetter(studies[study].loadClass),
+                            QRectF(gap, middle, (classWidth - 1) * gap, line));
     const QString name = text(studies.name(study));
-    const QFont font = look.font(TextSize::small, weight);
-    const QFontMetricsF metrics(font);
-    const double wide = std::max(1.0, making.left - letter - 2 * gap);
-    const bool fits = metrics.horizontalAdvance(name) <= wide;
-    const auto lines = fits ? std::vector<QString>{name} : twoLines(name, font);
-    const double step = std::min(line, (making.height - 2) / 2);
-    double top =
-        fits ? middle : y + making.height / 2 - step * static_cast<double>(lines.size()) / 2;
-    for (const auto& words : lines) {
-        row.name.push_back({words, QRectF(gap + letter, top, wide, line), TextSize::small, weight});
-        top += step;
-    }
+    row.name = rowName(making, name, row.row, weight);
     Item item;
     item.kind = ItemKind::rowTitle;
     item.study = study;
@@ -327,8 +345,7 @@ void addLabel(Making& making, const QString& words, const QRectF& where) {
     item.shape.addRect(where);
     item.label = item.description = words;
     making.picture.items.push_back(std::move(item));
-    making.scene.labels.push_back(
-        {words, where, TextSize::small, TextWeight::normal, true, false, {}});
+    making.scene.labels.push_back(quietLabel(words, where));
 }
 
 QString outOfSight(const BoardPicture& picture, int rows, int columns) {

@@ -22,6 +22,7 @@ struct BoardColumn {
     QPointF pivot;              ///< where slanted lines end
     std::vector<QString> lines; ///< at most two
     std::vector<QRectF> boxes;  ///< of level lines
+    QPainterPath shape;         ///< where the name is
 };
 struct BoardCell {
     CellId id;

@@ -9,6 +9,7 @@
 #include <QString>
 
 #include <optional>
+#include <utility>
 #include <vector>
 
 class QPainter;
@@ -25,6 +26,11 @@ struct Label {
     bool framed = false; ///< on a ground of its own, with a frame in the limit's colour
     std::optional<QPointF> leader = {}; ///< hair line from the box to here
 };
+
+/// A small text in the muted colour.
+inline Label quietLabel(QString words, QRectF box) {
+    return {std::move(words), box, TextSize::small, TextWeight::normal, true};
+}
 
 /// Width and height a text needs.
 QSizeF textSize(const QString& text, const QFont& font);

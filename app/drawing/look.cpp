@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/look.h"
 
-#include "drawing/schemes.h"
+#include "drawing/look_schemes.h"
 
 #include <QFontMetricsF>
 

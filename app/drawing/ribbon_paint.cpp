@@ -15,13 +15,8 @@ void paintTicks(QPainter& painter, const Scene& scene) {
     for (const auto& [y, words] : scene.ticks) {
         painter.setPen(scene.look.hairPen(scene.look.line));
         painter.drawLine(QPointF(scene.chart.left(), y), QPointF(scene.chart.right(), y));
-        Label label{words,
-                    QRectF(0, y - height / 2, scene.chart.left() - 6, height),
-                    TextSize::small,
-                    TextWeight::normal,
-                    true,
-                    false,
-                    {}};
+        const Label label =
+            quietLabel(words, QRectF(0, y - height / 2, scene.chart.left() - 6, height));
         paintPlain(painter, label, scene.look, Qt::AlignRight);
     }
 }
@@ -74,7 +69,7 @@ void paintRuler(QPainter& painter, const Scene& scene) {
         painter.drawLine(QPointF(tick.x_px, scene.ruler_y),
                          QPointF(tick.x_px, scene.ruler_y + look.space.unit));
         if (!tick.label.isEmpty()) {
-            Label label{tick.label, tick.box, TextSize::small, TextWeight::normal, true, false, {}};
+            const Label label = quietLabel(tick.label, tick.box);
             paintPlain(painter, label, look, Qt::AlignLeft);
         }
     }

@@ -273,7 +273,7 @@ void addCaption(Making& making, const QString& words, bool upper) {
         }
     }
     if (const auto box = making.placer.place(places)) {
-        scene.labels.push_back({words, *box, TextSize::small, TextWeight::normal, true, false, {}});
+        scene.labels.push_back(quietLabel(words, *box));
         Item item;
         item.kind = ItemKind::label;
         item.box = *box;
@@ -359,7 +359,7 @@ void addRulerWords(Making& making) {
         if (!box) {
             continue;
         }
-        scene.labels.push_back({words, *box, TextSize::small, TextWeight::normal, true, false, {}});
+        scene.labels.push_back(quietLabel(words, *box));
         Item item;
         item.kind = ItemKind::label;
         item.box = *box;

@@ -89,13 +89,7 @@ void makeActions(Making& making, double top) {
         making.items.back().shape = QPainterPath();
         making.items.back().shape.addRect(frame);
         scene.labels.push_back(
-            {says,
-             line(says, y + gap / 2 + first, TextSize::small, TextWeight::normal),
-             TextSize::small,
-             TextWeight::normal,
-             true,
-             false,
-             {}});
+            quietLabel(says, line(says, y + gap / 2 + first, TextSize::small, TextWeight::normal)));
         x += row ? wide + gap : 0.0;
         y += row ? 0.0 : high + gap / 2;
     }

@@ -129,13 +129,7 @@ void labelReservoirs(Making& making) {
         const QString said = QStringLiteral("%1, water level %2").arg(text(name), level);
         put(making, {text(name), QRectF(box->topLeft(), first)}, path, said);
         put(making,
-            {level,
-             QRectF(QPointF(box->left(), box->top() + first.height()), second),
-             TextSize::small,
-             TextWeight::normal,
-             true,
-             false,
-             {}},
+            quietLabel(level, QRectF(QPointF(box->left(), box->top() + first.height()), second)),
             path, said);
     }
 }
@@ -314,7 +308,7 @@ void putCorner(Making& making, const QString& words) {
     auto places = corners(making.scene.layout.plot, sizeOf(making, words));
     std::swap(places[0], places[1]);
     if (const auto box = making.placer.place(places)) {
-        put(making, {words, *box, TextSize::small, TextWeight::normal, true, false, {}}, {}, words);
+        put(making, quietLabel(words, *box), {}, words);
     }
 }
 

@@ -106,13 +106,7 @@ void paintLevels(QPainter& painter, const Scene& scene, double time_s) {
         painter.drawLine(QPointF(drawing.x_px - half, y), QPointF(drawing.x_px + half, y));
         painter.restore();
         if (!moving.labelBox.isNull()) {
-            Label label{numberText(Quantity::elevation, level),
-                        moving.labelBox,
-                        TextSize::small,
-                        TextWeight::normal,
-                        true,
-                        false,
-                        {}};
+            const Label label = quietLabel(numberText(Quantity::elevation, level), moving.labelBox);
             paintPlain(painter, label, look, Qt::AlignLeft);
         }
     }
@@ -204,13 +198,8 @@ void SectionPicture::paintMoving(QPainter& painter, double time_s) const {
     section::paintHeadLines(painter, scene, time_s);
     section::paintLozenges(painter, scene);
     if (!scene.clockBox.isNull()) {
-        Label label{QStringLiteral("head line at ") + numberText(Quantity::time, time_s),
-                    scene.clockBox,
-                    TextSize::small,
-                    TextWeight::normal,
-                    true,
-                    false,
-                    {}};
+        const Label label = quietLabel(
+            QStringLiteral("head line at ") + numberText(Quantity::time, time_s), scene.clockBox);
         paintPlain(painter, label, scene.look, Qt::AlignRight);
     }
     painter.setClipping(false);

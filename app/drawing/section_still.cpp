@@ -34,13 +34,8 @@ void paintAxis(QPainter& painter, const Scene& scene) {
     }
     const double height = scene.look.lineHeight(TextSize::small);
     for (const auto& tick : scene.ticks) {
-        Label label{tick.label,
-                    QRectF(0, tick.at_px - height / 2, plot.left() - 6, height),
-                    TextSize::small,
-                    TextWeight::normal,
-                    true,
-                    false,
-                    {}};
+        const Label label =
+            quietLabel(tick.label, QRectF(0, tick.at_px - height / 2, plot.left() - 6, height));
         paintPlain(painter, label, scene.look, Qt::AlignRight);
     }
 }

@@ -133,7 +133,7 @@ void addBar(Making& making, int limit, const QRectF& row) {
         bar.share = verdict->share;
         bar.whisker = whiskerOf(*verdict);
     }
-    bar.letter = {letter, {}, TextSize::small, TextWeight::normal, true, false, {}};
+    bar.letter = quietLabel(letter, {});
     bar.name = {name, {}, TextSize::small, TextWeight::strong};
     bar.value = {valueWords(limits[limit], verdict), {}};
     placeBar(making, bar, row);
@@ -151,7 +151,7 @@ void addBar(Making& making, int limit, const QRectF& row) {
 }
 
 void addCount(Making& making, const QString& words, const QRectF& where) {
-    Label label{words, where, TextSize::small, TextWeight::normal, true, false, {}};
+    const Label label = quietLabel(words, where);
     Item item;
     item.kind = ItemKind::label;
     item.box = where;
@@ -170,13 +170,8 @@ void addHeading(Making& making, double height) {
     making.scene.heading = {QStringLiteral("Headroom"),
                             QRectF(gap, 0, std::max(1.0, wide - legendWide - 4 * gap), height),
                             TextSize::heading, TextWeight::strong};
-    making.scene.legend = {legend,
-                           QRectF(wide - legendWide - gap, 0, legendWide, height),
-                           TextSize::small,
-                           TextWeight::normal,
-                           true,
-                           false,
-                           {}};
+    making.scene.legend =
+        quietLabel(legend, QRectF(wide - legendWide - gap, 0, legendWide, height));
 }
 
 void addRows(Making& making, double top) {

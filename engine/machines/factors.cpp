@@ -113,7 +113,7 @@ PenstockNumbers penstockNumbers(const ConduitPiece& pipe, double waveSpeed_mps, 
 }
 
 std::complex<double> pipeResponse(const PenstockNumbers& numbers, std::complex<double> s) {
-    return -numbers.impedance_pu * std::tanh(numbers.travelTime_s * s);
+    return -numbers.impedance_pu * tanh(numbers.travelTime_s * s);
 }
 
 double eulerHead_m(const EulerVelocities& v, double gravity_mps2) {

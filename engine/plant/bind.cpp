@@ -279,8 +279,10 @@ Variant variant(const Project& project, int option) {
         out.findings = std::move(report.findings());
         return out;
     }
+    const Tree& changes = project.options[option].changes;
     return optionVariant(project.tree, project.options.name(option),
-                         project.options[option].changes, namesOfAll(project.tree), {});
+                         changes.isObject() ? changes : Tree::object({}), namesOfAll(project.tree),
+                         {});
 }
 
 Result<Study> studyIn(const Variant& variant, const Study& study) {

@@ -139,6 +139,20 @@ void checkUnused(const Plant& plant, std::vector<int> water, Report& report) {
     }
 }
 
+void checkUnusedReservoirs(const Plant& plant, Report& report) {
+    for (int i = 0; i < plant.reservoirs.size(); ++i) {
+        bool used = plant.reservoirs[i].at.given();
+        for (const auto& item : plant.units) {
+            used = used
+                   || (item.second.to.collection == Collection::reservoirs
+                       && item.second.to.index == i);
+        }
+        if (!used) {
+            report.add(say::unusedReservoir, {"plant", "reservoirs", plant.reservoirs.name(i)});
+        }
+    }
+}
+
 } // namespace
 
 void checkNetwork(const Plant& plant, Report& report) {
@@ -153,6 +167,7 @@ void checkNetwork(const Plant& plant, Report& report) {
     checkUnitEnds(plant, water, report);
     checkIslands(plant, report);
     checkUnused(plant, water, report);
+    checkUnusedReservoirs(plant, report);
 }
 
 } // namespace headroom::plant

@@ -133,7 +133,6 @@ const Field& projectRow() {
         Field field;
         field.kind = FieldKind::group;
         field.fields = projectFields();
-        field.commons = false;
         return field;
     }();
     return whole;

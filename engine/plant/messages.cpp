@@ -61,6 +61,7 @@ std::span<const Message* const> messages() {
         &unitNotConnected,
         &disconnected,
         &unusedPoint,
+        &unusedReservoir,
         &emptyPlant,
         &inertiaIsGd2,
         &inertiaUnusual,

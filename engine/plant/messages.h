@@ -207,6 +207,8 @@ inline constexpr Message disconnected{"plant.disconnected", Severity::error,
                                       "Connect them to a reservoir, or remove them."};
 inline constexpr Message unusedPoint{"plant.unused-point", Severity::note,
                                      "No conduit, reservoir, chamber or unit uses this point.", ""};
+inline constexpr Message unusedReservoir{"plant.unused-reservoir", Severity::note,
+                                         "No conduit and no unit uses this water.", ""};
 inline constexpr Message emptyPlant{"plant.empty", Severity::warning,
                                     "The plant has no reservoir and no conduit.",
                                     "Add points, a reservoir and a conduit."};

@@ -2,6 +2,7 @@
 #include "simulation/conduit_geometry.h"
 
 #include "base/overloaded.h"
+#include "numerics/elementary.h"
 
 #include <algorithm>
 #include <cmath>
@@ -37,9 +38,10 @@ void setAxis(ConduitGeometry& out, const plant::Plant& plant, const Conduit& con
     out.elevation_m.push_back(to.elevation_m);
     out.along_m.push_back(0.0);
     for (std::size_t i = 1; i < out.chainage_m.size(); ++i) {
+        const double along_m = out.chainage_m[i] - out.chainage_m[i - 1];
+        const double up_m = out.elevation_m[i] - out.elevation_m[i - 1];
         out.along_m.push_back(out.along_m.back()
-                              + std::hypot(out.chainage_m[i] - out.chainage_m[i - 1],
-                                           out.elevation_m[i] - out.elevation_m[i - 1]));
+                              + numerics::sqrt(along_m * along_m + up_m * up_m));
     }
     const double drawn = out.along_m.back();
     out.length_m = conduit.length_m.value_or(drawn);

@@ -6,15 +6,33 @@
 
 #include <fmt/format.h>
 
+#include <cmath>
+
 namespace headroom {
 
 namespace {
 
+/// An amount that is not zero never reads as zero: it gets two of its own digits instead.
+std::string amountText(const Amount& amount, const NumberStyle& style) {
+    constexpr int mostDecimals = 9;
+    const auto quantity = static_cast<Quantity>(amount.quantity);
+    const double value = std::abs(fromSi(quantity, amount.si));
+    int decimals = info(quantity).decimals;
+    const auto readsZero = [&](int count) { return value < 0.5 * std::pow(10.0, -count); };
+    if (!(value > 0.0) || !readsZero(decimals) || readsZero(mostDecimals)) {
+        return print(quantity, amount.si, style);
+    }
+    while (value < 10.0 * std::pow(10.0, -decimals) && decimals < mostDecimals) {
+        ++decimals;
+    }
+    const auto& symbol = info(quantity).symbol;
+    const auto number = printNumber(quantity, amount.si, style, decimals);
+    return symbol.empty() ? number : number + "\u2009" + std::string(symbol);
+}
+
 std::string argumentText(const Argument& argument, const NumberStyle& style) {
     return std::visit(
-        overloaded{[&](const Amount& amount) {
-                       return print(static_cast<Quantity>(amount.quantity), amount.si, style);
-                   },
+        overloaded{[&](const Amount& amount) { return amountText(amount, style); },
                    [](std::int64_t number) { return fmt::format("{}", number); },
                    [](const std::string& words) { return words; }},
         argument);

@@ -34,12 +34,13 @@ TEST_CASE("choices: a pressed cell comes into the hand and pushes the old one ou
     Selection now;
     now.shown = {{-1, 0}, {1, 0}};
     const auto other = withCell(board, now, {2, 0});
-    REQUIRE(other.shown.size() == 2);
-    CHECK(other.shown[0] == CellId{2, 0});
-    CHECK(other.shown[1] == CellId{1, 0});
+    CHECK(other.shown == std::vector<CellId>{{2, 0}, {-1, 0}, {1, 0}}); // the base stays
+    CHECK(withCell(board, other, {3, 0}).shown == std::vector<CellId>{{3, 0}, {-1, 0}, {1, 0}});
+    CHECK(withCell(board, other, {2, 4}).shown == std::vector<CellId>{{2, 4}, {-1, 4}, {1, 4}});
     const auto compared = withCell(board, now, {1, 0});
-    REQUIRE(compared.shown.size() == 1);
-    CHECK(compared.shown[0] == CellId{1, 0});
+    CHECK(compared.shown == std::vector<CellId>{{1, 0}, {-1, 0}});
+    const auto back = withCell(board, compared, {-1, 0});
+    CHECK(back.shown == std::vector<CellId>{{-1, 0}});
     const auto added = toggled(now, {3, 0});
     CHECK(added.shown.size() == 3);
     CHECK(toggled(added, {3, 0}).shown == now.shown);

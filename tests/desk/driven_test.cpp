@@ -3,6 +3,7 @@
 
 #include "application.h"
 #include "desk/heading_view.h"
+#include "desk/section_view.h"
 #include "desk/slip.h"
 #include "desk/title_block.h"
 #include "drawing/marks.h"

@@ -13,6 +13,7 @@
 #include "desk/title_block.h"
 #include "driver.h"
 
+#include <QAbstractButton>
 #include <QAbstractEventDispatcher>
 #include <QAccessible>
 #include <QCloseEvent>

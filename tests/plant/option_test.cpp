@@ -139,3 +139,13 @@ TEST_CASE("options: their faults point into their changes", "[plant][messages]")
           == "options/Rough/changes/plant/conduits/Tunnel/reaches/rock/strickler");
     CHECK(hits.front().related.back() == "options/Rough");
 }
+
+TEST_CASE("options: one that changes nothing is the base", "[plant][invariant]") {
+    for (const auto* option : {R"({})", R"({"changes": {}})", R"({"about": "later"})"}) {
+        const auto bound = bind(smallPlant().with(split("options/Rough"), json(option)));
+        CHECK(bound.findings.empty());
+        const auto same = variant(bound.project, 0);
+        CHECK(same.usable());
+        CHECK(same.tree == variant(bound.project, -1).tree);
+    }
+}

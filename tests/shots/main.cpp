@@ -64,7 +64,7 @@ void runStates() {
     QTest::keyClick(&window.section(), Qt::Key_Return);
     QTest::keyClicks(window.findChild<QWidget*>(QStringLiteral("slipLine")), QStringLiteral("dia = 8*1.25"));
     keep(window, QStringLiteral("slip_open"));
-    QTest::keyClicks(window.findChild<QWidget*>(QStringLiteral("slipLine")), QStringLiteral("00"));
+    QTest::keyClicks(window.findChild<QWidget*>(QStringLiteral("slipLine")), QStringLiteral("*20"));
     keep(window, QStringLiteral("slip_fault"));
     window.slip().close();
     QTest::keyClick(&window.section(), Qt::Key_Return);
@@ -88,6 +88,7 @@ void runStates() {
     keep(window, QStringLiteral("section_alone"));
     window.perform(CommandId::sectionAlone);
     drawing::grey(window.printed().toImage()).save(folder + QStringLiteral("/grey_print.png"));
+    window.showFindings(false);
     window.resize(1920, 1080);
     keep(window, QStringLiteral("1920x1080"));
     window.resize(1280, 800);
@@ -100,8 +101,12 @@ void runStates() {
 void denseState(const QString& name) {
     drive::Bench bench;
     openDemo(bench);
-    drive::runAll(*bench.window);
-    chooseBroken(*bench.window);
+    auto& board = bench.window->bench().board();
+    const int study = drive::studyNamed(*bench.window, "Reject, then reload");
+    for (int option = -1; option < bench.window->bench().snapshot().options(); ++option) {
+        board.want({{option, study}});
+    }
+    drive::waitFor([&] { return !bench.window->bench().runs().busy(); }, 300000);
     keep(*bench.window, name);
 }
 

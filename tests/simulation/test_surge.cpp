@@ -228,7 +228,7 @@ TEST_CASE("surge: chamber with upper expansion", "[surge][analytic]") {
 
 namespace {
 
-/// Constant hydraulic power below a chamber; the penstock's loss of 1.5 m at 50 m³/s sits in a stub
+/// Constant hydraulic power below a chamber; the penstock's loss of 1.5 m at 50 m³/s sits in a spur
 /// without noticeable inertia.
 Case thoma(double area_m2, plant::ConduitModel model, double waveSpeed) {
     Case made;
@@ -239,8 +239,8 @@ Case thoma(double area_m2, plant::ConduitModel model, double waveSpeed) {
     const auto tail = made.reservoir("Tail", {}, -150.0);
     made.conduit("Tunnel", intake, tee, 5000.0, 25.0, waveSpeed, model);
     addLoss(made, "Tunnel", 5.0, 50.0);
-    made.conduit("Stub", tee, inlet, 1e-3, 7.0, 1200.0, plant::ConduitModel::rigid);
-    addLoss(made, "Stub", 1.5, 50.0);
+    made.conduit("Spur", tee, inlet, 1e-3, 7.0, 1200.0, plant::ConduitModel::rigid);
+    addLoss(made, "Spur", 1.5, 50.0);
     made.chamber("Chamber", tee, area_m2, -30.0, 30.0);
     made.unit("Unit", inlet, tail, plant::PowerUnit{1000.0 * 9.81 * 50.0 * 143.5});
     made.study.start.chamberLevel_m = {{made.ref(plant::Collection::chambers, "Chamber"), -4.99}};

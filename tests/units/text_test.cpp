@@ -44,3 +44,16 @@ TEST_CASE("text: a template that asks for a missing argument is a fault of ours"
     finding.arguments.pop_back();
     CHECK_THROWS_AS(text(finding), Bug);
 }
+
+TEST_CASE("text: an amount that is not zero does not read as zero", "[units][messages]") {
+    using headroom::Quantity;
+    static constexpr headroom::Message step{"test.step", headroom::Severity::note, "Step: {step}.", ""};
+    const auto said = [&](double si) {
+        return headroom::whatText({.message = &step, .arguments = {{"step", headroom::amount(Quantity::time, si)}}});
+    };
+    CHECK(said(0.01) == "Step: 0.010\u2009s.");
+    CHECK(said(-0.0025) == "Step: −0.0025\u2009s.");
+    CHECK(said(0.0) == "Step: 0.0\u2009s.");
+    CHECK(said(12.0) == "Step: 12.0\u2009s.");
+    CHECK(said(1e-13) == "Step: 0.0\u2009s."); // rounding noise stays silent
+}

@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "drawing/schemes.h"
+#include "drawing/look_schemes.h"
 
 namespace headroom::drawing {
 
