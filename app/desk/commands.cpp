@@ -64,7 +64,9 @@ const CommandInfo& info(CommandId id) {
 }
 
 QList<QKeySequence> keysOf(CommandId id) {
-    return QKeySequence::listFromString(QString::fromLatin1(info(id).keys));
+    // A command without keys has none, not an empty one.
+    const auto keys = QString::fromLatin1(info(id).keys);
+    return keys.isEmpty() ? QList<QKeySequence>() : QKeySequence::listFromString(keys);
 }
 
 QString keyWords(CommandId id) {

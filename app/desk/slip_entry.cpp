@@ -74,12 +74,13 @@ SlipEntry::SlipEntry(std::shared_ptr<const studies::Snapshot> snapshot, int opti
     if (values_.empty()) {
         values_ = valuesOf(snapshot_->project(), variant, start);
     }
-    for (std::size_t i = 0; i < values_.size(); ++i) {
-        if (values_[i].path == start) {
-            current_ = static_cast<int>(i);
-            break;
-        }
-    }
+    // The value that was asked for; on a thing as a whole its first number, not a name or a word.
+    const auto asked = std::find_if(values_.begin(), values_.end(),
+                                    [&](const auto& value) { return value.path == start; });
+    const auto number = std::find_if(values_.begin(), values_.end(),
+                                     [](const auto& value) { return value.numeric(); });
+    const auto found = asked != values_.end() ? asked : number;
+    current_ = found != values_.end() ? static_cast<int>(found - values_.begin()) : 0;
 }
 
 void SlipEntry::setCurrent(int index) {

@@ -23,7 +23,7 @@ struct Settings {
     int refinement = 1;          ///< divides every cell and the step by this; models stay as chosen
     bool keepTraces = true;      ///< repeats keep only extremes and envelopes
     bool keepLines = true;       ///< moving head line along the conduits
-    std::string instructions;    ///< "" = best of this machine; "baseline", "avx2", "avx512"
+    std::string instructions = {}; ///< "" = best of this machine; "baseline", "avx2", "avx512"
 };
 
 /// Compiles a plant (bound and free of errors) for one study. Findings: what cannot be computed,

@@ -160,7 +160,7 @@ TEST_CASE("Window: pressing any part moves all the others", "[desk][window]") {
     drive::settle();
     CHECK(workbench.now().limit == window.lanes().lanes().front().limit());
     CHECK_THAT(workbench.now().time_s, WithinAbs(window.lanes().timeAt(box.center().toPoint().x()), 1e-6));
-    CHECK(window.status().cursorWords().contains(QStringLiteral("water level")));
+    CHECK(window.status().cursorWords().contains(QStringLiteral("level")));
 }
 
 TEST_CASE("Window: the event loop is never stuck while runs go on", "[desk][window]") {
