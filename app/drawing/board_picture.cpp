@@ -96,10 +96,6 @@ Header headerFor(const studies::Snapshot& snapshot, const Look& look, double pit
     return header;
 }
 
-double headingHeight(const Look& look) {
-    return look.lineHeight(TextSize::small);
-}
-
 /// Falling towards its column: the room needed lies left, over the names of the studies, so that
 /// the last name cannot run off at the right.
 void laySlanted(const Making& making, BoardColumn& column, const QFont& font, double longest) {
@@ -348,6 +344,28 @@ void addLabel(Making& making, const QString& words, const QRectF& where) {
     making.scene.labels.push_back(quietLabel(words, where));
 }
 
+/// Says what the numbers are, in as many words as find room beside the names of the options.
+void addHeading(Making& making) {
+    const auto& look = making.input.look;
+    const double gap = look.space.unit;
+    for (const char* words : {"headroom left, %", "left, %", "%"}) {
+        const QString heading = QString::fromUtf8(words);
+        const QSizeF size = textSize(heading, look.font(TextSize::small));
+        for (const double y : {making.top - gap - size.height(), gap}) {
+            const QRectF box(QPointF(gap, y), size);
+            const bool taken =
+                std::any_of(making.scene.columns.begin(), making.scene.columns.end(),
+                            [&](const BoardColumn& column) {
+                                return column.shape.intersects(box.adjusted(-2, -2, 2, 2));
+                            });
+            if (!taken && box.right() < making.input.size.width()) {
+                addLabel(making, heading, box);
+                return;
+            }
+        }
+    }
+}
+
 QString outOfSight(const BoardPicture& picture, int rows, int columns) {
     QStringList parts;
     const auto add = [&](int count, const char* words) {
@@ -416,15 +434,11 @@ BoardPicture boardPicture(const BoardInput& input) {
     layRows(making);
     scene->headerBottom = making.top;
     scene->width = input.size.width();
-    const double line = headingHeight(input.look), gap = input.look.space.unit;
-    const QString heading = QStringLiteral("headroom left, %");
-    const double headingWide = textSize(heading, input.look.font(TextSize::small)).width();
-    if (making.left > headingWide + 4 * gap) { // else the slanted names need the room
-        addLabel(making, heading, QRectF(gap, making.top - gap - line, headingWide, line));
-    }
+    const double line = input.look.lineHeight(TextSize::small), gap = input.look.space.unit;
     for (int i = 0; i < picture.columnsShown; ++i) {
         addColumn(making, i, header);
     }
+    addHeading(making);
     for (int i = 0; i < picture.rowsShown; ++i) {
         addRow(making, picture.firstRow + i, making.top + i * making.height);
     }

@@ -139,7 +139,7 @@ QString leastWords(const std::vector<double>& values, const std::vector<double>&
         return QStringLiteral("no %1 limit").arg(QLatin1String(side));
     }
     return QStringLiteral("%1 left to the %2 limit at chainage %3")
-        .arg(numberText(Quantity::head, values[best]), QLatin1String(side),
+        .arg(signedMargin(Quantity::head, values[best]), QLatin1String(side),
              wholeAmount(Quantity::chainage, chainage[best]));
 }
 
@@ -197,7 +197,7 @@ void addMark(Making& making, const results::Verdict& verdict, bool leading) {
     const double half = 2 * scene.look.space.unit;
     const QRectF bar(at.x() - half, at.y() - 2, 2 * half, 4);
     making.placer.avoid(bar);
-    const QString words = numberText(Quantity::head, verdict.margin);
+    const QString words = signedMargin(Quantity::head, verdict.margin);
     const auto weight = leading ? TextWeight::strong : TextWeight::normal;
     const QSizeF size = textSize(words, scene.look.font(TextSize::small, weight));
     auto places = around(bar, size, 0.5 * scene.look.space.unit);
@@ -251,7 +251,7 @@ void chooseScale(Scene& scene, const std::vector<Margins>& all, const Shown& wha
     scene.ticks.emplace_back(scene.zero_y, QStringLiteral("0"));
     double before = 0.0;
     for (const double value : roundValues(0.0, half_m, 3)) {
-        if (value - before >= line_m && value + 0.5 * line_m <= half_m) {
+        if (value - before >= line_m && value + 0.35 * line_m <= half_m) {
             before = value;
             const QString label = text(printNumber(Quantity::head, value, {}, 0));
             scene.ticks.emplace_back(scene.zero_y - value * scene.pixelsPerMetre, label);

@@ -143,6 +143,19 @@ MovingLevel* movingOf(Scene& scene, std::size_t chamber) {
     return nullptr;
 }
 
+/// Right of a shaft, then left of it, from its rim downward; then above and below.
+std::vector<QRectF> besideShaft(const QRectF& shaft, QSizeF size, double gap) {
+    std::vector<QRectF> out;
+    for (const double x : {shaft.right() + 2 * gap, shaft.left() - 2 * gap - size.width()}) {
+        for (const double share : {0.12, 0.3, 0.5, 0.7, 0.9}) {
+            out.push_back(QRectF(QPointF(x, shaft.top() + share * shaft.height()), size));
+        }
+    }
+    const auto outside = around(shaft, size, gap);
+    out.insert(out.end(), outside.begin(), outside.end());
+    return out;
+}
+
 void labelChambers(Making& making) {
     auto& scene = making.scene;
     const auto& chambers = scene.shown.variant->plant.chambers;
@@ -156,13 +169,7 @@ void labelChambers(Making& making) {
             moving != nullptr ? sizeOf(making, QStringLiteral("−8888.8 m")) : QSizeF();
         const QSizeF both(std::max(first.width(), second.width()),
                           first.height() + std::max(0.0, second.height()));
-        auto candidates = around(drawing.box(), both, gap);
-        // Beside the shaft first, near its rim.
-        const QRectF body = drawing.box();
-        candidates.insert(
-            candidates.begin(),
-            {QRectF(QPointF(body.right() + 2 * gap, body.top() + gap), both),
-             QRectF(QPointF(body.left() - 2 * gap - both.width(), body.top() + gap), both)});
+        const auto candidates = besideShaft(drawing.box(), both, gap);
         const auto box = making.placer.place(candidates);
         if (!box) {
             ++making.leftOut;
@@ -207,22 +214,22 @@ QLineF longestStretch(const QPolygonF& line) {
     return best;
 }
 
+/// Below or right of a stretch first, all along it; then on its other side.
 std::vector<QRectF> besideStretch(const QLineF& stretch, QSizeF size, double off) {
     std::vector<QRectF> out;
+    const double w = size.width(), h = size.height();
     const double slope = std::abs(stretch.dy()) / std::max(1.0, std::abs(stretch.dx()));
-    for (const double share : {0.5, 0.38, 0.62, 0.25, 0.75, 0.12, 0.88}) {
-        const QPointF at = stretch.pointAt(share);
-        // So far that the corner of the box stays clear of a sloping line.
-        const double down = off + 0.5 * slope * size.width();
-        const double beside = slope > 0.0 ? (off + 0.5 * size.height()) / slope + off : 1e9;
-        if (slope < 0.5) {
-            out.push_back(QRectF(QPointF(at.x() - size.width() / 2, at.y() + down), size));
-            out.push_back(
-                QRectF(QPointF(at.x() - size.width() / 2, at.y() - down - size.height()), size));
-        } else {
-            const double y = at.y() - size.height() / 2;
-            out.push_back(QRectF(QPointF(at.x() - beside - size.width(), y), size));
-            out.push_back(QRectF(QPointF(at.x() + beside, y), size));
+    const bool steep = slope >= 0.5;
+    // So far that the corner of the box stays clear of a sloping line.
+    const double down = off + 0.5 * slope * w;
+    const double beside = steep ? (off + 0.5 * h) / slope + off : 0.0;
+    for (const bool first : {true, false}) {
+        for (const double share : {0.5, 0.38, 0.62, 0.25, 0.75, 0.12, 0.88}) {
+            const QPointF at = stretch.pointAt(share);
+            const double x =
+                steep ? (first ? at.x() + beside : at.x() - beside - w) : at.x() - w / 2;
+            const double y = steep ? at.y() - h / 2 : (first ? at.y() + down : at.y() - down - h);
+            out.push_back(QRectF(x, y, w, h));
         }
     }
     return out;
@@ -256,6 +263,8 @@ void labelBounds(Making& making) {
         const QSizeF size = sizeOf(making, words);
         auto candidates = around(zone, size, scene.look.space.unit);
         std::rotate(candidates.begin(), candidates.begin() + 2, candidates.begin() + 4);
+        const auto further = ringsAround(zone.center(), size, 2 * scene.look.space.unit);
+        candidates.insert(candidates.end(), further.begin(), further.end());
         putAt(making,
               {words,
                {},

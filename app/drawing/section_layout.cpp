@@ -42,17 +42,13 @@ void add(Making& making, ItemKind kind, plant::Path thing, QPainterPath shape,
     making.items.push_back(std::move(item));
 }
 
-/// Edge of the rock: the ground, taken down to the bed where water lies on it.
-QPolygonF rockEdge(const WaterwayLayout& layout) {
-    return layout.ground;
-}
-
 void addGround(Making& making) {
     const auto& layout = making.scene.layout;
     if (!layout.groundGiven) {
         return;
     }
-    QPolygonF body = rockEdge(layout);
+    QPolygonF body = layout.ground;
+    making.placer.avoid(layout.ground, 1.0);
     body << layout.plot.bottomRight() << layout.plot.bottomLeft();
     QPainterPath inside;
     inside.addRect(layout.plot);
@@ -147,7 +143,6 @@ void addBodies(Making& making) {
     addPoints(making);
     addChambers(making);
     addUnits(making);
-    QPolygonF levels;
     for (const auto& drawing : making.scene.layout.reservoirs) {
         const double y = making.scene.layout.scale.y_px(drawing.level_m);
         making.placer.avoid(QPolygonF{{drawing.left_px, y}, {drawing.right_px, y}}, 1.0);

@@ -40,7 +40,7 @@ namespace {
 
 using Scene = StripPicture::Scene;
 
-constexpr double leastRow = 0.75; ///< rows are pressed together to this before any is left out
+constexpr double leastRow = 0.66; ///< rows are pressed together to this before any is left out
 
 struct Making {
     const StripInput& input;
@@ -188,16 +188,15 @@ void addRows(Making& making, double top) {
     const auto fitting = [&](double space) {
         return std::max(0, static_cast<int>(space / height));
     };
-    picture.rowsShown = all ? count : fitting(room - 2 * line);
+    const double above = !all && making.input.firstRow > 0 ? line : 0.0;
+    picture.rowsShown = all ? count : fitting(room - line - above);
     picture.firstRow = std::clamp(making.input.firstRow, 0, std::max(0, count - picture.rowsShown));
     double y = top;
     const double wide = making.input.size.width() - 2 * look.space.unit;
-    if (!all) {
-        if (picture.firstRow > 0) {
-            addCount(making, QStringLiteral("%1 more above").arg(picture.firstRow),
-                     QRectF(look.space.unit, y, wide, line));
-        }
-        y += line;
+    if (picture.firstRow > 0) {
+        addCount(making, QStringLiteral("%1 more above").arg(picture.firstRow),
+                 QRectF(look.space.unit, y, wide, line));
+        y += above;
     }
     for (int i = 0; i < picture.rowsShown; ++i, y += height) {
         addBar(making, picture.order[static_cast<std::size_t>(picture.firstRow + i)],

@@ -92,6 +92,11 @@ Quantity marginQuantity(const plant::Limit& limit) {
     return quantity == Quantity::elevation ? Quantity::head : quantity;
 }
 
+QString signedMargin(Quantity quantity, double margin) {
+    const QString size = withUnit(quantity, limits::marginNumber(quantity, margin));
+    return margin < 0.0 ? trueMinus + size : size;
+}
+
 QString marginWords(const plant::Limit& limit, const results::Verdict& verdict) {
     // Rounded as everywhere: towards the limit, so that no verdict looks better than it is.
     const QString distance = withUnit(marginQuantity(limit),

@@ -31,6 +31,8 @@ Quantity marginQuantity(const plant::Limit& limit);
 
 /// "1.9 m below", "2.7 m inside", "at the limit".
 QString marginWords(const plant::Limit& limit, const results::Verdict& verdict);
+/// "−1.8 m": distance to the limit with its sign, cut towards the limit.
+QString signedMargin(Quantity quantity, double margin);
 /// "456.1 of 458.0 m": the extreme of its bound, never rounded to the bound itself.
 QString extremeOfBound(const plant::Limit& limit, const results::Verdict& verdict);
 /// "456.1 m at 151 s, 1.9 m below"; lozenge's label.
