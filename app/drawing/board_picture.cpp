@@ -44,26 +44,6 @@ int columnsOf(const studies::Snapshot& snapshot) {
 
 // --- column titles ------------------------------------------------------------------------------
 
-/// The words on at most two lines, as even as they get.
-std::vector<QString> twoLines(const QString& name, const QFont& font) {
-    const QStringList words = name.split(QLatin1Char(' '), Qt::SkipEmptyParts);
-    if (words.size() < 2) {
-        return {name};
-    }
-    std::vector<QString> best;
-    double least = 0.0;
-    for (qsizetype cut = 1; cut < words.size(); ++cut) {
-        const QString first = words.mid(0, cut).join(QLatin1Char(' '));
-        const QString second = words.mid(cut).join(QLatin1Char(' '));
-        const double wide = std::max(textSize(first, font).width(), textSize(second, font).width());
-        if (best.empty() || wide < least) {
-            best = {first, second};
-            least = wide;
-        }
-    }
-    return best;
-}
-
 double widthOf(const std::vector<QString>& lines, const QFont& font) {
     double wide = 0.0;
     for (const auto& line : lines) {
@@ -85,7 +65,7 @@ Header headerFor(const studies::Snapshot& snapshot, const Look& look, double pit
     Header header;
     for (int option = -1; option < snapshot.options(); ++option) {
         header.longest =
-            std::max(header.longest, widthOf(twoLines(optionName(snapshot, option), font), font));
+            std::max(header.longest, widthOf(folded(optionName(snapshot, option), font), font));
     }
     header.slanted = header.longest > pitch - 0.5 * look.space.unit;
     header.longest = std::min(header.longest, slantedMost_px * look.scale);
@@ -140,7 +120,7 @@ void addColumn(Making& making, int position, const Header& header) {
     column.slanted = header.slanted;
     const QFont font =
         look.font(TextSize::small, column.inHand ? TextWeight::strong : TextWeight::normal);
-    column.lines = twoLines(name, font);
+    column.lines = folded(name, font);
     if (column.slanted) {
         laySlanted(making, column, font, header.longest);
     } else {
@@ -291,7 +271,7 @@ std::vector<Label> rowName(const Making& making, const QString& name, const QRec
     const QFont font = look.font(TextSize::small, weight);
     const double left = classWidth * gap, wide = std::max(1.0, making.left - left - gap);
     const bool fits = textSize(name, font).width() <= wide;
-    const auto lines = fits ? std::vector<QString>{name} : twoLines(name, font);
+    const auto lines = fits ? std::vector<QString>{name} : folded(name, font);
     const double step = std::min(line, (row.height() - 2) / static_cast<double>(lines.size()));
     double top = row.center().y() - step * static_cast<double>(lines.size()) / 2;
     std::vector<Label> out;
@@ -383,18 +363,18 @@ QString outOfSight(const BoardPicture& picture, int rows, int columns) {
 void layColumns(Making& making) {
     const auto& look = making.input.look;
     const auto& snapshot = making.input.snapshot;
-    double names = 0.0, folded = 0.0; // widest on one line, widest on two
+    double names = 0.0, foldedNames = 0.0; // widest on one line, widest on two
     const QFont font = look.font(TextSize::small, TextWeight::strong);
     for (const auto& name : snapshot.project().studies.names()) {
         names = std::max(names, textSize(text(name), font).width());
-        folded = std::max(folded, widthOf(twoLines(text(name), font), font));
+        foldedNames = std::max(foldedNames, widthOf(folded(text(name), font), font));
     }
     const double width = making.input.size.width(), beside = 7 * look.space.unit;
     const int columns = columnsOf(snapshot);
     const double least = narrowest * look.scale;
     // Names are folded before the columns become narrow, and cut before they become too narrow.
-    const double wanted =
-        std::min(names + beside, std::max(folded + beside, width - easy * look.scale * columns));
+    const double wanted = std::min(
+        names + beside, std::max(foldedNames + beside, width - easy * look.scale * columns));
     making.left = std::min(wanted, std::max(0.25 * width, width - least * columns));
     making.left = std::min(making.left, std::max(0.0, width - least));
     const int fitting = std::max(1, static_cast<int>((width - making.left) / least + 1e-6));

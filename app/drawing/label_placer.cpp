@@ -5,6 +5,7 @@
 #include <QPaintEngine>
 #include <QPainter>
 #include <QPainterPath>
+#include <QStringList>
 
 #include <algorithm>
 #include <cmath>
@@ -70,7 +71,36 @@ void paintFrame(QPainter& painter, const Label& label, const Look& look) {
     painter.drawRoundedRect(frame, look.space.corner, look.space.corner);
 }
 
+/// A number stays with the unit behind it.
+bool belongTogether(const QString& before, const QString& after) {
+    bool number = false;
+    before.toDouble(&number);
+    return number && after.size() <= 4;
+}
+
 } // namespace
+
+std::vector<QString> folded(const QString& name, const QFont& font) {
+    const QStringList words = name.split(QLatin1Char(' '), Qt::SkipEmptyParts);
+    if (words.size() < 2) {
+        return {name};
+    }
+    std::vector<QString> best;
+    double least = 0.0;
+    for (qsizetype cut = 1; cut < words.size(); ++cut) {
+        if (belongTogether(words[cut - 1], words[cut].chopped(words[cut].endsWith(u',') ? 1 : 0))) {
+            continue;
+        }
+        const QString first = words.mid(0, cut).join(QLatin1Char(' '));
+        const QString second = words.mid(cut).join(QLatin1Char(' '));
+        const double wide = std::max(textSize(first, font).width(), textSize(second, font).width());
+        if (best.empty() || wide < least) {
+            best = {first, second};
+            least = wide;
+        }
+    }
+    return best.empty() ? std::vector<QString>{name} : best;
+}
 
 QSizeF textSize(const QString& text, const QFont& font) {
     const QFontMetricsF metrics(font);

@@ -35,6 +35,9 @@ inline Label quietLabel(QString words, QRectF box) {
 /// Width and height a text needs.
 QSizeF textSize(const QString& text, const QFont& font);
 
+/// A name on at most two lines, as even as they get; a number stays with the unit behind it.
+std::vector<QString> folded(const QString& name, const QFont& font);
+
 /// Paints text with a halo of the ground, or framed.
 void paintLabel(QPainter& painter, const Label& label, const Look& look);
 /// The same text without halo, elided to its box.

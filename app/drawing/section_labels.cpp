@@ -32,6 +32,7 @@ struct Wish {
     plant::Path thing;
     QString description;
     int limit = -1;
+    std::optional<QPointF> belongsTo = {}; ///< a leader leads here from a box that stands off
 };
 
 /// Places one line of text; counts it if there is no room.
@@ -41,8 +42,14 @@ bool putAt(Making& making, const Wish& wish, const std::vector<QRectF>& candidat
         ++making.leftOut;
         return false;
     }
-    put(making, {wish.text, *box, TextSize::small, wish.weight, wish.quiet, false, {}}, wish.thing,
-        wish.description, wish.limit);
+    std::optional<QPointF> leader;
+    if (wish.belongsTo) {
+        const double far = 6 * making.scene.look.space.unit;
+        const bool apart = !box->adjusted(-far, -far, far, far).contains(*wish.belongsTo);
+        leader = apart ? wish.belongsTo : std::nullopt;
+    }
+    put(making, {wish.text, *box, TextSize::small, wish.weight, wish.quiet, false, leader},
+        wish.thing, wish.description, wish.limit);
     return true;
 }
 
@@ -202,34 +209,41 @@ void labelUnits(Making& making) {
     }
 }
 
-/// The longest straight stretch of a line in pixels.
-QLineF longestStretch(const QPolygonF& line) {
-    QLineF best;
+/// The longest straight stretches of a line in pixels, longest first.
+std::vector<QLineF> longestStretches(const QPolygonF& line) {
+    constexpr std::size_t most = 3;
+    std::vector<QLineF> out;
     for (qsizetype i = 1; i < line.size(); ++i) {
-        const QLineF stretch(line[i - 1], line[i]);
-        if (best.isNull() || stretch.length() > best.length()) {
-            best = stretch;
-        }
+        out.push_back(QLineF(line[i - 1], line[i]));
     }
-    return best;
+    std::stable_sort(out.begin(), out.end(),
+                     [](const QLineF& a, const QLineF& b) { return a.length() > b.length(); });
+    out.resize(std::min(out.size(), most));
+    return out;
 }
 
-/// Below or right of a stretch first, all along it; then on its other side.
-std::vector<QRectF> besideStretch(const QLineF& stretch, QSizeF size, double off) {
-    std::vector<QRectF> out;
+/// Boxes along a stretch: below or right of it, or (`first` false) on its other side.
+void addBeside(std::vector<QRectF>& out, const QLineF& stretch, QSizeF size, double off,
+               bool first) {
     const double w = size.width(), h = size.height();
     const double slope = std::abs(stretch.dy()) / std::max(1.0, std::abs(stretch.dx()));
     const bool steep = slope >= 0.5;
     // So far that the corner of the box stays clear of a sloping line.
     const double down = off + 0.5 * slope * w;
     const double beside = steep ? (off + 0.5 * h) / slope + off : 0.0;
+    for (const double share : {0.5, 0.38, 0.62, 0.25, 0.75, 0.12, 0.88}) {
+        const QPointF at = stretch.pointAt(share);
+        const double x = steep ? (first ? at.x() + beside : at.x() - beside - w) : at.x() - w / 2;
+        const double y = steep ? at.y() - h / 2 : (first ? at.y() + down : at.y() - down - h);
+        out.push_back(QRectF(x, y, w, h));
+    }
+}
+
+std::vector<QRectF> besideLine(const QPolygonF& line, QSizeF size, double off) {
+    std::vector<QRectF> out;
     for (const bool first : {true, false}) {
-        for (const double share : {0.5, 0.38, 0.62, 0.25, 0.75, 0.12, 0.88}) {
-            const QPointF at = stretch.pointAt(share);
-            const double x =
-                steep ? (first ? at.x() + beside : at.x() - beside - w) : at.x() - w / 2;
-            const double y = steep ? at.y() - h / 2 : (first ? at.y() + down : at.y() - down - h);
-            out.push_back(QRectF(x, y, w, h));
+        for (const auto& stretch : longestStretches(line)) {
+            addBeside(out, stretch, size, off, first);
         }
     }
     return out;
@@ -246,7 +260,7 @@ void labelConduits(Making& making) {
         putAt(
             making,
             {words, {}, false, pathOf("conduits", name), QStringLiteral("%1, conduit").arg(words)},
-            besideStretch(longestStretch(shape.line), sizeOf(making, words), off));
+            besideLine(shape.line, sizeOf(making, words), off));
     }
 }
 
@@ -271,7 +285,8 @@ void labelBounds(Making& making) {
                true,
                {"limits", limits.name(drawing.limit)},
                QStringLiteral("%1: limit %2").arg(text(limits.name(drawing.limit)), words),
-               drawing.limit},
+               drawing.limit,
+               zone.center()},
               candidates);
     }
 }

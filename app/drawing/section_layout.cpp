@@ -119,16 +119,18 @@ void addChambers(Making& making) {
 }
 
 void addUnits(Making& making) {
-    const auto& units = making.scene.shown.variant->plant.units;
+    const auto& plant = making.scene.shown.variant->plant;
+    const auto& units = plant.units;
     for (const auto& drawing : making.scene.layout.units) {
+        const auto& unit = units[drawing.unit];
         const auto& name = units.name(drawing.unit);
+        // As given: on a shelf it is drawn higher or lower.
+        const double centre = unit.centreline_m.value_or(plant.points[unit.from.index].elevation_m);
         QPainterPath shape;
         shape.addEllipse(drawing.centre, drawing.radius_px, drawing.radius_px);
         add(making, ItemKind::unit, pathOf("units", name), shape,
             QStringLiteral("%1, unit, centre line %2")
-                .arg(text(name),
-                     numberText(Quantity::elevation,
-                                making.scene.layout.scale.elevation_m(drawing.centre.y()))));
+                .arg(text(name), numberText(Quantity::elevation, centre)));
         making.placer.avoid(drawing.box());
         making.placer.avoid(wayThrough(drawing), making.scene.look.width.lining / 2);
     }

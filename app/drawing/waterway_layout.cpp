@@ -267,8 +267,12 @@ void layUnits(WaterwayLayout& layout, const LayoutInput& in) {
     }
     // Units at one height stand on shelves, none before another.
     const double count = static_cast<double>(std::max<std::size_t>(1, layout.units.size()));
-    const double radius = std::clamp((layout.plot.height() - 20.0) / (2.6 * count), 3.0,
-                                     rosetteRadius_px * in.look.scale);
+    const double name = in.look.lineHeight(TextSize::small) + in.look.space.unit;
+    const double room = std::max(1.0, layout.plot.height() - 20.0) / count;
+    const bool named = room > name + 16.0; // else the names find room elsewhere, or are counted
+    const double radius =
+        std::clamp((named ? room - name : room / 1.3) / 2.0, 3.0, rosetteRadius_px * in.look.scale);
+    const double apart = named ? 2 * radius + name : 2.5 * radius;
     std::vector<UnitDrawing*> order;
     for (auto& drawing : layout.units) {
         drawing.radius_px = radius;
@@ -280,7 +284,7 @@ void layUnits(WaterwayLayout& layout, const LayoutInput& in) {
     double lowest = layout.plot.bottom() - radius - 2.0;
     for (auto* drawing : order) {
         drawing->centre.setY(std::min(drawing->centre.y(), lowest));
-        lowest = drawing->centre.y() - 2.5 * radius;
+        lowest = drawing->centre.y() - apart;
     }
 }
 

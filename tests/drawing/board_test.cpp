@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "drawing/board_picture.h"
+#include "drawing/label_placer.h"
 #include "support/catch.h"
 
 #include <algorithm>
@@ -115,4 +116,21 @@ TEST_CASE("Board: its height holds all studies", "[drawing][invariant]") {
     const auto shot = sample({336, height});
     CHECK(shot.picture.rowsShown == 8);
     CHECK(height < 420);
+}
+
+TEST_CASE("Board: a folded name keeps its numbers and units together", "[drawing][messages]") {
+    test::startGui();
+    const QFont font = look(Scheme::light).font(TextSize::small);
+    const auto lines = [&](const char* name) {
+        std::string out;
+        for (const auto& line : folded(QString::fromUtf8(name), font)) {
+            out += (out.empty() ? "" : "|") + line.toStdString();
+        }
+        return out;
+    };
+    CHECK(lines("Reload not before 300 s") == "Reload not|before 300 s");
+    CHECK(lines("Loading in 20 s, low reservoir") == "Loading in 20 s,|low reservoir");
+    CHECK(lines("Full rejection") == "Full|rejection");
+    CHECK(lines("300 s") == "300 s");
+    CHECK(lines("Runaway") == "Runaway");
 }

@@ -249,3 +249,14 @@ TEST_CASE("Section: painting is quick", "[drawing][run]") {
     CHECK(still < 36.0);
     CHECK(moving < 6.0);
 }
+
+TEST_CASE("Section: a unit on a shelf keeps its own centre line in words", "[drawing][messages]") {
+    test::startGui();
+    const auto snapshot = test::snapshotOf(test::branchedProject());
+    const auto picture = sectionPicture({*snapshot, nullptr, {}, usual, look(Scheme::light)});
+    for (const char* name : {"U1", "U2", "U3"}) {
+        const Item* unit = find(picture.items, ItemKind::unit, name);
+        REQUIRE(unit != nullptr);
+        CHECK_THAT(unit->description.toStdString(), ContainsSubstring("262.0\u2009m"));
+    }
+}
