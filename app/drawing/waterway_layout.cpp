@@ -31,8 +31,12 @@ const plant::Point* pointOf(const plant::Plant& plant, const plant::Reference& r
 void leaveRoom(ElevationScale& scale, const LayoutInput& in) {
     const double line = in.look.lineHeight(TextSize::small), gap = in.look.space.unit;
     const double height = scale.bottom_px - scale.top_px;
-    const double above = std::min(2 * line, 0.2 * height);
-    const double below = std::min(rosetteRadius_px * in.look.scale + line + gap, 0.2 * height);
+    // What the edges of the plot leave free already counts.
+    const double edgeAbove = scale.top_px - in.plot.top();
+    const double edgeBelow = in.plot.bottom() - scale.bottom_px;
+    const double unitBelow = rosetteRadius_px * in.look.scale + line + 1.5 * gap;
+    const double above = std::clamp(2 * line + 1.5 * gap - edgeAbove, 0.0, 0.2 * height);
+    const double below = std::clamp(unitBelow - edgeBelow, 0.0, 0.2 * height);
     for (const double level : in.level_m) {
         if (std::isfinite(level) && (scale.high_m - level) * scale.pixelsPerMetre() < above) {
             scale.high_m = level + above / (height - above) * std::max(level - scale.low_m, 1.0);
@@ -81,7 +85,7 @@ ElevationScale elevationScale(const LayoutInput& in) {
         high = low + 100.0;
     }
     const double room = in.look.space.unit;
-    ElevationScale scale{low, high, in.plot.bottom() - 3 * room, in.plot.top() + 5 * room};
+    ElevationScale scale{low, high, in.plot.bottom() - 6 * room, in.plot.top() + 5 * room};
     scale.bottom_px = std::max(scale.bottom_px, scale.top_px + 1.0);
     leaveRoom(scale, in);
     return scale;
