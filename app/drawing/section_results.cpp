@@ -107,9 +107,9 @@ void addBound(Making& making, int limit, const QPolygonF& line, bool upper, bool
                                .arg(text(limits.name(limit)), numberText(quantity, value),
                                     upper ? QStringLiteral("above") : QStringLiteral("below"));
         making.placer.avoid(item.box.width() < 4 * placeHalf_px ? item.box : QRectF());
-        making.placer.avoid(line, 1.0);
         making.items.push_back(std::move(item));
     }
+    making.placer.avoid(line, 1.0);
     scene.bounds.push_back(std::move(drawing));
 }
 
