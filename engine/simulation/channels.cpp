@@ -21,11 +21,7 @@ std::vector<int> stationCells(const ConduitRow& conduit) {
     const double length = conduit.geometry.length_m;
     const double time = conduit.geometry.travelTime_s();
     const auto cellAt = [&](double along) {
-        double sum = 0.0;
-        for (const ConduitPiece& piece : conduit.geometry.pieces) {
-            const double part = std::clamp(along - piece.from_m, 0.0, piece.length_m);
-            sum += part / piece.waveSpeed_mps;
-        }
+        const double sum = conduit.geometry.travelTimeTo_s(along);
         return std::clamp(static_cast<int>(std::lround(sum / time * conduit.cells)), 0,
                           conduit.cells);
     };

@@ -27,13 +27,31 @@ private:
     std::vector<int> parent_;
 };
 
+/// A loss at one place, `position` counted in cells, goes to the two cells whose middles lie on
+/// either side, by the rule of the lever: so its place is kept to second order in the cell. Within
+/// half a cell of an end it is all the last cell's.
+void addLoss(std::vector<hydraulics::ElasticCell>& cells, const ConduitLoss& loss,
+             double position) {
+    const double last = static_cast<double>(cells.size()) - 1.0;
+    const double middle = std::clamp(position - 0.5, 0.0, last);
+    const double left = std::min(std::floor(middle), last - 1.0);
+    const double share = middle - left; // of the right one
+    const auto put = [&](double cell, double part) {
+        auto& target = cells[static_cast<std::size_t>(cell)];
+        target.forwardLoss_s2m5 += part * loss.forward_s2m5;
+        target.reverseLoss_s2m5 += part * loss.reverse_s2m5;
+    };
+    put(left, 1.0 - share);
+    put(left + 1.0, share);
+}
+
 /// The cells of a conduit, equal in travel time. A cell carries the inertia it covers, so the
 /// inertia of the whole is exact; friction is that of the pieces it covers.
 std::vector<hydraulics::ElasticCell> cellsOf(const ConduitGeometry& geometry, int count,
                                              double step, double gravity) {
     std::vector<hydraulics::ElasticCell> cells(at(count));
     const double cellTime = geometry.travelTime_s() / count;
-    std::vector<double> inertia(at(count), 0.0), end(at(count), 0.0);
+    std::vector<double> inertia(at(count), 0.0);
     double time = 0.0;
     for (const ConduitPiece& piece : geometry.pieces) {
         const double pieceTime = piece.length_m / piece.waveSpeed_mps;
@@ -49,8 +67,6 @@ std::vector<hydraulics::ElasticCell> cellsOf(const ConduitGeometry& geometry, in
             const double length = share * piece.waveSpeed_mps;
             inertia[at(i)] += length / (gravity * piece.area_m2);
             cells[at(i)].friction.push_back({piece.friction, length});
-            end[at(i)] =
-                piece.from_m + (std::min(until, (i + 1) * cellTime) - time) * piece.waveSpeed_mps;
         }
         time = until;
     }
@@ -58,9 +74,7 @@ std::vector<hydraulics::ElasticCell> cellsOf(const ConduitGeometry& geometry, in
         cells[at(i)].impedance_sm2 = inertia[at(i)] / step;
     }
     for (const ConduitLoss& loss : geometry.losses) {
-        const auto cell = std::lower_bound(end.begin(), end.end() - 1, loss.at_m) - end.begin();
-        cells[at(static_cast<int>(cell))].forwardLoss_s2m5 += loss.forward_s2m5;
-        cells[at(static_cast<int>(cell))].reverseLoss_s2m5 += loss.reverse_s2m5;
+        addLoss(cells, loss, geometry.travelTimeTo_s(loss.at_m) / cellTime);
     }
     return cells;
 }

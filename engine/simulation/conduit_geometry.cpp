@@ -127,6 +127,14 @@ double ConduitGeometry::travelTime_s() const {
     return sum;
 }
 
+double ConduitGeometry::travelTimeTo_s(double along) const {
+    double sum = 0.0;
+    for (const auto& piece : pieces) {
+        sum += std::clamp(along - piece.from_m, 0.0, piece.length_m) / piece.waveSpeed_mps;
+    }
+    return sum;
+}
+
 double ConduitGeometry::inertia_s2m2(double gravity) const {
     double sum = 0.0;
     for (const auto& piece : pieces) {

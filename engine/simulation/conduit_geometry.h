@@ -61,6 +61,7 @@ struct ConduitGeometry {
     std::vector<double> along_m, chainage_m, elevation_m; ///< corners of the axis
 
     double travelTime_s() const;               ///< ΣL/a
+    double travelTimeTo_s(double along) const; ///< from the start to a place along the axis
     double inertia_s2m2(double gravity) const; ///< ΣL/(gA)
     double storage_m2(double gravity) const;   ///< ΣgAL/a²
     double chainageAt(double along) const;
