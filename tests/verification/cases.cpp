@@ -28,7 +28,8 @@ Case barePipe(const Pipe& pipe, plant::ConduitModel model, double step_s) {
 
 Case orificePipe(const Pipe& pipe, double step_s, double opening, plant::ConduitModel model) {
     Case made = barePipe(pipe, model, step_s);
-    made.unit("Unit", made.ref(Collection::points, "Inlet"), made.ref(Collection::reservoirs, "Tail"),
+    made.unit("Unit", made.ref(Collection::points, "Inlet"),
+              made.ref(Collection::reservoirs, "Tail"),
               plant::OrificeUnit{pipe.head_m, pipe.flow_m3s(), 1.0, {}});
     made.study.start.opening = {{made.ref(Collection::units, "Unit"), opening}};
     return made;
@@ -36,8 +37,8 @@ Case orificePipe(const Pipe& pipe, double step_s, double opening, plant::Conduit
 
 Case flowPipe(const Pipe& pipe, double step_s) {
     Case made = barePipe(pipe, plant::ConduitModel::elastic, step_s);
-    made.unit("Unit", made.ref(Collection::points, "Inlet"), made.ref(Collection::reservoirs, "Tail"),
-              plant::FlowUnit{pipe.flow_m3s()});
+    made.unit("Unit", made.ref(Collection::points, "Inlet"),
+              made.ref(Collection::reservoirs, "Tail"), plant::FlowUnit{pipe.flow_m3s()});
     return made;
 }
 
@@ -79,7 +80,8 @@ Crest crest(const results::Run& run, Measure measure, const results::Place& plac
             double to_s, int sign) {
     const auto& trace = tests::channel(run, measure, place).trace;
     const auto& values = sign > 0 ? trace.high : trace.low;
-    const auto first = static_cast<std::size_t>(std::max(0.0, std::ceil(from_s / run.recordInterval_s)));
+    const auto first =
+        static_cast<std::size_t>(std::max(0.0, std::ceil(from_s / run.recordInterval_s)));
     const auto last = static_cast<std::size_t>(to_s / run.recordInterval_s);
     REQUIRE(last < values.size());
     Crest best{static_cast<double>(values[first]), from_s};
@@ -147,8 +149,8 @@ public:
             return;
         }
         for (const auto& [check, entry] : entries_) {
-            std::printf("%-44s %6d values, largest error %.3g of %.3g\n", check.c_str(), entry.count,
-                        entry.error, entry.tolerance);
+            std::printf("%-44s %6d values, largest error %.3g of %.3g\n", check.c_str(),
+                        entry.count, entry.error, entry.tolerance);
         }
     }
     void note(const std::string& check, double error, double tolerance) {

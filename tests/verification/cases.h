@@ -1,10 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "plants.h"
-
 #include <string>
 #include <vector>
+
+#include "plants.h"
 
 /// The plants of the check lists, and ways to read a run in full precision.
 namespace headroom::verification {

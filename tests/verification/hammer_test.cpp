@@ -2,12 +2,12 @@
 // Water hammer against closed forms. g 9.81, velocity heads off, steps that divide the travel time
 // (Courant number 1), so a frictionless pipe carries waves without any error of its own; the traces
 // keep six to seven digits.
-#include "cases.h"
-
 #include "support/catch.h"
 
 #include <algorithm>
 #include <cmath>
+
+#include "cases.h"
 
 using namespace headroom;
 using namespace headroom::verification;
@@ -20,8 +20,8 @@ using tests::valueAt;
 namespace {
 
 const Pipe steep{1200.0, 3.0, 1200.0, 600.0, 1.0};
-const Pipe low{800.0, 10.0, 1200.0, 100.0, 2.0};    // Allievi case A: theta 4/3 s
-const Pipe high{1200.0, 10.0, 1200.0, 600.0, 4.0};  // Allievi case B: theta 2 s
+const Pipe low{800.0, 10.0, 1200.0, 100.0, 2.0};   // Allievi case A: theta 4/3 s
+const Pipe high{1200.0, 10.0, 1200.0, 600.0, 4.0}; // Allievi case B: theta 2 s
 constexpr double lowReflection_s = 4.0 / 3.0;
 constexpr double lowStep_s = lowReflection_s / 200.0;
 constexpr double digits = 3e-7; // relative rounding of a recorded value, and of the printed ones
@@ -41,8 +41,8 @@ TEST_CASE("Hammer: a stop within one reflection gives the head of Joukowsky",
         openings(made, {{0.0, 1.0}, {closing_s, 0.0}});
         made.study.until_s = 2.5;
         const auto run = made.run();
-        hold("H21 Joukowsky rise, m", channel(run, Measure::head, pointPlace(1)).greatest.value - 600.0,
-             122.324159, 1e-6);
+        hold("H21 Joukowsky rise, m",
+             channel(run, Measure::head, pointPlace(1)).greatest.value - 600.0, 122.324159, 1e-6);
     }
 }
 
@@ -125,7 +125,9 @@ void holdReflection(const results::Run& run, double transmitted, double reflecte
     hold("H23 reflected, m", headAt(run, 3.5, 1) - 310.0, 10.0 * reflected, tolerance_m);
 }
 
-double circle(double diameter_m) { return 0.25 * std::acos(-1.0) * diameter_m * diameter_m; }
+double circle(double diameter_m) {
+    return 0.25 * std::acos(-1.0) * diameter_m * diameter_m;
+}
 
 } // namespace
 
@@ -149,7 +151,8 @@ TEST_CASE("Hammer: linear reduction of the discharge makes a triangular wave",
     const auto run = made.run();
     for (int i = 0; i < 6; ++i) {
         const double peak_m = i % 2 == 0 ? 40.774720 : 0.0;
-        hold("H24 triangular wave, m", headAt(run, (i + 1) * lowReflection_s) - 100.0, peak_m, 5e-5);
+        hold("H24 triangular wave, m", headAt(run, (i + 1) * lowReflection_s) - 100.0, peak_m,
+             5e-5);
         hold("H24 triangular wave, m", headAt(run, (i + 0.5) * lowReflection_s) - 100.0,
              0.5 * 40.774720, 5e-5);
     }
@@ -169,8 +172,9 @@ TEST_CASE("Hammer: Allievi's chain, slow closure at low head", "[verification][a
                                  0.18451799, 0.0,        0.0,        0.0,        0.0};
     for (int i = 0; i < 10; ++i) {
         hold("H25 heads, m", headAt(run, i * lowReflection_s), heads_m[i], 2e-5);
-        hold("H25 discharges, share", valueAt(run, Measure::discharge, unitPlace(),
-                                              i * lowReflection_s) / 20.0, flowShares[i], 2e-7);
+        hold("H25 discharges, share",
+             valueAt(run, Measure::discharge, unitPlace(), i * lowReflection_s) / 20.0,
+             flowShares[i], 2e-7);
     }
     // Continuous maximum zeta = 1.226980 at 2.508 s; the step finds the crest to its own length.
     const auto& greatest = channel(run, Measure::head, pointPlace(1)).greatest;
@@ -226,16 +230,17 @@ TEST_CASE("Hammer: opening and its negative surge", "[verification][analytic]") 
     }
 }
 
-TEST_CASE("Hammer: a rigid column under a linear law reaches its limit", "[verification][analytic]") {
+TEST_CASE("Hammer: a rigid column under a linear law reaches its limit",
+          "[verification][analytic]") {
     // K = L V0 / (g H0 T); closing sqrt(zeta) = K/2 + sqrt(1 + K²/4), opening -K/2 + the same root;
     // derived here. At the limit the discharge is linear, which the two-step formula meets exactly.
     struct Row {
         Pipe pipe;
         double time_s, from, limit;
     };
-    for (const Row& row : {Row{low, 8.0, 1.0, 1.225712320}, Row{high, 8.0, 1.0, 1.107264673},
-                           Row{high, 16.0, 1.0, 1.052283836},
-                           Row{low, 4.0 * lowReflection_s, 0.0, 0.737395333}}) {
+    for (const Row& row :
+         {Row{low, 8.0, 1.0, 1.225712320}, Row{high, 8.0, 1.0, 1.107264673},
+          Row{high, 16.0, 1.0, 1.052283836}, Row{low, 4.0 * lowReflection_s, 0.0, 0.737395333}}) {
         CAPTURE(row.time_s, row.from);
         Case made = orificePipe(row.pipe, 0.01, row.from, plant::ConduitModel::rigid);
         openings(made, {{0.0, row.from}, {row.time_s, 1.0 - row.from}});
@@ -279,7 +284,8 @@ TEST_CASE("Hammer: pipe with friction and a curved valve law", "[verification][r
     constexpr double tolerance_m = 0.002 * 150.0;
     hold("H30 steady discharge, m3/s", channel(run, Measure::discharge, unitPlace()).atRest,
          0.4774321635, 1e-9);
-    hold("H30 steady head, m", channel(run, Measure::head, pointPlace(1)).atRest, 143.4882843, 1e-6);
+    hold("H30 steady head, m", channel(run, Measure::head, pointPlace(1)).atRest, 143.4882843,
+         1e-6);
     const double rows[][4] = {
         {0.0, 143.4883, 0.477432, 146.0930}, {0.2, 165.8383, 0.441720, 146.0930},
         {0.4, 191.2259, 0.401441, 168.2559}, {0.6, 219.6509, 0.356597, 193.4489},
@@ -333,10 +339,10 @@ TEST_CASE("Hammer: linear friction follows the telegraph equation", "[verificati
     const auto run = made.run();
     hold("H31 steady head, m", channel(run, Measure::head, pointPlace(1)).atRest, 237.767584, 1e-6);
     hold("H31 head after the stop, m", headAt(run, 0.0), 360.091743, 0.05);
-    const double rows[][2] = {{0.25, 363.13089}, {0.5, 366.13275},  {0.75, 369.09824},
-                              {1.25, 147.77998}, {1.5, 144.93223},  {1.75, 142.11723},
-                              {2.5, 345.05674},  {3.5, 164.00069},  {4.5, 327.80467},
-                              {5.5, 179.60935},  {8.5, 302.12364},  {9.5, 202.84382}};
+    const double rows[][2] = {{0.25, 363.13089}, {0.5, 366.13275}, {0.75, 369.09824},
+                              {1.25, 147.77998}, {1.5, 144.93223}, {1.75, 142.11723},
+                              {2.5, 345.05674},  {3.5, 164.00069}, {4.5, 327.80467},
+                              {5.5, 179.60935},  {8.5, 302.12364}, {9.5, 202.84382}};
     for (const auto& row : rows) {
         CAPTURE(row[0]);
         hold("H31 telegraph equation, m", headAt(run, row[0]), row[1], 0.05);

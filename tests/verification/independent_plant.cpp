@@ -139,16 +139,19 @@ plant::Study productStudy(const Numbers& n, double restLevel_m, double until_s) 
 }
 
 IndependentPlant::IndependentPlant(const Numbers& numbers) : n_(numbers) {
-    chart_ = std::make_shared<machines::FrancisChart>(*machines::FrancisChart::calibrate(rating(n_)));
-    const double penstockArea = 0.25 * 3.14159265358979323846 * n_.penstockDiameter_m * n_.penstockDiameter_m;
+    chart_ =
+        std::make_shared<machines::FrancisChart>(*machines::FrancisChart::calibrate(rating(n_)));
+    const double penstockArea =
+        0.25 * 3.14159265358979323846 * n_.penstockDiameter_m * n_.penstockDiameter_m;
     tunnelInertia_ = n_.tunnelLength_m / (n_.gravity * n_.tunnelArea_m2);
-    tunnelLoss_ = n_.tunnelFactor * n_.tunnelLength_m /
-                  (4.0 * n_.tunnelRadius_m * 2.0 * n_.gravity * n_.tunnelArea_m2 * n_.tunnelArea_m2);
-    penstockInertia_ = n_.penstockLength_m / (n_.gravity * penstockArea) +
-                       n_.spiralLength_m / (n_.gravity * n_.spiralArea_m2) +
-                       n_.draftLength_m / (n_.gravity * n_.draftArea_m2);
-    penstockLoss_ = n_.penstockFactor * n_.penstockLength_m /
-                    (n_.penstockDiameter_m * 2.0 * n_.gravity * penstockArea * penstockArea);
+    tunnelLoss_ =
+        n_.tunnelFactor * n_.tunnelLength_m
+        / (4.0 * n_.tunnelRadius_m * 2.0 * n_.gravity * n_.tunnelArea_m2 * n_.tunnelArea_m2);
+    penstockInertia_ = n_.penstockLength_m / (n_.gravity * penstockArea)
+                       + n_.spiralLength_m / (n_.gravity * n_.spiralArea_m2)
+                       + n_.draftLength_m / (n_.gravity * n_.draftArea_m2);
+    penstockLoss_ = n_.penstockFactor * n_.penstockLength_m
+                    / (n_.penstockDiameter_m * 2.0 * n_.gravity * penstockArea * penstockArea);
     const auto start = rest();
     reference_ = n_.opening;
     restPower_ = turbineTorque(start[2], 1.0, n_.opening) * n_.ratedPower;
@@ -168,21 +171,23 @@ StateVector IndependentPlant::rest() const {
     double low = 0.0, high = 2.0 * n_.ratedFlow;
     for (int i = 0; i < 200; ++i) {
         const double flow = 0.5 * (low + high);
-        const double left = n_.reservoir_m - n_.tail_m - (tunnelLoss_ + penstockLoss_) * flow * flow -
-                            turbineHead_m(flow, 1.0, n_.opening);
+        const double left = n_.reservoir_m - n_.tail_m - (tunnelLoss_ + penstockLoss_) * flow * flow
+                            - turbineHead_m(flow, 1.0, n_.opening);
         (left > 0.0 ? low : high) = flow;
     }
     const double flow = 0.5 * (low + high);
     const double torque = turbineTorque(flow, 1.0, n_.opening);
     const double angle = torque * n_.ratedPower / n_.ratedApparent / n_.synchronising;
-    return {flow, n_.reservoir_m - tunnelLoss_ * flow * flow, flow, angle, 1.0, 0.0, 0.0, 0.0, n_.opening};
+    return {flow,      n_.reservoir_m - tunnelLoss_ * flow * flow, flow, angle, 1.0, 0.0, 0.0, 0.0,
+            n_.opening};
 }
 
 double IndependentPlant::order(const StateVector& s, double* error) const {
     const double deviation = 1.0 - s[4];
     const double derivative = n_.kd * (deviation - s[7]) / n_.filter_s;
-    const double made = (reference_ + n_.kp * (deviation + n_.droop * reference_) + s[6] + derivative) /
-                        (1.0 + n_.kp * n_.droop);
+    const double made =
+        (reference_ + n_.kp * (deviation + n_.droop * reference_) + s[6] + derivative)
+        / (1.0 + n_.kp * n_.droop);
     *error = deviation + n_.droop * (reference_ - made);
     return made;
 }
@@ -192,12 +197,13 @@ void IndependentPlant::derivative(const StateVector& s, StateVector& rate) const
     const double foot_m = s[1] + (into > 0.0 ? n_.lossIn : n_.lossOut) * into * std::abs(into);
     rate[0] = (n_.reservoir_m - foot_m - tunnelLoss_ * s[0] * std::abs(s[0])) / tunnelInertia_;
     rate[1] = into / n_.shaftArea_m2;
-    rate[2] = (foot_m - n_.tail_m - penstockLoss_ * s[2] * std::abs(s[2]) -
-               turbineHead_m(s[2], s[4], s[8])) / penstockInertia_;
+    rate[2] = (foot_m - n_.tail_m - penstockLoss_ * s[2] * std::abs(s[2])
+               - turbineHead_m(s[2], s[4], s[8]))
+              / penstockInertia_;
     const double grid = 1.0 + s[5] / n_.nominal_Hz;
     rate[3] = 2.0 * 3.14159265358979323846 * n_.nominal_Hz * (s[4] - grid);
-    const double electrical = (n_.synchronising * s[3] + n_.damping * (s[4] - grid)) *
-                              n_.ratedApparent / n_.ratedPower; // of rated turbine torque
+    const double electrical = (n_.synchronising * s[3] + n_.damping * (s[4] - grid))
+                              * n_.ratedApparent / n_.ratedPower; // of rated turbine torque
     const double acceleration_s = n_.inertia * n_.ratedSpeed * n_.ratedSpeed / n_.ratedPower;
     rate[4] = (turbineTorque(s[2], s[4], s[8]) - electrical) / acceleration_s;
     const double own_W = electrical * s[4] * n_.ratedPower - restPower_;

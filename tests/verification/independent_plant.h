@@ -17,7 +17,8 @@ namespace headroom::verification {
 struct Numbers {
     double gravity = 9.81, density = 1000.0;
     double reservoir_m = 0.0, tail_m = -230.0;
-    double tunnelLength_m = 3000.0, tunnelArea_m2 = 30.0, tunnelFactor = 0.06, tunnelRadius_m = 1.45;
+    double tunnelLength_m = 3000.0, tunnelArea_m2 = 30.0, tunnelFactor = 0.06,
+           tunnelRadius_m = 1.45;
     double shaftArea_m2 = 60.0, lossIn = 0.004, lossOut = 0.003;
     double penstockLength_m = 500.0, penstockDiameter_m = 4.0, penstockFactor = 0.012;
     double spiralLength_m = 20.0, spiralArea_m2 = 9.0, draftLength_m = 25.0, draftArea_m2 = 12.0;
@@ -26,7 +27,7 @@ struct Numbers {
     double synchronising = 1.5, damping = 40.0, nominal_Hz = 50.0;
     double droop = 0.06, kp = 2.2, ki = 0.33, kd = 0.6, filter_s = 0.1, lag_s = 0.2;
     double storedEnergy = 5e9, load = 2e9, loadDamping = 0.012;
-    double opening = 0.75;     ///< stroke at rest
+    double opening = 0.75;      ///< stroke at rest
     double shaftOffset_m = 1.5; ///< the start: this much above rest
 };
 

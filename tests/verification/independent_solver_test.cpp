@@ -1,7 +1,4 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "cases.h"
-#include "independent_plant.h"
-
 #include "support/catch.h"
 
 #include <cvode/cvode.h>
@@ -15,6 +12,9 @@
 #include <cmath>
 #include <string>
 #include <vector>
+
+#include "cases.h"
+#include "independent_plant.h"
 
 using namespace headroom;
 using namespace headroom::verification;
@@ -128,7 +128,7 @@ TEST_CASE("Whole plant: an independent integrator agrees", "[verification][refer
     for (std::size_t i = 0; i < compared.size(); ++i) {
         CAPTURE(compared[i].name, excursion[i], worst[i]);
         CHECK(excursion[i] > 0.0);
-        hold(std::string("independent integrator, ") + compared[i].name, worst[i] / excursion[i], 0.0,
-             1e-6);
+        hold(std::string("independent integrator, ") + compared[i].name, worst[i] / excursion[i],
+             0.0, 1e-6);
     }
 }

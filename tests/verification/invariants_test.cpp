@@ -1,18 +1,18 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // What must hold without any reference: rest, symmetry, the same plant described otherwise.
-#include "cases.h"
-
 #include "support/catch.h"
 
 #include <algorithm>
 #include <cmath>
 #include <string>
 
+#include "cases.h"
+
 using namespace headroom;
 using namespace headroom::verification;
 using plant::Collection;
-using tests::channel;
 using tests::chamberPlace;
+using tests::channel;
 using tests::pointPlace;
 using tests::unitPlace;
 
@@ -44,8 +44,8 @@ Case gradeLine() {
     tunnel.reaches[0].friction = plant::Strickler{35.0};
     tunnel.enteringLoss = 0.30;
     const double pi = std::acos(-1.0);
-    for (const auto& [name, from, to, bore_m] :
-         {std::tuple{"Penstock 1", tee, change, 4.2}, std::tuple{"Penstock 2", change, inlet, 3.4}}) {
+    for (const auto& [name, from, to, bore_m] : {std::tuple{"Penstock 1", tee, change, 4.2},
+                                                 std::tuple{"Penstock 2", change, inlet, 3.4}}) {
         auto& pipe = made.conduit(name, from, to, 300.0, 0.25 * pi * bore_m * bore_m, 1200.0,
                                   plant::ConduitModel::elastic);
         pipe.reaches[0].hydraulicRadius_m = 0.25 * bore_m;

@@ -1,11 +1,11 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // A head-driven unit of constant efficiency thrown off the grid, gate linear to shut. Penstock L
 // 600 m, A 7 m², frictionless, 250 m, 30 m³/s; 333.333 rpm, T_a 8 s.
-#include "cases.h"
-
 #include "support/catch.h"
 
 #include <cmath>
+
+#include "cases.h"
 
 using namespace headroom;
 using namespace headroom::verification;

@@ -2,14 +2,14 @@
 // The textbook turbine (1 - T_w s)/(1 + ½ T_w s) through the whole product: an ideal orifice below a
 // rigid frictionless column, on a locked grid. The law is that of small moves; the mean of a move
 // up and the same move down leaves an error of the third power of its size.
-#include "cases.h"
-
 #include "support/catch.h"
 
 #include <array>
 #include <cmath>
 #include <complex>
 #include <functional>
+
+#include "cases.h"
 
 using namespace headroom;
 using namespace headroom::verification;
@@ -142,8 +142,8 @@ TEST_CASE("Response: waves of the gate", "[verification][analytic]") {
                                 [&](double t) { return std::sin(2.0 * pi * t / period_s); });
         std::complex<double> sum;
         for (int k = (waves - 1) * stepsAWave; k < waves * stepsAWave; ++k) {
-            sum += response.at(k * step_s) *
-                   std::exp(std::complex<double>(0.0, -2.0 * pi * k / stepsAWave));
+            sum += response.at(k * step_s)
+                   * std::exp(std::complex<double>(0.0, -2.0 * pi * k / stepsAWave));
         }
         const auto ratio = sum * std::complex<double>(0.0, 2.0) / static_cast<double>(stepsAWave);
         hold("C37 amplitude", std::abs(ratio), row[1], 1e-5);

@@ -2,12 +2,12 @@
 // Surge chambers against exact extremes. Base data: L 5000 m, A 25 m², F 100 m², 50 m³/s, g 9.81,
 // reservoir at 0, velocity heads off, tunnel rigid, step 0.05 s. Tolerance of the list where it
 // gives one: 0.05 % of the frictionless amplitude. Times of crests: two steps.
-#include "cases.h"
-
 #include "support/catch.h"
 
 #include <algorithm>
 #include <cmath>
+
+#include "cases.h"
 
 using namespace headroom;
 using namespace headroom::verification;
@@ -83,8 +83,8 @@ TEST_CASE("Surge: numerical damping is the documented one", "[verification][orde
         REQUIRE_THAT(swinging.step_s, WithinAbs(step_s, 1e-12));
         const auto z = swinging.find(Measure::level, chamberPlace());
         const double w = 2.0 * std::acos(-1.0) / swingPeriod_s * step_s;
-        const double lost = -std::log(crestNear(swinging, z, 10.25 * swingPeriod_s) /
-                                      crestNear(swinging, z, 0.25 * swingPeriod_s));
+        const double lost = -std::log(crestNear(swinging, z, 10.25 * swingPeriod_s)
+                                      / crestNear(swinging, z, 0.25 * swingPeriod_s));
         const double documented = 10.0 * 0.25 * std::acos(-1.0) * w * w * w;
         hold("H32 numerical damping, share of the documented", lost / documented, 1.0, 0.05);
     }
@@ -97,7 +97,8 @@ TEST_CASE("Surge: energy stays without friction and falls with it", "[verificati
     const auto q = free.find(Measure::discharge, tunnel);
     const auto z = free.find(Measure::level, chamberPlace());
     for (const auto& row : free.rows) {
-        hold("H104 energy without friction, share", energy(row[q], row[z]) / 25484.199796, 1.0, 2e-6);
+        hold("H104 energy without friction, share", energy(row[q], row[z]) / 25484.199796, 1.0,
+             2e-6);
     }
     const auto damped = course(surge(5.0, 50.0, 0.0), 10);
     double last = 1e9;
@@ -114,15 +115,18 @@ TEST_CASE("Surge: total rejection with quadratic friction", "[verification][anal
     struct Row {
         double loss_m, z[4], t[4];
     };
-    const Row rows[] = {
-        {2.0, {21.263005113, -19.132211915, 17.389901076, -15.938639620},
-         {73.68711, 215.68578, 357.65740, 499.60875}},
-        {5.0, {19.373329386, -15.440548944, 12.838782510, -10.988934720},
-         {78.21141, 220.74752, 363.05116, 505.22365}},
-        {10.0, {16.461977931, -11.461730432, 8.803716986, -7.149934644},
-         {86.89986, 230.50059, 373.27870, 515.70557}},
-        {15.0, {13.886592830, -8.927713430, 6.595922238, -5.234007313},
-         {97.22328, 241.68518, 384.75765, 527.32051}}};
+    const Row rows[] = {{2.0,
+                         {21.263005113, -19.132211915, 17.389901076, -15.938639620},
+                         {73.68711, 215.68578, 357.65740, 499.60875}},
+                        {5.0,
+                         {19.373329386, -15.440548944, 12.838782510, -10.988934720},
+                         {78.21141, 220.74752, 363.05116, 505.22365}},
+                        {10.0,
+                         {16.461977931, -11.461730432, 8.803716986, -7.149934644},
+                         {86.89986, 230.50059, 373.27870, 515.70557}},
+                        {15.0,
+                         {13.886592830, -8.927713430, 6.595922238, -5.234007313},
+                         {97.22328, 241.68518, 384.75765, 527.32051}}};
     for (const Row& row : rows) {
         CAPTURE(row.loss_m);
         Case made = surge(row.loss_m, 50.0, 0.0);
@@ -138,7 +142,8 @@ TEST_CASE("Surge: total rejection with quadratic friction", "[verification][anal
         // Water: what the tunnel brought less what the unit took stands in the chamber.
         const double stored_m3 = 100.0 * (level(run).atEnd - level(run).atRest);
         hold("H103 volume, share of throughput",
-             (run.balance.inflow_m3 - run.balance.outflow_m3 - stored_m3) / run.balance.throughput_m3,
+             (run.balance.inflow_m3 - run.balance.outflow_m3 - stored_m3)
+                 / run.balance.throughput_m3,
              0.0, 1e-6);
         CHECK(run.balance.worstResidual_share < 1e-10);
     }
@@ -212,13 +217,12 @@ TEST_CASE("Surge: finite closing time", "[verification][reference]") {
 TEST_CASE("Surge: throttled chamber, total rejection", "[verification][analytic]") {
     // Derived here, recomputed two ways. R0, first, second and third extreme, times of the first
     // two; the head under the throttle just after the stop is R0 - 5 m.
-    const double rows[][6] = {
-        {0.0, 19.373329386, -15.440548944, 12.838782510, 78.21141, 220.74752},
-        {5.0, 16.764101578, -11.605935581, 8.888225168, 76.50053, 220.15689},
-        {10.0, 14.811730605, -9.293870041, 6.792471174, 75.29564, 220.05483},
-        {15.0, 13.279950065, -7.744601661, 5.492803524, 74.42694, 220.18089},
-        {20.0, 12.037201455, -6.633087019, 4.607825931, 73.79770, 220.42530},
-        {25.0, 11.003415198, -5.796356532, 3.966297062, 73.34786, 220.73511}};
+    const double rows[][6] = {{0.0, 19.373329386, -15.440548944, 12.838782510, 78.21141, 220.74752},
+                              {5.0, 16.764101578, -11.605935581, 8.888225168, 76.50053, 220.15689},
+                              {10.0, 14.811730605, -9.293870041, 6.792471174, 75.29564, 220.05483},
+                              {15.0, 13.279950065, -7.744601661, 5.492803524, 74.42694, 220.18089},
+                              {20.0, 12.037201455, -6.633087019, 4.607825931, 73.79770, 220.42530},
+                              {25.0, 11.003415198, -5.796356532, 3.966297062, 73.34786, 220.73511}};
     for (const auto& row : rows) {
         CAPTURE(row[0]);
         Case made = surge(5.0, 50.0, 0.0, row[0]);
@@ -241,7 +245,8 @@ TEST_CASE("Surge: the best throttle makes both maxima equal", "[verification][an
     const auto run = surge(0.0, 50.0, 0.0, 15.963771420).run();
     hold("H40 level, m", level(run).greatest.value, 15.963771420, tolerance_m);
     for (double t = 0.0; t < 62.0; t += 2.0) {
-        hold("H40 constant head, m", valueAt(run, Measure::head, pointPlace(1), t), 15.963771420, 1e-4);
+        hold("H40 constant head, m", valueAt(run, Measure::head, pointPlace(1), t), 15.963771420,
+             1e-4);
     }
     const double rows[][3] = {{2.0, 16.573270392, 14.573270392},
                               {5.0, 17.602854186, 12.602854186},
@@ -253,7 +258,8 @@ TEST_CASE("Surge: the best throttle makes both maxima equal", "[verification][an
         hold("H40 head under the throttle, m", headUnderThrottle(damped), row[2], 1e-5);
         if (row[0] == 5.0) { // between the two maxima the head sags
             hold("H40 sag, m",
-                 crest(damped, Measure::head, pointPlace(1), 0.0, level(damped).greatest.time_s, -1).value,
+                 crest(damped, Measure::head, pointPlace(1), 0.0, level(damped).greatest.time_s, -1)
+                     .value,
                  11.867332, tolerance_m);
         }
     }
@@ -303,8 +309,8 @@ TEST_CASE("Surge: chamber with upper expansion", "[verification][analytic]") {
     const double steps = (10.0 - before[z]) / (before[z] - earlier[z]);
     hold("H43 passing 10 m, s", (static_cast<double>(i) - 1.0 + steps) * rising.step_s, 10.17117,
          1e-3);
-    hold("H43 velocity there, m/s", (before[q] + steps * (before[q] - earlier[q])) / 25.0, 1.89936832,
-         1e-5);
+    hold("H43 velocity there, m/s", (before[q] + steps * (before[q] - earlier[q])) / 25.0,
+         1.89936832, 1e-5);
 }
 
 TEST_CASE("Surge: the limits of the chamber", "[verification][invariant]") {
@@ -339,7 +345,8 @@ TEST_CASE("Surge: the limits of the chamber", "[verification][invariant]") {
     for (double t = 0.1; t < 10.0; t += 0.31) {
         const double head_m = valueAt(none, Measure::head, pointPlace(1), t);
         hold("H107 no area, m", valueAt(tiny, Measure::head, pointPlace(1), t), head_m, 1e-3);
-        hold("H107 shut throttle, m", valueAt(closed, Measure::head, pointPlace(1), t), head_m, 1e-2);
+        hold("H107 shut throttle, m", valueAt(closed, Measure::head, pointPlace(1), t), head_m,
+             1e-2);
         hold("H107 endless area holds the head, m", valueAt(great, Measure::head, pointPlace(2), t),
              600.0, 2e-4);
     }

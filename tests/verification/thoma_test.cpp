@@ -1,13 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Stability of a chamber below a unit of constant hydraulic power. Base data: L 5000 m, A 25 m²,
 // 50 m³/s, k 1.25 s²/m (5 m), gross head 150 m, penstock loss 1.5 m; the level at rest is 0.
-#include "cases.h"
-
 #include "support/catch.h"
 
 #include <algorithm>
 #include <cmath>
 #include <vector>
+
+#include "cases.h"
 
 using namespace headroom;
 using namespace headroom::verification;
@@ -55,8 +55,8 @@ std::vector<double> swings(const Case& made, double period_s, int cycles) {
     };
     std::vector<double> out;
     for (int k = 1; k <= cycles; ++k) { // the first crest is the start itself
-        out.push_back(extreme((k - 0.25) * period_s, (k + 0.25) * period_s, 1) -
-                      extreme((k + 0.25) * period_s, (k + 0.75) * period_s, -1));
+        out.push_back(extreme((k - 0.25) * period_s, (k + 0.25) * period_s, 1)
+                      - extreme((k + 0.25) * period_s, (k + 0.75) * period_s, -1));
     }
     return out;
 }
@@ -66,11 +66,10 @@ std::vector<double> swings(const Case& made, double period_s, int cycles) {
 TEST_CASE("Thoma: amplitude ratio a cycle around the critical area", "[verification][analytic]") {
     // Thoma 1910, from memory; roots of s² + s[2 k v0 g/L - Q0/(F H1)] + ... recomputed, and the
     // non-linear system gives the same ratios to 1e-4. Tolerance of the list 0.3 %.
-    const double rows[][3] = {{0.8, 158.6568, 1.214768},  {0.9, 168.2182, 1.096013},
-                              {1.0, 177.2987, 1.000000},  {1.1, 185.9687, 0.920420},
-                              {1.2, 194.2831, 0.853144},  {1.5, 217.4932, 0.700752},
-                              {1.65, 228.3050, 0.643298}, {1.8, 238.6855, 0.594322},
-                              {2.0, 251.9478, 0.539074}};
+    const double rows[][3] = {
+        {0.8, 158.6568, 1.214768},  {0.9, 168.2182, 1.096013}, {1.0, 177.2987, 1.000000},
+        {1.1, 185.9687, 0.920420},  {1.2, 194.2831, 0.853144}, {1.5, 217.4932, 0.700752},
+        {1.65, 228.3050, 0.643298}, {1.8, 238.6855, 0.594322}, {2.0, 251.9478, 0.539074}};
     for (const auto& row : rows) {
         CAPTURE(row[0]);
         Case made = constantPower(row[0] * criticalArea_m2, plant::ConduitModel::rigid);

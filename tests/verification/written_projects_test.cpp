@@ -1,9 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "files/project_file.h"
 #include "simulation/run.h"
-#include "units/text.h"
-
 #include "support/catch.h"
+#include "units/text.h"
 
 #include <array>
 #include <cmath>
@@ -15,8 +14,9 @@ namespace {
 
 /// What a user gets who writes this project and runs its only study.
 results::Run runProject(const std::string& name, double longestStep_s) {
-    const auto opened = files::openProject(std::string(HEADROOM_SOURCE_DIR) +
-                                           "/tests/verification/projects/" + name + ".headroom.json");
+    const auto opened =
+        files::openProject(std::string(HEADROOM_SOURCE_DIR) + "/tests/verification/projects/" + name
+                           + ".headroom.json");
     for (const auto& finding : opened.findings()) {
         UNSCOPED_INFO(text(finding));
     }
@@ -35,7 +35,8 @@ results::Run runProject(const std::string& name, double longestStep_s) {
     return run;
 }
 
-double traceAt(const results::Run& run, Measure measure, const results::Place& place, double time_s) {
+double traceAt(const results::Run& run, Measure measure, const results::Place& place,
+               double time_s) {
     const auto* channel = run.find(measure, place);
     REQUIRE(channel != nullptr);
     const double position = time_s / run.recordInterval_s;
@@ -43,7 +44,8 @@ double traceAt(const results::Run& run, Measure measure, const results::Place& p
     const double share = position - std::floor(position);
     const auto& values = channel->trace.last;
     REQUIRE(i + 1 < values.size());
-    return (1.0 - share) * static_cast<double>(values[i]) + share * static_cast<double>(values[i + 1]);
+    return (1.0 - share) * static_cast<double>(values[i])
+           + share * static_cast<double>(values[i + 1]);
 }
 
 const results::Place valve{results::Thing::point, 1, 0.0};
@@ -55,10 +57,18 @@ TEST_CASE("A written project: linear friction after a sudden stop", "[verificati
     // characteristics agree to 1e-6 m in the check list. Tolerance of the list: 0.05 m. The jump
     // itself costs ½ R V0 a dt/g, 0.03 m at this step.
     const auto run = runProject("telegraph", 0.0025);
-    const std::array<std::pair<double, double>, 12> expected{
-        {{0.25, 363.13089}, {0.5, 366.13275}, {0.75, 369.09824}, {1.25, 147.77998},
-         {1.5, 144.93223}, {1.75, 142.11723}, {2.5, 345.05674}, {3.5, 164.00069},
-         {4.5, 327.80467}, {5.5, 179.60935}, {8.5, 302.12364}, {9.5, 202.84382}}};
+    const std::array<std::pair<double, double>, 12> expected{{{0.25, 363.13089},
+                                                              {0.5, 366.13275},
+                                                              {0.75, 369.09824},
+                                                              {1.25, 147.77998},
+                                                              {1.5, 144.93223},
+                                                              {1.75, 142.11723},
+                                                              {2.5, 345.05674},
+                                                              {3.5, 164.00069},
+                                                              {4.5, 327.80467},
+                                                              {5.5, 179.60935},
+                                                              {8.5, 302.12364},
+                                                              {9.5, 202.84382}}};
     for (const auto& [time_s, head_m] : expected) {
         CAPTURE(time_s);
         CHECK_THAT(traceAt(run, Measure::head, valve, time_s), WithinAbs(head_m, 0.05));
