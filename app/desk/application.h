@@ -10,7 +10,7 @@ class MainWindow;
 
 /// The one place of the window where faults of ours are caught: said, not shown in a box, and the
 /// project stays as it is.
-class Application final : public QApplication {
+class Application : public QApplication {
     Q_OBJECT
 public:
     Application(int& count, char** words);

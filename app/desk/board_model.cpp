@@ -45,10 +45,10 @@ void BoardModel::setSnapshot(std::shared_ptr<const studies::Snapshot> snapshot) 
             judge(i);
         }
     }
+    emit replaced();
     if (!wanted_.empty()) {
         want({}); // what waits and no cell wants any more is dropped
     }
-    emit changed();
 }
 
 bool BoardModel::holds(CellId id) const { return cell(id) != nullptr; }
@@ -106,10 +106,15 @@ void BoardModel::want(const std::vector<CellId>& cells) {
         asked.push_back({id.option, id.study});
     }
     runs_.want(snapshot_, asked);
+    std::vector<CellId> touched;
     for (auto& cell : cells_) {
+        const auto before = cell.state;
         overlayQueue(cell);
+        if (cell.state != before) {
+            touched.push_back(idOf(cell));
+        }
     }
-    emit changed();
+    emit judged(touched);
 }
 
 void BoardModel::cancel(CellId id) {
@@ -138,21 +143,32 @@ void BoardModel::overlayQueue(Cell& cell) const {
 }
 
 void BoardModel::refresh(const RunBridge::Fingerprints& fingerprints) {
+    std::vector<CellId> touched;
     for (std::size_t i = 0; i < cells_.size(); ++i) {
-        if (fingerprints.contains(cells_[i].fingerprint)) {
+        const auto before = cells_[i].state;
+        const bool news = fingerprints.contains(cells_[i].fingerprint);
+        const bool goesOn = before == CellState::running &&
+                            runs_.runner().stateOf(cells_[i].fingerprint).has_value();
+        if (news && !goesOn) {
             judge(i);
-            if (ended(cells_[i])) {
-                std::erase(wanted_, idOf(cells_[i]));
-            }
-        } else if (cells_[i].state == CellState::waiting ||
-                   cells_[i].state == CellState::running) {
+        } else if (before == CellState::waiting || before == CellState::running) {
             overlayQueue(cells_[i]);
+        }
+        if (cells_[i].state != before) {
+            touched.push_back(idOf(cells_[i]));
+        }
+        if (ended(cells_[i])) {
+            std::erase(wanted_, idOf(cells_[i]));
         }
     }
     if (!runs_.busy()) {
         wanted_.clear();
     }
-    emit changed();
+    if (touched.empty()) {
+        emit progressed();
+    } else {
+        emit judged(touched);
+    }
 }
 
 int BoardModel::done() const {

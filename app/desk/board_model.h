@@ -41,7 +41,9 @@ public:
     double progressShare() const;
 
 signals:
-    void changed(); ///< cells, or the snapshot behind them
+    void replaced();                                              ///< another snapshot
+    void judged(const std::vector<headroom::drawing::CellId>& cells); ///< these say something else now
+    void progressed();                                            ///< queue and progress only
 
 private:
     void judge(std::size_t index);

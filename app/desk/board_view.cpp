@@ -26,14 +26,20 @@ BoardView::BoardView(Workbench& bench, QWidget* parent) : PictureView(parent), b
     setObjectName(QStringLiteral("board"));
     setAccessibleName(tr("Board: studies down, options across"));
     connect(this, &PictureView::pressed, this, &BoardView::press);
-    connect(&bench_, &Workbench::cellsChanged, this, [this] { remake(); });
-    connect(&bench_, &Workbench::selectionChanged, this, [this] {
-        remake();
-        showCell(bench_.now().inHand());
+    connect(&bench_, &Workbench::boardChanged, this, [this] { outdate(); });
+    connect(&bench_, &Workbench::shownChanged, this, [this] { outdate(); });
+    connect(&bench_, &Workbench::selectionChanged, this, [this](const Selection& before) {
+        if (before.shown != bench_.now().shown) {
+            outdate();
+            showCell(bench_.now().inHand());
+        }
     });
 }
 
-const drawing::Items& BoardView::items() const { return picture_ ? picture_->items : noItems; }
+const drawing::Items& BoardView::items() const {
+    fresh();
+    return picture_ ? picture_->items : noItems;
+}
 
 QSize BoardView::sizeHint() const {
     const double height = drawing::boardHeight(bench_.snapshot(), currentLook(), width());
@@ -41,21 +47,16 @@ QSize BoardView::sizeHint() const {
 }
 
 void BoardView::remake() {
-    if (width() < 2 || height() < 2) {
-        return;
-    }
     const auto& bench = bench_;
     picture_ = drawing::boardPicture({bench.snapshot(), bench_.board().cells(), bench.now(),
                                       QSizeF(size()), currentLook(), firstRow_, firstColumn_,
                                       bench.optionInHand()});
     firstRow_ = picture_->firstRow;
     firstColumn_ = picture_->firstColumn;
-    itemsChanged();
-    updateGeometry();
-    update();
 }
 
 void BoardView::paintEvent(QPaintEvent*) {
+    fresh();
     QPainter painter(this);
     painter.fillRect(rect(), currentLook().titleBlock);
     painter.setRenderHint(QPainter::Antialiasing);
@@ -91,6 +92,7 @@ QRectF BoardView::cellBox(CellId cell) const {
 
 /// Scrolls until the cell is in sight.
 void BoardView::showCell(CellId cell) {
+    fresh();
     if (!picture_) {
         return;
     }
@@ -101,7 +103,7 @@ void BoardView::showCell(CellId cell) {
     if (newRow != firstRow_ || newColumn != firstColumn_) {
         firstRow_ = newRow;
         firstColumn_ = newColumn;
-        remake();
+        outdate();
     }
 }
 
@@ -135,7 +137,7 @@ void BoardView::wheelEvent(QWheelEvent* event) {
     firstColumn_ -= (delta.x() > 0) - (delta.x() < 0);
     firstRow_ = std::max(0, firstRow_);
     firstColumn_ = std::max(0, firstColumn_);
-    remake();
+    outdate();
 }
 
 StripView::StripView(Workbench& bench, QWidget* parent) : PictureView(parent), bench_(bench) {
@@ -146,29 +148,28 @@ StripView::StripView(Workbench& bench, QWidget* parent) : PictureView(parent), b
             bench_.pressLimit(item.limit);
         }
     });
-    connect(&bench_, &Workbench::cellsChanged, this, [this] { remake(); });
+    connect(&bench_, &Workbench::shownChanged, this, [this] { outdate(); });
     connect(&bench_, &Workbench::selectionChanged, this, [this](const Selection& before) {
         if (before.limit != bench_.now().limit || before.shown != bench_.now().shown) {
-            remake();
+            outdate();
             showLimit(bench_.now().limit);
         }
     });
 }
 
-const drawing::Items& StripView::items() const { return picture_ ? picture_->items : noItems; }
+const drawing::Items& StripView::items() const {
+    fresh();
+    return picture_ ? picture_->items : noItems;
+}
 
 void StripView::remake() {
-    if (width() < 2 || height() < 2) {
-        return;
-    }
     picture_ = drawing::stripPicture({bench_.snapshot(), bench_.cellInHand(), bench_.now(),
                                       QSizeF(size()), currentLook(), firstRow_});
     firstRow_ = picture_->firstRow;
-    itemsChanged();
-    update();
 }
 
 void StripView::paintEvent(QPaintEvent*) {
+    fresh();
     QPainter painter(this);
     painter.fillRect(rect(), currentLook().titleBlock);
     painter.setRenderHint(QPainter::Antialiasing);
@@ -188,6 +189,7 @@ QRectF StripView::barBox(int limit) const {
 }
 
 void StripView::showLimit(int limit) {
+    fresh();
     if (!picture_) {
         return;
     }
@@ -199,11 +201,12 @@ void StripView::showLimit(int limit) {
     const int first = std::clamp(firstRow_, row - std::max(1, picture_->rowsShown) + 1, row);
     if (first != firstRow_) {
         firstRow_ = first;
-        remake();
+        outdate();
     }
 }
 
 void StripView::keyPressEvent(QKeyEvent* event) {
+    fresh();
     if (!picture_ || picture_->order.empty()) {
         return PictureView::keyPressEvent(event);
     }
@@ -235,7 +238,7 @@ void StripView::keyPressEvent(QKeyEvent* event) {
 void StripView::wheelEvent(QWheelEvent* event) {
     const auto delta = event->angleDelta().y();
     firstRow_ = std::max(0, firstRow_ - ((delta > 0) - (delta < 0)));
-    remake();
+    outdate();
 }
 
 } // namespace headroom::desk

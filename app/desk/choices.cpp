@@ -69,13 +69,19 @@ Selection withCell(const BoardModel& board, const Selection& now, CellId cell) {
     next.shown = comparedWith(now, cell);
     next.shown.insert(next.shown.begin(), cell);
     const auto* at = board.cell(cell);
-    const auto* worst = at == nullptr ? nullptr : limits::worst(at->verdicts);
-    if (worst != nullptr && judged(*worst)) {
-        follow(next, *worst);
-    } else if (at != nullptr && now.limit >= static_cast<int>(at->verdicts.size())) {
+    if (at != nullptr && now.limit >= static_cast<int>(at->verdicts.size())) {
         next.limit = at->verdicts.empty() ? -1 : 0;
     }
-    return next;
+    return withWorst(board, std::move(next));
+}
+
+Selection withWorst(const BoardModel& board, Selection now) {
+    const auto* at = board.cell(now.inHand());
+    const auto* worst = at == nullptr ? nullptr : limits::worst(at->verdicts);
+    if (worst != nullptr && judged(*worst)) {
+        follow(now, *worst);
+    }
+    return now;
 }
 
 Selection withLimit(const BoardModel& board, const Selection& now, int limit) {

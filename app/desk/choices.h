@@ -12,6 +12,8 @@ using drawing::Selection;
 /// A cell comes into the hand, its worst limit and that limit's time with it. The run that was in
 /// the hand gives way unless it is the base's; options compared on one study follow to another.
 Selection withCell(const BoardModel& board, const Selection& now, CellId cell);
+/// The worst limit of the run in the hand and that limit's time; unchanged while nothing is judged.
+Selection withWorst(const BoardModel& board, Selection now);
 /// A limit is chosen; the cursor goes to its extreme in the run in the hand.
 Selection withLimit(const BoardModel& board, const Selection& now, int limit);
 /// A cell joins the comparison or leaves it; the one in the hand stays first.

@@ -101,7 +101,7 @@ FindingsPanel::FindingsPanel(Workbench& bench, QWidget* parent)
         }
     });
     connect(&bench_.document(), &Document::findingsChanged, this, &FindingsPanel::refresh);
-    connect(&bench_, &Workbench::cellsChanged, this, &FindingsPanel::refresh);
+    connect(&bench_, &Workbench::shownChanged, this, &FindingsPanel::refresh);
     connect(&bench_, &Workbench::selectionChanged, this, [this](const Selection& before) {
         if (before.shown != bench_.now().shown) {
             refresh();
@@ -140,6 +140,9 @@ void FindingsPanel::showLook() {
 }
 
 void FindingsPanel::refresh() {
+    if (!isVisible()) {
+        return; // made when it is opened
+    }
     const auto found = all();
     const int row = list_->currentRow();
     const QSignalBlocker quiet(list_);

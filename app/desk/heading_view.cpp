@@ -22,7 +22,7 @@ constexpr double keyLine_px = 24.0, keyGap_px = 8.0, keyBetween_px = 18.0, edge_
 HeadingView::HeadingView(Workbench& bench, QWidget* parent) : QWidget(parent), bench_(bench) {
     setObjectName(QStringLiteral("heading"));
     setSizePolicy(QSizePolicy::Expanding, QSizePolicy::Fixed);
-    connect(&bench_, &Workbench::cellsChanged, this, &HeadingView::refresh);
+    connect(&bench_, &Workbench::shownChanged, this, &HeadingView::refresh);
     connect(&bench_.document(), &Document::fileChanged, this, &HeadingView::refresh);
     connect(&bench_, &Workbench::lookChanged, this, [this] {
         updateGeometry();

@@ -124,7 +124,8 @@ void TraceLayer::draw(QCPPainter* painter) {
         traceSegments(*traces_, channel_, *mKeyAxis, *mValueAxis, quantity_, 1.0 / ratio);
     painter->setAntialiasing(true);
     QPen pen = mPen;
-    pen.setCapStyle(Qt::RoundCap); // segments meet without notches
+    // Segments meet without notches; round caps would leave the painter's quick way for lines.
+    pen.setCapStyle(Qt::SquareCap);
     painter->setPen(pen);
     painter->drawLines(lines);
 }

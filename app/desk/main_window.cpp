@@ -92,12 +92,12 @@ void MainWindow::assemble() {
 }
 
 void MainWindow::connectParts() {
-    connect(&bench_, &Workbench::cellsChanged, this, &MainWindow::showLanes);
-    connect(&bench_, &Workbench::cellsChanged, this, &MainWindow::refreshFindings);
+    connect(&bench_, &Workbench::shownChanged, this, &MainWindow::showLanesSoon);
+    connect(&bench_, &Workbench::shownChanged, this, &MainWindow::refreshFindings);
     connect(&bench_, &Workbench::selectionChanged, this, [this](const Selection& before) {
         const auto& now = bench_.now();
         if (before.shown != now.shown || before.limit != now.limit) {
-            showLanes();
+            showLanesSoon();
             refreshFindings();
         } else if (before.time_s != now.time_s) {
             lanes_->setCursor(now.time_s);
@@ -111,7 +111,7 @@ void MainWindow::connectParts() {
         setWindowModified(document.changed());
     });
     connect(lanes_, &Lanes::timePressed, &bench_, &Workbench::pressTime);
-    connect(lanes_, &Lanes::resized, this, &MainWindow::showLanes);
+    connect(lanes_, &Lanes::resized, this, &MainWindow::showLanesSoon);
     connect(heading_, &HeadingView::runPressed, &bench_, &Workbench::pressCell);
     connect(titleBlock_, &TitleBlock::commandAsked, this, [this](CommandId id) {
         const bool stop = id == CommandId::runDue && bench_.runs().busy();
@@ -167,6 +167,21 @@ void MainWindow::makeActions() {
     }
 }
 
+/// Once for all changes of this turn of the event loop.
+void MainWindow::showLanesSoon() {
+    if (!lanesTimer_.isActive()) {
+        lanesTimer_.start(0, this);
+    }
+}
+
+void MainWindow::timerEvent(QTimerEvent* event) {
+    if (event->timerId() != lanesTimer_.timerId()) {
+        return QWidget::timerEvent(event);
+    }
+    lanesTimer_.stop();
+    showLanes();
+}
+
 /// The lanes of the run in the hand with every run that is shown in them.
 void MainWindow::showLanes() {
     std::vector<LaneRun> runs;
@@ -211,13 +226,13 @@ QRectF MainWindow::placeFor(const plant::Path& path) const {
 }
 
 void MainWindow::showFindings(bool shown) {
-    findings_->refresh();
     placePanels();
     if (!shown && findings_->isVisible()) { // before hiding, which would hand the focus on by Tab
         section_->setFocus(Qt::OtherFocusReason);
     }
     findings_->setVisible(shown);
     if (shown) {
+        findings_->refresh();
         findings_->raise();
         findings_->choose(0);
     }

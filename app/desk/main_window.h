@@ -5,6 +5,7 @@
 #include "desk/session.h"
 #include "desk/workbench.h"
 
+#include <QBasicTimer>
 #include <QWidget>
 #include <map>
 
@@ -60,12 +61,14 @@ protected:
     void resizeEvent(QResizeEvent* event) override;
     void changeEvent(QEvent* event) override;
     bool eventFilter(QObject* watched, QEvent* event) override;
+    void timerEvent(QTimerEvent* event) override;
 
 private:
     void assemble();
     void connectParts();
     void makeActions();
     void showLanes();
+    void showLanesSoon();
     void refreshFindings();
     void placePanels();
     void showCulprit(const plant::Path& path);
@@ -99,6 +102,7 @@ private:
     QSplitter* splitter_ = nullptr;
     QWidget* place_ = nullptr; // Section and Ribbon
     std::map<CommandId, QAction*> actions_;
+    QBasicTimer lanesTimer_;
     bool styling_ = false;
 };
 

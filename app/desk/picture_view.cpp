@@ -41,14 +41,23 @@ const drawing::Item* PictureView::find(drawing::ItemKind kind, const plant::Path
 
 void PictureView::setLook(const drawing::Look& look) {
     look_ = &look;
-    remake();
-    update();
+    outdate();
 }
 
-void PictureView::itemsChanged() {
+void PictureView::outdate() {
+    stale_ = true;
+    update();
     if (QAccessible::isActive()) {
         QAccessibleEvent event(this, QAccessible::ObjectReorder);
         QAccessible::updateAccessibility(&event);
+    }
+}
+
+void PictureView::fresh() const {
+    if (stale_ && width() > 1 && height() > 1) {
+        auto* self = const_cast<PictureView*>(this); // a cache: the state shown is not this object's
+        self->stale_ = false;
+        self->remake();
     }
 }
 
@@ -89,7 +98,7 @@ void PictureView::leaveEvent(QEvent* event) {
 
 void PictureView::resizeEvent(QResizeEvent* event) {
     QWidget::resizeEvent(event);
-    remake();
+    outdate();
 }
 
 void PictureView::focusInEvent(QFocusEvent* event) {

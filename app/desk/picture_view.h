@@ -29,8 +29,11 @@ signals:
     void described(const QString& words); ///< what is under the pointer, for the status line
 
 protected:
-    virtual void remake() = 0; ///< look or size changed
-    void itemsChanged();       ///< tells the screen reader
+    /// Makes the picture for the present state; called when it is next asked for or painted, so
+    /// that several changes in one turn cost one picture.
+    virtual void remake() = 0;
+    void outdate();      ///< the picture is to be made again
+    void fresh() const;  ///< makes it if it is outdated
     void paintFocus(QPainter& painter) const;
 
     void mousePressEvent(QMouseEvent* event) override;
@@ -43,6 +46,7 @@ protected:
 
 private:
     const drawing::Look* look_;
+    bool stale_ = true;
     bool ring_ = false; ///< the keyboard brought the focus here
 };
 

@@ -46,38 +46,38 @@ bool opensSlip(const QString& typed) {
 SectionView::SectionView(Workbench& bench, QWidget* parent) : PictureView(parent), bench_(bench) {
     setObjectName(QStringLiteral("section"));
     setAccessibleName(tr("Section"));
-    connect(&bench_, &Workbench::cellsChanged, this, [this] { remake(); });
+    connect(&bench_, &Workbench::shownChanged, this, [this] { outdate(); });
     connect(&bench_, &Workbench::selectionChanged, this, [this](const Selection& before) {
         if (onlyTime(before, bench_.now())) {
             update();
         } else {
-            remake();
+            outdate();
         }
     });
 }
 
-const drawing::Items& SectionView::items() const { return picture_ ? picture_->items : noItems; }
+const drawing::Items& SectionView::items() const {
+    fresh();
+    return picture_ ? picture_->items : noItems;
+}
 
 QString SectionView::description() const {
+    fresh();
     return picture_ ? picture_->description(bench_.now().time_s) : QString();
 }
 
 void SectionView::setScales(drawing::Scales scales) {
     scales_ = scales;
-    remake();
+    outdate();
 }
 
 void SectionView::remake() {
-    if (width() < 2 || height() < 2) {
-        return;
-    }
     picture_ = drawing::sectionPicture(inputFor(bench_, QSizeF(size()), currentLook(), scales_));
     still_ = {};
-    itemsChanged();
-    update();
 }
 
 void SectionView::paintEvent(QPaintEvent*) {
+    fresh();
     QPainter painter(this);
     if (!picture_) {
         painter.fillRect(rect(), currentLook().sheet);
@@ -151,31 +151,30 @@ QRectF SectionView::placeOf(const plant::Path& path) const {
 RibbonView::RibbonView(Workbench& bench, QWidget* parent) : PictureView(parent), bench_(bench) {
     setObjectName(QStringLiteral("ribbon"));
     setAccessibleName(tr("Margin ribbon"));
-    connect(&bench_, &Workbench::cellsChanged, this, [this] { remake(); });
+    connect(&bench_, &Workbench::shownChanged, this, [this] { outdate(); });
     connect(&bench_, &Workbench::selectionChanged, this, [this](const Selection& before) {
         if (!onlyTime(before, bench_.now())) {
-            remake();
+            outdate();
         }
     });
 }
 
-const drawing::Items& RibbonView::items() const { return picture_ ? picture_->items : noItems; }
+const drawing::Items& RibbonView::items() const {
+    fresh();
+    return picture_ ? picture_->items : noItems;
+}
 
 void RibbonView::setScales(drawing::Scales scales) {
     scales_ = scales;
-    remake();
+    outdate();
 }
 
 void RibbonView::remake() {
-    if (width() < 2 || height() < 2) {
-        return;
-    }
     picture_ = drawing::ribbonPicture(inputFor(bench_, QSizeF(size()), currentLook(), scales_));
-    itemsChanged();
-    update();
 }
 
 void RibbonView::paintEvent(QPaintEvent*) {
+    fresh();
     QPainter painter(this);
     painter.fillRect(rect(), currentLook().sheet);
     painter.setRenderHint(QPainter::Antialiasing);

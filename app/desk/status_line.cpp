@@ -26,7 +26,7 @@ StatusLine::StatusLine(Workbench& bench, const Lanes& lanes, QWidget* parent)
         setAccessibleName(cursorWords() + QStringLiteral(". ") + caution());
         update();
     };
-    connect(&bench_, &Workbench::cellsChanged, this, refresh);
+    connect(&bench_, &Workbench::shownChanged, this, refresh);
     connect(&bench_, &Workbench::selectionChanged, this, refresh);
     connect(&bench_, &Workbench::lookChanged, this, [this, refresh] {
         updateGeometry();

@@ -36,7 +36,7 @@ TitleBlock::TitleBlock(Workbench& bench, QWidget* parent)
     row->addStretch(1);
     command_->setText(tr("Command…"));
     setFindingsCount(0, 0);
-    connect(&bench_, &Workbench::cellsChanged, this, &TitleBlock::refresh);
+    connect(&bench_, &Workbench::boardChanged, this, &TitleBlock::refresh);
     connect(&bench_, &Workbench::lookChanged, this, &TitleBlock::showLook);
     refresh();
     showLook();

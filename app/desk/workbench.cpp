@@ -13,9 +13,16 @@ Workbench::Workbench(int threads)
     connect(&document_, &Document::snapshotChanged, this, &Workbench::snapshotChanged);
     connect(&document_, &Document::opening, this, [this] {
         chosen_ = false; // nothing is chosen in it yet
+        follows_ = true;
         selection_.set({});
     });
-    connect(&board_, &BoardModel::changed, this, &Workbench::boardChanged);
+    connect(&board_, &BoardModel::replaced, this, [this] {
+        choosePresent();
+        emit shownChanged();
+        emit boardChanged();
+    });
+    connect(&board_, &BoardModel::judged, this, &Workbench::judged);
+    connect(&board_, &BoardModel::progressed, this, &Workbench::boardChanged);
     connect(&selection_, &SelectionModel::changed, this, &Workbench::selectionChanged);
 }
 
@@ -28,9 +35,26 @@ void Workbench::snapshotChanged() {
     board_.setSnapshot(document_.snapshot());
 }
 
-void Workbench::boardChanged() {
-    selection_.set(chosen_ ? fitted(board_, now()) : unasked(board_, now()));
-    emit cellsChanged();
+void Workbench::judged(const std::vector<CellId>& cells) {
+    choosePresent();
+    const auto& shown = now().shown;
+    const bool seen = std::any_of(cells.begin(), cells.end(), [&](CellId cell) {
+        return std::find(shown.begin(), shown.end(), cell) != shown.end();
+    });
+    if (seen) {
+        emit shownChanged();
+    }
+    emit boardChanged();
+}
+
+/// What is chosen goes on being there, and follows the worst verdict where nothing else was asked.
+void Workbench::choosePresent() {
+    if (!chosen_) {
+        selection_.set(unasked(board_, now()));
+    } else {
+        const auto kept = fitted(board_, now());
+        selection_.set(follows_ ? withWorst(board_, kept) : kept);
+    }
 }
 
 QString Workbench::runName(CellId cell) const {
@@ -71,15 +95,18 @@ void Workbench::choose(Selection next) {
 
 void Workbench::pressCell(CellId cell) {
     if (board_.holds(cell)) {
+        follows_ = true;
         choose(withCell(board_, now(), cell));
     }
 }
 
 void Workbench::pressLimit(int limit) {
+    follows_ = false; // what the user chose stays, whatever runs finish
     choose(withLimit(board_, now(), limit));
 }
 
 void Workbench::pressTime(double time_s, int limit) {
+    follows_ = false;
     auto next = now();
     next.time_s = time_s;
     next.limit = limit >= 0 ? limit : next.limit;
@@ -94,6 +121,7 @@ void Workbench::pressThing(const plant::Path& thing) {
 
 void Workbench::takeOption(int option) {
     if (option >= -1 && option < snapshot().options()) {
+        follows_ = true;
         choose(withOption(board_, now(), option));
     }
 }

@@ -51,13 +51,15 @@ public:
     void edit(const QString& label, const plant::Tree& next, int gesture = -1);
 
 signals:
-    void cellsChanged();     ///< cells or snapshot
+    void shownChanged();     ///< snapshot, or what a shown run says
+    void boardChanged();     ///< any cell, or the progress of one
     void selectionChanged(const headroom::drawing::Selection& before);
     void lookChanged();
 
 private:
     void snapshotChanged();
-    void boardChanged();
+    void judged(const std::vector<CellId>& cells);
+    void choosePresent();
     void choose(Selection next);
 
     Document document_;
@@ -65,6 +67,7 @@ private:
     BoardModel board_;
     SelectionModel selection_;
     const drawing::Look* look_;
+    bool follows_ = true; ///< limit and cursor go to the worst verdict of the run in the hand
     bool chosen_ = false; ///< the user has pressed something; until then the worst is shown
 };
 

@@ -103,7 +103,6 @@ TEST_CASE("The main job, driven by mouse and keys", "[desk][driven]") {
     CHECK(window.bench().now().inHand() == id);
     CHECK(cellAt(window, id).state == studies::CellState::notRun);
     runByKey(window, id);
-    drive::pressCell(window, id); // its worst limit speaks
     const auto oldMarks = marksOf(cellAt(window, id));
     const auto oldSentence = window.heading().sentence();
     const auto oldMark = drawing::markOf(cellAt(window, id));
@@ -130,7 +129,7 @@ TEST_CASE("The main job, driven by mouse and keys", "[desk][driven]") {
     runByKey(window, id);
     const auto newMarks = marksOf(cellAt(window, id));
     const auto newSentence = window.heading().sentence();
-    CHECK(newSentence != oldSentence);
+    CHECK(newSentence.toStdString() != oldSentence.toStdString());
     const auto runsNow = window.bench().runs().store().count();
     CHECK(runsNow > runs);
 
@@ -140,7 +139,6 @@ TEST_CASE("The main job, driven by mouse and keys", "[desk][driven]") {
     CHECK(cellAt(window, id).state == studies::CellState::done);
     CHECK(drawing::markOf(cellAt(window, id)) == oldMark);
     CHECK(marksOf(cellAt(window, id)) == oldMarks);
-    drive::pressCell(window, id);
     CHECK(window.heading().sentence().toStdString() == oldSentence.toStdString());
     CHECK(window.bench().runs().store().count() == runsNow);
     CHECK_FALSE(window.bench().document().changed());
